@@ -1,0 +1,421 @@
+package interval
+
+import "slices"
+
+// Substitutions of dimensions.
+//
+// A Subst is a finite parallel substitution, the identity elsewhere. Its
+// entries are sorted by name and none of them is the identity, so equal
+// substitutions have equal entries and the identity is the nil *Subst. What the
+// hot paths ask is kept as words: which names are touched, and which literals
+// become 0 and 1.
+
+// Subst is a finite parallel substitution of Dims for names, the identity
+// elsewhere. It is immutable. The nil *Subst is the identity, for all methods.
+type Subst struct {
+	first entry
+	rest  []entry
+	dom   Support // of the names
+	img   Support // of the images
+	ends  Support // of the names whose image is an end
+	// Of the names below 32: the bits of all of them, and the bits of the
+	// literals i, ~i that become 0 and that become 1.
+	touched, zeros, ones uint64
+	// allEnds says that every image is an end, lowImages that no image
+	// mentions a name from 32 up.
+	allEnds, lowImages bool
+}
+
+// entry is a name with its image and the image's support.
+type entry struct {
+	name Name
+	dim  Dim
+	sup  Support
+}
+
+// endTable holds the substitutions of an end for one name below 63, name k
+// going to 0 at 2k and to 1 at 2k+1. It is never written after initialisation.
+var endTable = func() (table [126]Subst) {
+	for k := range table {
+		table[k] = *substOf([]entry{newEntry(Name(k/2), end(k%2 == 1))})
+	}
+	return table
+}()
+
+func newEntry(n Name, d Dim) entry { return entry{n, d, d.Support()} }
+
+// substOf returns the substitution of sorted entries, dropping identities. It
+// keeps the slice.
+func substOf(entries []entry) *Subst {
+	entries = slices.DeleteFunc(entries, entry.isIdentity)
+	if len(entries) == 0 {
+		return nil
+	}
+	s := &Subst{first: entries[0], rest: entries[1:]}
+	s.summarise()
+	return s
+}
+
+// isIdentity reports whether the image is the name itself.
+func (e entry) isIdentity() bool {
+	n, negated, ok := e.dim.Literal()
+	return ok && !negated && n == e.name
+}
+
+// summarise computes the words of s from its entries.
+func (s *Subst) summarise() {
+	s.allEnds, s.lowImages = true, true
+	for k := range s.Len() {
+		e := s.entry(k)
+		s.dom |= Single(e.name)
+		s.img |= e.sup
+		if _, ok := e.dim.form.words(); !ok {
+			s.lowImages = false
+		}
+		if e.dim.IsEnd() {
+			s.ends |= Single(e.name)
+		} else {
+			s.allEnds = false
+		}
+		if uint32(e.name) >= narrowNames {
+			continue
+		}
+		bit := firstBit(e.name)
+		s.touched |= bit | bit>>1
+		switch {
+		case e.dim.IsZero():
+			s.zeros |= bit
+			s.ones |= bit >> 1
+		case e.dim.IsOne():
+			s.ones |= bit
+			s.zeros |= bit >> 1
+		}
+	}
+}
+
+// entry returns the entry at index k.
+func (s *Subst) entry(k int) *entry {
+	if k == 0 {
+		return &s.first
+	}
+	return &s.rest[k-1]
+}
+
+// entries returns a copy of the entries with room for one more.
+func (s *Subst) entries() []entry {
+	if s == nil {
+		return nil
+	}
+	out := make([]entry, 0, s.Len()+1)
+	out = append(out, s.first)
+	return append(out, s.rest...)
+}
+
+// Assign returns [n:=d], which is nil when d is n itself. For an end d and n
+// below 63 it does not allocate.
+func Assign(n Name, d Dim) *Subst {
+	if d.IsEnd() && uint32(n) < 63 {
+		return &endTable[2*int(n)+d.form.n]
+	}
+	e := newEntry(n, d)
+	if e.isIdentity() {
+		return nil
+	}
+	s := &Subst{first: e}
+	s.summarise()
+	return s
+}
+
+// Rename returns [n:=m], which is nil when the names are the same.
+func Rename(n, m Name) *Subst { return Assign(n, Var(m)) }
+
+// NewSubst returns the substitution which sends names[k] to dims[k], all at
+// once. A name given twice takes its last image; what is left over in the
+// longer slice is ignored. It keeps neither slice.
+func NewSubst(names []Name, dims []Dim) *Subst {
+	count := min(len(names), len(dims))
+	entries := make([]entry, 0, count)
+	for k := count - 1; k >= 0; k-- {
+		entries = append(entries, newEntry(names[k], dims[k]))
+	}
+	sortEntries(entries)
+	entries = slices.CompactFunc(entries, func(a, b entry) bool { return a.name == b.name })
+	return substOf(entries)
+}
+
+// Lookup returns the image of n; ok is false when that is n itself.
+func (s *Subst) Lookup(n Name) (d Dim, ok bool) {
+	if s == nil || s.dom&Single(n) == 0 {
+		return Dim{}, false
+	}
+	if s.first.name == n {
+		return s.first.dim, true
+	}
+	for k := range s.rest {
+		if s.rest[k].name == n {
+			return s.rest[k].dim, true
+		}
+	}
+	return Dim{}, false
+}
+
+// Domain returns the names that s changes; it is exact below 63.
+func (s *Subst) Domain() Support {
+	if s == nil {
+		return 0
+	}
+	return s.dom
+}
+
+// Image returns the union of the supports of the images of the names that s
+// changes.
+func (s *Subst) Image() Support {
+	if s == nil {
+		return 0
+	}
+	return s.img
+}
+
+// Len returns the number of names that s changes.
+func (s *Subst) Len() int {
+	if s == nil {
+		return 0
+	}
+	return 1 + len(s.rest)
+}
+
+// At returns the name at index k, 0 <= k < s.Len(), ascending, and its image.
+func (s *Subst) At(k int) (Name, Dim) {
+	e := s.entry(k)
+	return e.name, e.dim
+}
+
+// IsEnds reports whether every image is 0 or 1.
+func (s *Subst) IsEnds() bool { return s == nil || s.allEnds }
+
+// Extend returns s with the image of n set to d, parallel to the others.
+func (s *Subst) Extend(n Name, d Dim) *Subst {
+	if s == nil {
+		return Assign(n, d)
+	}
+	entries := append(s.entries(), newEntry(n, d))
+	sortEntries(entries)
+	for k := range len(entries) - 1 {
+		if entries[k].name == n && entries[k+1].name == n {
+			// The sort is stable: the new entry is the later one.
+			entries = slices.Delete(entries, k, k+1)
+			break
+		}
+	}
+	return substOf(entries)
+}
+
+// Without returns s with n sent to itself. It is s when s does not change n.
+func (s *Subst) Without(n Name) *Subst {
+	if _, ok := s.Lookup(n); !ok {
+		return s
+	}
+	return substOf(slices.DeleteFunc(s.entries(), func(e entry) bool { return e.name == n }))
+}
+
+// RestrictTo returns s without the names that are not in sup: s itself when it
+// has none of these, nil when nothing is left. Names from 63 up stay or go
+// together.
+func (s *Subst) RestrictTo(sup Support) *Subst {
+	if s == nil || s.dom&^sup == 0 {
+		return s
+	}
+	if s.dom&sup == 0 {
+		return nil
+	}
+	return substOf(slices.DeleteFunc(s.entries(), func(e entry) bool { return !sup.Has(e.name) }))
+}
+
+// Compose returns the substitution that does s first and t on the result.
+func (s *Subst) Compose(t *Subst) *Subst {
+	if s == nil {
+		return t
+	}
+	if t == nil {
+		return s
+	}
+	entries := make([]entry, 0, s.Len()+t.Len())
+	for k := range s.Len() {
+		e := s.entry(k)
+		if e.sup&t.dom == 0 {
+			entries = append(entries, *e)
+		} else {
+			entries = append(entries, newEntry(e.name, e.dim.Subst(t)))
+		}
+	}
+	for k := range t.Len() {
+		e := t.entry(k)
+		if _, ok := s.Lookup(e.name); !ok {
+			entries = append(entries, *e)
+		}
+	}
+	sortEntries(entries)
+	return substOf(entries)
+}
+
+// Skippable reports whether substituting by s may merely relabel a value with
+// the given frontier (dimensions whose going to an end may let it compute),
+// dimensions of faces, and support: no dimension of the frontier goes to an
+// end, and every dimension of the faces goes to a literal whose variable occurs
+// in the image of no other dimension of the support (an untouched dimension is
+// its own image). Frontier and faces count as part of the support. It is exact
+// when only names below 63 are at hand, and otherwise may say false too often.
+// For frontiers see Sterling, Angiuli, "Normalization for Cubical Type Theory",
+// LICS 2021.
+func (s *Subst) Skippable(frontier, faces, sup Support) bool {
+	if s == nil {
+		return true
+	}
+	if s.ends&frontier != 0 {
+		return false
+	}
+	if faces == 0 {
+		return true
+	}
+	sup |= frontier | faces
+	// The untouched names of the support; from 63 up there may always be some.
+	once := sup &^ (s.dom &^ distantBit)
+	twice := Support(0)
+	for k := range s.Len() {
+		if e := s.entry(k); sup.Has(e.name) {
+			twice |= once & e.sup
+			once |= e.sup
+		}
+	}
+	if twice&faces&^(s.dom&^distantBit) != 0 {
+		return false
+	}
+	for k := range s.Len() {
+		e := s.entry(k)
+		if !faces.Has(e.name) {
+			continue
+		}
+		if _, _, ok := e.dim.Literal(); !ok || e.sup&twice != 0 {
+			return false
+		}
+	}
+	return true
+}
+
+// subst puts s into a normal form: into a face when faces is set.
+func (f *form) subst(s *Subst, faces bool) form {
+	ws, low := f.words()
+	if low {
+		touched := uint64(0)
+		for _, w := range ws {
+			touched |= w
+		}
+		if touched&s.touched == 0 {
+			return *f
+		}
+	} else if f.wide.sup&s.dom == 0 {
+		return *f
+	}
+	var k work
+	if low && s.lowImages {
+		var buf [16]uint64
+		return formOfWords(substWords(buf[:0], ws, s, faces, &k))
+	}
+	return formOfConjs(substConjs(f.conjs(), s, faces, &k))
+}
+
+// substWords appends to dst the words of ws with s put in, for an s whose images
+// have no high names.
+func substWords(dst, ws []uint64, s *Subst, faces bool, k *work) []uint64 {
+	// The literal that becomes 0 and 1 in a Dim becomes top and bot in a face.
+	dead, gone := s.zeros, s.ones
+	if faces {
+		dead, gone = gone, dead
+	}
+	for _, w := range ws {
+		if w&dead != 0 {
+			continue
+		}
+		w &^= gone
+		if w&s.touched == 0 {
+			dst = addWord(dst, w, k)
+			continue
+		}
+		dst = substWord(dst, w, s, faces, k)
+	}
+	return dst
+}
+
+// substWord appends the image of one word without dead literals.
+func substWord(dst []uint64, w uint64, s *Subst, faces bool, k *work) []uint64 {
+	var one, two [16]uint64
+	done, next := append(one[:0], w&^s.touched), two[:0]
+	for j := range s.Len() {
+		e := s.entry(j)
+		if uint32(e.name) >= narrowNames {
+			break
+		}
+		bit := firstBit(e.name)
+		for _, second := range [2]bool{false, true} {
+			if second {
+				bit >>= 1
+			}
+			if w&bit == 0 {
+				continue
+			}
+			image := imageOf(&e.dim, second, faces)
+			words, _ := image.words()
+			next = meetWords(next[:0], done, words, faces, k)
+			done, next = next, done
+		}
+	}
+	for _, v := range done {
+		dst = addWord(dst, v, k)
+	}
+	return dst
+}
+
+// substConjs returns the conjunctions of cs with s put in.
+func substConjs(cs []conj, s *Subst, faces bool, k *work) []conj {
+	var out []conj
+	for _, c := range cs {
+		rest := c
+		var images []form
+		for j := range s.Len() {
+			e := s.entry(j)
+			first, second := c.get(e.name)
+			if first {
+				images = append(images, imageOf(&e.dim, false, faces))
+			}
+			if second {
+				images = append(images, imageOf(&e.dim, true, faces))
+			}
+			if first || second {
+				rest = rest.without(e.name)
+			}
+		}
+		done := []conj{rest}
+		for j := range images {
+			done = meetConjs(done, images[j].conjs(), faces, k)
+		}
+		for _, d := range done {
+			out = addConj(out, d, k)
+		}
+	}
+	return out
+}
+
+// imageOf returns what the first or second literal of a name becomes when the
+// name becomes d: d and its reversal, or the faces on which d is 0 and 1.
+func imageOf(d *Dim, second, faces bool) form {
+	switch {
+	case faces && second:
+		return d.Is1().form
+	case faces:
+		return d.Is0().form
+	case second:
+		return d.Rev().form
+	default:
+		return d.form
+	}
+}

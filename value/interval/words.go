@@ -1,0 +1,189 @@
+package interval
+
+import (
+	"fmt"
+	"math/bits"
+	"slices"
+)
+
+// The narrow algebra: antichains of machine words.
+//
+// A conjunction over the names below 32 is one word, two bits a name: name k
+// has bit 63-2k for its first literal (i, or (i=0) in a face) and bit 62-2k for
+// its second one (~i, or (i=1)). One conjunction absorbs another when its bits
+// are a subset of the other's. A disjunction is a slice of words none of which
+// absorbs another (an antichain). The canonical order, outermost name first and
+// first literal before second, compared literal by literal, then is descending
+// numeric order.
+//
+// Slices given to these functions usually start on the caller's stack; append
+// moves them to the heap when they outgrow it. All growth goes through
+// addWord, which bounds what is live and counts the work.
+
+// MaxConjunctions bounds the conjunctions of a Dim or Face. An operation which
+// would keep more of them, also for a moment, or which would compare
+// conjunctions more than about 2^28 times, panics with a *SizeError.
+const MaxConjunctions = 1 << 14
+
+// maxWork bounds the comparisons of conjunctions in one operation.
+const maxWork = 1 << 28
+
+// SizeError is the value with which an operation panics when a normal form
+// would get too large to build. It depends on the operands alone.
+type SizeError struct {
+	// Conjunctions is the number of conjunctions that were alive.
+	Conjunctions int
+	// Comparisons is the number of comparisons that had been made.
+	Comparisons int
+}
+
+// Error says which limit was passed.
+func (e *SizeError) Error() string {
+	if e.Conjunctions > MaxConjunctions {
+		return fmt.Sprintf("interval: a normal form needs more than %d conjunctions", MaxConjunctions)
+	}
+	return fmt.Sprintf("interval: a normal form of %d conjunctions takes more than %d comparisons", e.Conjunctions, maxWork)
+}
+
+// work counts the comparisons of one operation.
+type work int
+
+// add counts n comparisons made while live conjunctions were held.
+func (k *work) add(n, live int) {
+	*k += work(n)
+	if *k > maxWork || live > MaxConjunctions {
+		panic(&SizeError{Conjunctions: live, Comparisons: int(*k)})
+	}
+}
+
+const (
+	firsts  uint64 = 0xAAAAAAAAAAAAAAAA // all first literals
+	seconds uint64 = 0x5555555555555555 // all second literals
+	// narrowNames is the number of names that fit into a word.
+	narrowNames = 32
+)
+
+// firstBit returns the bit of the first literal of n, which must be below 32.
+func firstBit(n Name) uint64 { return 1 << 63 >> (2 * uint32(n)) }
+
+// nameMask returns both bits of n, which must be below 32.
+func nameMask(n Name) uint64 { return 3 << 62 >> (2 * uint32(n)) }
+
+// swapWord exchanges the two literals of every name.
+func swapWord(w uint64) uint64 { return w&firsts>>1 | w&seconds<<1 }
+
+// consistentWord reports whether w has no name with both literals.
+func consistentWord(w uint64) bool { return w&(w>>1)&seconds == 0 }
+
+// wordSupport returns the exact set of the names in w.
+func wordSupport(w uint64) Support {
+	if w&(w-1) == 0 {
+		if w == 0 {
+			return 0
+		}
+		return 1 << (uint(bits.LeadingZeros64(w)) / 2)
+	}
+	w = (w | w>>1) & seconds
+	w = (w | w>>1) & 0x3333333333333333
+	w = (w | w>>2) & 0x0F0F0F0F0F0F0F0F
+	w = (w | w>>4) & 0x00FF00FF00FF00FF
+	w = (w | w>>8) & 0x0000FFFF0000FFFF
+	w = (w | w>>16) & 0x00000000FFFFFFFF
+	return Support(bits.Reverse32(uint32(w)))
+}
+
+// addWord joins w to the antichain ws, which it may overwrite. The result is an
+// antichain, in no particular order.
+func addWord(ws []uint64, w uint64, k *work) []uint64 {
+	for _, v := range ws {
+		if v&^w == 0 {
+			k.add(len(ws), len(ws))
+			return ws
+		}
+	}
+	kept := ws[:0]
+	for _, v := range ws {
+		if w&^v != 0 {
+			kept = append(kept, v)
+		}
+	}
+	kept = append(kept, w)
+	k.add(len(ws), len(kept))
+	return kept
+}
+
+// meetWords appends the meet of the antichains a and b to dst, which must be
+// empty and share no memory with them. With faces set, inconsistent
+// conjunctions are left out.
+func meetWords(dst, a, b []uint64, faces bool, k *work) []uint64 {
+	for _, v := range a {
+		for _, w := range b {
+			if u := v | w; !faces || consistentWord(u) {
+				dst = addWord(dst, u, k)
+			}
+		}
+	}
+	return dst
+}
+
+// meetBits appends to dst the meet of the antichain a with the disjunction of
+// the literals of w.
+func meetBits(dst, a []uint64, w uint64, faces bool, k *work) []uint64 {
+	for ; w != 0; w &= w - 1 {
+		bit := w & -w
+		for _, v := range a {
+			if u := v | bit; !faces || consistentWord(u) {
+				dst = addWord(dst, u, k)
+			}
+		}
+	}
+	return dst
+}
+
+// transversalWords appends to dst the meet, over the words of ws, of the
+// disjunctions of their literals: the dual of ws, without exchanging literals.
+func transversalWords(dst, ws []uint64, faces bool, k *work) []uint64 {
+	var one, two [16]uint64
+	done, next := append(one[:0], 0), two[:0]
+	for _, w := range ws {
+		next = meetBits(next[:0], done, w, faces, k)
+		done, next = next, done
+	}
+	return append(dst, done...)
+}
+
+// sortWords puts an antichain into the canonical order.
+func sortWords(ws []uint64) {
+	if len(ws) > 16 {
+		slices.SortFunc(ws, func(a, b uint64) int {
+			if a > b {
+				return -1
+			}
+			return 1
+		})
+		return
+	}
+	for i := 1; i < len(ws); i++ {
+		w := ws[i]
+		j := i
+		for ; j > 0 && ws[j-1] < w; j-- {
+			ws[j] = ws[j-1]
+		}
+		ws[j] = w
+	}
+}
+
+// entailsWords reports whether every word of a is absorbed by a word of b.
+func entailsWords(a, b []uint64, k *work) bool {
+next:
+	for _, v := range a {
+		k.add(len(b), len(b))
+		for _, w := range b {
+			if w&^v == 0 {
+				continue next
+			}
+		}
+		return false
+	}
+	return true
+}
