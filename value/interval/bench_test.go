@@ -86,30 +86,134 @@ func BenchmarkOps(b *testing.B) {
 		_ = f
 	}
 	_ = run
-	b.Run("Min1", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkDim = d1[k%tableSize].Min(e1[k%tableSize]) } })
-	b.Run("Max1", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkDim = d1[k%tableSize].Max(e1[k%tableSize]) } })
-	b.Run("Rev1", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkDim = d1[k%tableSize].Rev() } })
-	b.Run("And1", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkFace = f1[k%tableSize].And(g1[k%tableSize]) } })
-	b.Run("Or1", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkFace = f1[k%tableSize].Or(g1[k%tableSize]) } })
-	b.Run("Ent1", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkBool = f1[k%tableSize].Entails(g1[k%tableSize]) } })
-	b.Run("Eq1", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkBool = d1[k%tableSize].Equal(e1[k%tableSize]) } })
-	b.Run("Sup1", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkSup = d1[k%tableSize].Support() } })
-	b.Run("Sup2", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkSup = d2[k%tableSize].Support() } })
-	b.Run("SubstEnd1", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkDim = d1[k%tableSize].Subst(s) } })
-	b.Run("SubstMiss1", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkDim = d1[k%tableSize].Subst(miss) } })
-	b.Run("SubstRen1", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkDim = d1[k%tableSize].Subst(r) } })
-	b.Run("FSubstEnd1", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkFace = f1[k%tableSize].Subst(s) } })
-	b.Run("IsEnd", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkBool = d1[k%tableSize].IsEnd() } })
-	b.Run("Is0", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkFace = d1[k%tableSize].Is0() } })
-	b.Run("Copy", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkDim = d1[k%tableSize] } })
-	b.Run("Min2", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkDim = d2[k%tableSize].Min(e2[k%tableSize]) } })
-	b.Run("Max2", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkDim = d2[k%tableSize].Max(e2[k%tableSize]) } })
-	b.Run("Rev2", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkDim = d2[k%tableSize].Rev() } })
-	b.Run("And2", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkFace = f2[k%tableSize].And(g2[k%tableSize]) } })
-	b.Run("Or2", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkFace = f2[k%tableSize].Or(g2[k%tableSize]) } })
-	b.Run("Ent2", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkBool = f2[k%tableSize].Entails(g2[k%tableSize]) } })
-	b.Run("SubstEnd2", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkDim = d2[k%tableSize].Subst(s) } })
-	b.Run("SubstRen2", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkDim = d2[k%tableSize].Subst(r) } })
-	b.Run("FSubstEnd2", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkFace = f2[k%tableSize].Subst(s) } })
-	b.Run("Is0-2", func(b *testing.B) { for k := 0; k < b.N; k++ { sinkFace = d2[k%tableSize].Is0() } })
+	b.Run("Min1", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkDim = d1[k%tableSize].Min(e1[k%tableSize])
+		}
+	})
+	b.Run("Max1", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkDim = d1[k%tableSize].Max(e1[k%tableSize])
+		}
+	})
+	b.Run("Rev1", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkDim = d1[k%tableSize].Rev()
+		}
+	})
+	b.Run("And1", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkFace = f1[k%tableSize].And(g1[k%tableSize])
+		}
+	})
+	b.Run("Or1", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkFace = f1[k%tableSize].Or(g1[k%tableSize])
+		}
+	})
+	b.Run("Ent1", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkBool = f1[k%tableSize].Entails(g1[k%tableSize])
+		}
+	})
+	b.Run("Eq1", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkBool = d1[k%tableSize].Equal(e1[k%tableSize])
+		}
+	})
+	b.Run("Sup1", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkSup = d1[k%tableSize].Support()
+		}
+	})
+	b.Run("Sup2", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkSup = d2[k%tableSize].Support()
+		}
+	})
+	b.Run("SubstEnd1", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkDim = d1[k%tableSize].Subst(s)
+		}
+	})
+	b.Run("SubstMiss1", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkDim = d1[k%tableSize].Subst(miss)
+		}
+	})
+	b.Run("SubstRen1", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkDim = d1[k%tableSize].Subst(r)
+		}
+	})
+	b.Run("FSubstEnd1", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkFace = f1[k%tableSize].Subst(s)
+		}
+	})
+	b.Run("IsEnd", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkBool = d1[k%tableSize].IsEnd()
+		}
+	})
+	b.Run("Is0", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkFace = d1[k%tableSize].Is0()
+		}
+	})
+	b.Run("Copy", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkDim = d1[k%tableSize]
+		}
+	})
+	b.Run("Min2", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkDim = d2[k%tableSize].Min(e2[k%tableSize])
+		}
+	})
+	b.Run("Max2", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkDim = d2[k%tableSize].Max(e2[k%tableSize])
+		}
+	})
+	b.Run("Rev2", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkDim = d2[k%tableSize].Rev()
+		}
+	})
+	b.Run("And2", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkFace = f2[k%tableSize].And(g2[k%tableSize])
+		}
+	})
+	b.Run("Or2", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkFace = f2[k%tableSize].Or(g2[k%tableSize])
+		}
+	})
+	b.Run("Ent2", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkBool = f2[k%tableSize].Entails(g2[k%tableSize])
+		}
+	})
+	b.Run("SubstEnd2", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkDim = d2[k%tableSize].Subst(s)
+		}
+	})
+	b.Run("SubstRen2", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkDim = d2[k%tableSize].Subst(r)
+		}
+	})
+	b.Run("FSubstEnd2", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkFace = f2[k%tableSize].Subst(s)
+		}
+	})
+	b.Run("Is0-2", func(b *testing.B) {
+		for k := 0; k < b.N; k++ {
+			sinkFace = d2[k%tableSize].Is0()
+		}
+	})
 }

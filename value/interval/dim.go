@@ -30,39 +30,52 @@ func Zero() Dim { return Dim{} }
 func One() Dim { return Dim{form{n: 1}} }
 
 // Var returns the dimension n.
-func Var(n Name) Dim {
-	if uint32(n) < narrowNames {
-		return Dim{form{n: 1, w: [4]uint64{firstBit(n)}}}
-	}
-	return Dim{formOfConj(literal(n, false))}
-}
+func Var(n Name) Dim { return Dim{literalForm(n, false)} }
 
 // Lit returns the dimension n, or its reversal when negated.
-func Lit(n Name, negated bool) Dim { return Dim{formOfConj(literal(n, negated))} }
+func Lit(n Name, negated bool) Dim { return Dim{literalForm(n, negated)} }
 
 // Min returns the meet of d and e. Panics with a *SizeError when the result is
 // too large.
-func (d Dim) Min(e Dim) Dim {
+func (d Dim) Min(e Dim) (r Dim) {
 	if d.form.n == 1 && e.form.n == 1 {
-		return Dim{form{n: 1, w: [4]uint64{d.form.w[0] | e.form.w[0]}}}
+		r.form.n, r.form.w[0] = 1, d.form.w[0]|e.form.w[0]
+		return r
 	}
-	return Dim{d.form.meet(&e.form, false)}
+	r.form = d.form.meet(&e.form, false)
+	return r
 }
 
 // Max returns the join of d and e. Panics with a *SizeError when the result is
 // too large.
-func (d Dim) Max(e Dim) Dim { return Dim{d.form.join(&e.form)} }
+func (d Dim) Max(e Dim) (r Dim) {
+	if d.form.n == 1 && e.form.n == 1 {
+		v, w := d.form.w[0], e.form.w[0]
+		switch v & w {
+		case v:
+			return d
+		case w:
+			return e
+		}
+		r.form.n, r.form.w[0], r.form.w[1] = 2, max(v, w), min(v, w)
+		return r
+	}
+	r.form = d.form.join(&e.form)
+	return r
+}
 
 // Rev returns the reversal of d: 1-d in the geometric reading. Panics with a
 // *SizeError when the result is too large.
-func (d Dim) Rev() Dim {
+func (d Dim) Rev() (r Dim) {
 	if d.form.n == 1 {
-		if w := d.form.w[0]; w != 0 && w&(w-1) == 0 {
-			return Dim{form{n: 1, w: [4]uint64{swapWord(w)}}}
+		if w := d.form.w[0]; isLiteral(w) {
+			r.form.n, r.form.w[0] = 1, swapWord(w)
+			return r
 		}
 	}
-	dual := d.form.transversal(false)
-	return Dim{dual.swap(false)}
+	var k work
+	r.form = d.form.reverse(&k)
+	return r
 }
 
 // IsZero reports whether d is the end 0.
@@ -78,7 +91,7 @@ func (d Dim) IsEnd() bool { return d.form.w[0] == 0 && d.form.wide == nil }
 func (d Dim) Literal() (n Name, negated, ok bool) {
 	if d.form.n == 1 {
 		w := d.form.w[0]
-		if w == 0 || w&(w-1) != 0 {
+		if !isLiteral(w) {
 			return 0, false, false
 		}
 		k := leadingZeros(w)
@@ -124,35 +137,56 @@ func (d Dim) Conjunction(k int) []Literal {
 }
 
 // Is1 returns the face on which d is 1 (CCHM 4.1).
-func (d Dim) Is1() Face {
+func (d Dim) Is1() (f Face) {
 	if d.form.n == 1 {
-		w := d.form.w[0]
-		if !consistentWord(w) {
-			return Face{}
+		if w := d.form.w[0]; consistentWord(w) {
+			f.form.n, f.form.w[0] = 1, swapWord(w)
 		}
-		return Face{form{n: 1, w: [4]uint64{swapWord(w)}}}
+		return f
 	}
-	return Face{d.form.swap(true)}
+	f.form = d.form.swap(true)
+	return f
 }
 
 // Is0 returns the face on which d is 0 (CCHM 4.1). Panics with a *SizeError
 // when the result is too large.
-func (d Dim) Is0() Face {
+func (d Dim) Is0() (f Face) {
 	if d.form.n == 1 {
-		if w := d.form.w[0]; w != 0 && w&(w-1) == 0 {
-			return Face{form{n: 1, w: [4]uint64{w}}}
+		if w := d.form.w[0]; isLiteral(w) {
+			f.form.n, f.form.w[0] = 1, w
+			return f
 		}
 	}
-	return Face{d.form.transversal(true)}
+	var k work
+	f.form = d.form.transversal(true, &k)
+	return f
 }
 
 // Subst returns d with the substitution put in: the algebra map that s
 // determines. Panics with a *SizeError when the result is too large.
-func (d Dim) Subst(s *Subst) Dim {
-	if s == nil {
+func (d Dim) Subst(s *Subst) (r Dim) {
+	if s == nil || d.form.untouched(s) {
 		return d
 	}
-	return Dim{d.form.subst(s, false)}
+	if d.form.n == 1 {
+		w := d.form.w[0]
+		if w&s.zeros != 0 {
+			return r
+		}
+		w &^= s.ones
+		if w&s.touched == 0 {
+			r.form.n, r.form.w[0] = 1, w
+			return r
+		}
+		if isLiteral(w) && s.rest == nil {
+			if w&firsts != 0 {
+				return s.first.dim
+			}
+			return s.first.dim.Rev()
+		}
+	}
+	r.form = d.form.subst(s, false)
+	return r
 }
 
 // String returns d for debugging, its names written i0, i1 and so on.

@@ -20,27 +20,41 @@ func Top() Face { return Face{form{n: 1}} }
 func Bot() Face { return Face{} }
 
 // Eq0 returns the face (n=0).
-func Eq0(n Name) Face { return Face{formOfConj(literal(n, false))} }
+func Eq0(n Name) Face { return Face{literalForm(n, false)} }
 
 // Eq1 returns the face (n=1).
-func Eq1(n Name) Face { return Face{formOfConj(literal(n, true))} }
+func Eq1(n Name) Face { return Face{literalForm(n, true)} }
 
 // And returns the meet of f and g. Panics with a *SizeError when the result is
 // too large.
-func (f Face) And(g Face) Face {
+func (f Face) And(g Face) (r Face) {
 	if f.form.n == 1 && g.form.n == 1 {
-		w := f.form.w[0] | g.form.w[0]
-		if !consistentWord(w) {
-			return Face{}
+		if w := f.form.w[0] | g.form.w[0]; consistentWord(w) {
+			r.form.n, r.form.w[0] = 1, w
 		}
-		return Face{form{n: 1, w: [4]uint64{w}}}
+		return r
 	}
-	return Face{f.form.meet(&g.form, true)}
+	r.form = f.form.meet(&g.form, true)
+	return r
 }
 
 // Or returns the join of f and g. Panics with a *SizeError when the result is
 // too large.
-func (f Face) Or(g Face) Face { return Face{f.form.join(&g.form)} }
+func (f Face) Or(g Face) (r Face) {
+	if f.form.n == 1 && g.form.n == 1 {
+		v, w := f.form.w[0], g.form.w[0]
+		switch v & w {
+		case v:
+			return f
+		case w:
+			return g
+		}
+		r.form.n, r.form.w[0], r.form.w[1] = 2, max(v, w), min(v, w)
+		return r
+	}
+	r.form = f.form.join(&g.form)
+	return r
+}
 
 // IsTop reports whether f always holds.
 func (f Face) IsTop() bool { return f.form.n == 1 && f.form.w[0] == 0 }
@@ -85,11 +99,29 @@ func (f Face) Forall(n Name) Face {
 
 // Subst returns f with the substitution put in. Panics with a *SizeError when
 // the result is too large.
-func (f Face) Subst(s *Subst) Face {
-	if s == nil {
+func (f Face) Subst(s *Subst) (r Face) {
+	if s == nil || f.form.untouched(s) {
 		return f
 	}
-	return Face{f.form.subst(s, true)}
+	if f.form.n == 1 {
+		w := f.form.w[0]
+		if w&s.ones != 0 {
+			return r
+		}
+		w &^= s.zeros
+		if w&s.touched == 0 {
+			r.form.n, r.form.w[0] = 1, w
+			return r
+		}
+		if isLiteral(w) && s.rest == nil {
+			if w&firsts != 0 {
+				return s.first.dim.Is0()
+			}
+			return s.first.dim.Is1()
+		}
+	}
+	r.form = f.form.subst(s, true)
+	return r
 }
 
 // Support returns the names in f; it is exact below 63.

@@ -302,22 +302,19 @@ func (s *Subst) Skippable(frontier, faces, sup Support) bool {
 	return true
 }
 
+// untouched reports whether no name that s changes occurs in f. A true is always
+// right, a false may be wrong for names from 32 up.
+func (f *form) untouched(s *Subst) bool {
+	if f.wide == nil {
+		return (f.w[0]|f.w[1]|f.w[2]|f.w[3])&s.touched == 0
+	}
+	return f.wide.sup&s.dom == 0
+}
+
 // subst puts s into a normal form: into a face when faces is set.
 func (f *form) subst(s *Subst, faces bool) form {
-	ws, low := f.words()
-	if low {
-		touched := uint64(0)
-		for _, w := range ws {
-			touched |= w
-		}
-		if touched&s.touched == 0 {
-			return *f
-		}
-	} else if f.wide.sup&s.dom == 0 {
-		return *f
-	}
 	var k work
-	if low && s.lowImages {
+	if ws, low := f.words(); low && s.lowImages {
 		var buf [16]uint64
 		return formOfWords(substWords(buf[:0], ws, s, faces, &k))
 	}
@@ -348,29 +345,38 @@ func substWords(dst, ws []uint64, s *Subst, faces bool, k *work) []uint64 {
 
 // substWord appends the image of one word without dead literals.
 func substWord(dst []uint64, w uint64, s *Subst, faces bool, k *work) []uint64 {
+	rest := w &^ s.touched
+	left := w & s.touched
 	var one, two [16]uint64
-	done, next := append(one[:0], w&^s.touched), two[:0]
-	for j := range s.Len() {
+	done, next := append(one[:0], 0), two[:0]
+	for j := 0; left != 0; j++ {
 		e := s.entry(j)
-		if uint32(e.name) >= narrowNames {
-			break
+		if left&nameMask(e.name) == 0 {
+			continue
 		}
 		bit := firstBit(e.name)
 		for _, second := range [2]bool{false, true} {
 			if second {
 				bit >>= 1
 			}
-			if w&bit == 0 {
+			if left&bit == 0 {
 				continue
 			}
-			image := imageOf(&e.dim, second, faces)
+			left &^= bit
+			image := imageOf(&e.dim, second, faces, k)
+			if image.n == 1 {
+				rest |= image.w[0]
+				continue
+			}
 			words, _ := image.words()
 			next = meetWords(next[:0], done, words, faces, k)
 			done, next = next, done
 		}
 	}
 	for _, v := range done {
-		dst = addWord(dst, v, k)
+		if v |= rest; !faces || consistentWord(v) {
+			dst = addWord(dst, v, k)
+		}
 	}
 	return dst
 }
@@ -379,42 +385,47 @@ func substWord(dst []uint64, w uint64, s *Subst, faces bool, k *work) []uint64 {
 func substConjs(cs []conj, s *Subst, faces bool, k *work) []conj {
 	var out []conj
 	for _, c := range cs {
-		rest := c
-		var images []form
-		for j := range s.Len() {
-			e := s.entry(j)
-			first, second := c.get(e.name)
-			if first {
-				images = append(images, imageOf(&e.dim, false, faces))
-			}
-			if second {
-				images = append(images, imageOf(&e.dim, true, faces))
-			}
-			if first || second {
-				rest = rest.without(e.name)
-			}
-		}
-		done := []conj{rest}
-		for j := range images {
-			done = meetConjs(done, images[j].conjs(), faces, k)
-		}
-		for _, d := range done {
+		for _, d := range substConj(c, s, faces, k) {
 			out = addConj(out, d, k)
 		}
 	}
 	return out
 }
 
+// substConj returns the image of one conjunction.
+func substConj(c conj, s *Subst, faces bool, k *work) []conj {
+	k.add(s.Len()*(1+len(c.codes())), 0)
+	rest := c
+	done := []conj{{}}
+	for j := range s.Len() {
+		e := s.entry(j)
+		first, second := c.get(e.name)
+		if !first && !second {
+			continue
+		}
+		rest = rest.without(e.name)
+		if first {
+			image := imageOf(&e.dim, false, faces, k)
+			done = meetConjs(done, image.conjs(), faces, k)
+		}
+		if second {
+			image := imageOf(&e.dim, true, faces, k)
+			done = meetConjs(done, image.conjs(), faces, k)
+		}
+	}
+	return meetConjs(done, []conj{rest}, faces, k)
+}
+
 // imageOf returns what the first or second literal of a name becomes when the
 // name becomes d: d and its reversal, or the faces on which d is 0 and 1.
-func imageOf(d *Dim, second, faces bool) form {
+func imageOf(d *Dim, second, faces bool, k *work) form {
 	switch {
 	case faces && second:
-		return d.Is1().form
+		return d.form.swap(true)
 	case faces:
-		return d.Is0().form
+		return d.form.transversal(true, k)
 	case second:
-		return d.Rev().form
+		return d.form.reverse(k)
 	default:
 		return d.form
 	}

@@ -22,11 +22,11 @@ import (
 
 // MaxConjunctions bounds the conjunctions of a Dim or Face. An operation which
 // would keep more of them, also for a moment, or which would compare
-// conjunctions more than about 2^28 times, panics with a *SizeError.
+// conjunctions more than about 2^26 times, panics with a *SizeError.
 const MaxConjunctions = 1 << 14
 
 // maxWork bounds the comparisons of conjunctions in one operation.
-const maxWork = 1 << 28
+const maxWork = 1 << 26
 
 // SizeError is the value with which an operation panics when a normal form
 // would get too large to build. It depends on the operands alone.
@@ -72,6 +72,9 @@ func nameMask(n Name) uint64 { return 3 << 62 >> (2 * uint32(n)) }
 // swapWord exchanges the two literals of every name.
 func swapWord(w uint64) uint64 { return w&firsts>>1 | w&seconds<<1 }
 
+// isLiteral reports whether w has exactly one literal.
+func isLiteral(w uint64) bool { return w != 0 && w&(w-1) == 0 }
+
 // consistentWord reports whether w has no name with both literals.
 func consistentWord(w uint64) bool { return w&(w>>1)&seconds == 0 }
 
@@ -92,23 +95,36 @@ func wordSupport(w uint64) Support {
 	return Support(bits.Reverse32(uint32(w)))
 }
 
+// smallChain is the length up to which addWord does not count its comparisons;
+// its callers count the calls.
+const smallChain = 16
+
 // addWord joins w to the antichain ws, which it may overwrite. The result is an
 // antichain, in no particular order.
 func addWord(ws []uint64, w uint64, k *work) []uint64 {
-	for _, v := range ws {
-		if v&^w == 0 {
-			k.add(len(ws), len(ws))
+	if len(ws) >= smallChain {
+		k.add(len(ws), len(ws))
+	}
+	for i, v := range ws {
+		if both := v & w; both == v {
 			return ws
+		} else if both == w {
+			// Once w absorbs a word, no word can absorb w.
+			return replaceFrom(ws, i, w)
 		}
 	}
-	kept := ws[:0]
-	for _, v := range ws {
+	return append(ws, w)
+}
+
+// replaceFrom puts w for the word at i and drops the later words it absorbs.
+func replaceFrom(ws []uint64, i int, w uint64) []uint64 {
+	ws[i] = w
+	kept := ws[:i+1]
+	for _, v := range ws[i+1:] {
 		if w&^v != 0 {
 			kept = append(kept, v)
 		}
 	}
-	kept = append(kept, w)
-	k.add(len(ws), len(kept))
 	return kept
 }
 
@@ -117,6 +133,7 @@ func addWord(ws []uint64, w uint64, k *work) []uint64 {
 // conjunctions are left out.
 func meetWords(dst, a, b []uint64, faces bool, k *work) []uint64 {
 	for _, v := range a {
+		k.add(len(b), len(dst))
 		for _, w := range b {
 			if u := v | w; !faces || consistentWord(u) {
 				dst = addWord(dst, u, k)
@@ -131,6 +148,7 @@ func meetWords(dst, a, b []uint64, faces bool, k *work) []uint64 {
 func meetBits(dst, a []uint64, w uint64, faces bool, k *work) []uint64 {
 	for ; w != 0; w &= w - 1 {
 		bit := w & -w
+		k.add(len(a), len(dst))
 		for _, v := range a {
 			if u := v | bit; !faces || consistentWord(u) {
 				dst = addWord(dst, u, k)
@@ -143,18 +161,24 @@ func meetBits(dst, a []uint64, w uint64, faces bool, k *work) []uint64 {
 // transversalWords appends to dst the meet, over the words of ws, of the
 // disjunctions of their literals: the dual of ws, without exchanging literals.
 func transversalWords(dst, ws []uint64, faces bool, k *work) []uint64 {
-	var one, two [16]uint64
-	done, next := append(one[:0], 0), two[:0]
-	for _, w := range ws {
+	if len(ws) == 0 {
+		return append(dst, 0)
+	}
+	var buf [16]uint64
+	done, next := dst, buf[:0]
+	for w := ws[0]; w != 0; w &= w - 1 {
+		done = append(done, w&-w)
+	}
+	for _, w := range ws[1:] {
 		next = meetBits(next[:0], done, w, faces, k)
 		done, next = next, done
 	}
-	return append(dst, done...)
+	return append(dst[:0], done...)
 }
 
 // sortWords puts an antichain into the canonical order.
 func sortWords(ws []uint64) {
-	if len(ws) > 16 {
+	if len(ws) > smallChain {
 		slices.SortFunc(ws, func(a, b uint64) int {
 			if a > b {
 				return -1
@@ -174,10 +198,9 @@ func sortWords(ws []uint64) {
 }
 
 // entailsWords reports whether every word of a is absorbed by a word of b.
-func entailsWords(a, b []uint64, k *work) bool {
+func entailsWords(a, b []uint64) bool {
 next:
 	for _, v := range a {
-		k.add(len(b), len(b))
 		for _, w := range b {
 			if w&^v == 0 {
 				continue next
