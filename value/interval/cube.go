@@ -1,16 +1,12 @@
-package interval
-
-import (
-	"math/bits"
-	"slices"
-	"strconv"
-)
-
 // Cubes: consistent conjunctions of faces.
 //
 // A Cube is a partial assignment of ends to dimensions, one conjunction of a
 // face formula (CCHM 4.1). No name has both ends. To work under a face is to
 // work, for each of its cubes, under the cube's Restriction.
+
+package interval
+
+import "strings"
 
 // Cube is a consistent partial assignment of ends to dimensions. The zero
 // value assigns nothing. 16 bytes.
@@ -99,7 +95,7 @@ func (c Cube) Restriction() *Subst {
 			return nil
 		}
 		if w&(w-1) == 0 {
-			return &endTable[bits.LeadingZeros64(w)]
+			return &endTable[leadingZeros(w)]
 		}
 	}
 	entries := make([]entry, 0, c.Len())
@@ -115,15 +111,19 @@ func end(one bool) Dim {
 	return Zero()
 }
 
-// leadingZeros and popcount name the two machine operations that the other
-// files use most.
-func leadingZeros(w uint64) int { return bits.LeadingZeros64(w) }
-func popcount(w uint64) int     { return bits.OnesCount64(w) }
-
-// nameString writes a name for debugging.
-func nameString(n Name) string { return "i" + strconv.Itoa(int(n)) }
-
-// sortEntries puts the entries of a substitution in the order of their names.
-func sortEntries(entries []entry) {
-	slices.SortStableFunc(entries, func(a, b entry) int { return int(a.name) - int(b.name) })
+// String returns c for debugging, its names written i0, i1 and so on.
+func (c Cube) String() string {
+	if c.IsTop() {
+		return "top"
+	}
+	var b strings.Builder
+	for _, a := range c.Assignments() {
+		b.WriteString("(" + nameString(a.Name))
+		if a.One {
+			b.WriteString("=1)")
+		} else {
+			b.WriteString("=0)")
+		}
+	}
+	return b.String()
 }

@@ -1,7 +1,3 @@
-package interval
-
-import "strings"
-
 // Elements of the interval.
 //
 // A Dim is an element of the free De Morgan algebra on the dimension names
@@ -9,6 +5,10 @@ import "strings"
 // Boolean: the conjunction of i and ~i is not 0. As a lattice it is free on the
 // literals i and ~i, so the normal form is an antichain of sets of literals:
 // no disjunct is 0, and 1 is the disjunct without literals.
+
+package interval
+
+import "strings"
 
 // Dim is an element of the interval in normal form. The zero value is the end
 // 0. Two Dims are equal exactly when Equal says so; == is finer on those that
@@ -178,7 +178,7 @@ func (d Dim) Subst(s *Subst) (r Dim) {
 			r.form.n, r.form.w[0] = 1, w
 			return r
 		}
-		if isLiteral(w) && s.rest == nil {
+		if isLiteral(w) && len(s.rest) == 0 {
 			if w&firsts != 0 {
 				return s.first.dim
 			}

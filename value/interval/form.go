@@ -1,10 +1,3 @@
-package interval
-
-import (
-	"cmp"
-	"slices"
-)
-
 // Normal forms, which both algebras end in.
 //
 // A form is up to four words inline, or a pointer to a wide. A wide holds what
@@ -12,6 +5,13 @@ import (
 // 32), or names from 32 up (as conjs). A form that fits inline is always
 // inline, and a wide that can be words is always words, so that equality is
 // structural. Unused inline words are 0.
+
+package interval
+
+import (
+	"cmp"
+	"slices"
+)
 
 // form is the normal form shared by Dim and Face. With wide nil its
 // conjunctions are w[:n]; otherwise n and w are 0.
@@ -198,7 +198,7 @@ func (f *form) join(g *form) form {
 	if low && ok {
 		var buf [8]uint64
 		out := append(buf[:0], a...)
-		k.add(len(b), len(a))
+		k.add(smallCost*len(b), len(a))
 		for _, w := range b {
 			out = addWord(out, w, &k)
 		}

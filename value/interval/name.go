@@ -20,7 +20,10 @@
 // never missing from it.
 package interval
 
-import "math/bits"
+import (
+	"math/bits"
+	"strconv"
+)
 
 // Name is the name of a dimension: a small non-negative number. The order of
 // names is the order of binding, outermost first. Names below 32 are the cheap
@@ -63,3 +66,6 @@ func (s Support) Lowest() (n Name, ok bool) {
 	k := bits.TrailingZeros64(^uint64(s))
 	return Name(k), k < 63
 }
+
+// nameString writes a name for debugging.
+func nameString(n Name) string { return "i" + strconv.Itoa(int(n)) }

@@ -1,7 +1,3 @@
-package interval
-
-import "slices"
-
 // Substitutions of dimensions.
 //
 // A Subst is a finite parallel substitution, the identity elsewhere. Its
@@ -9,6 +5,13 @@ import "slices"
 // substitutions have equal entries and the identity is the nil *Subst. What the
 // hot paths ask is kept as words: which names are touched, and which literals
 // become 0 and 1.
+
+package interval
+
+import (
+	"cmp"
+	"slices"
+)
 
 // Subst is a finite parallel substitution of Dims for names, the identity
 // elsewhere. It is immutable. The nil *Subst is the identity, for all methods.
@@ -43,6 +46,12 @@ var endTable = func() (table [126]Subst) {
 }()
 
 func newEntry(n Name, d Dim) entry { return entry{n, d, d.Support()} }
+
+// sortEntries puts entries in the order of their names, keeping the order of
+// those with the same name.
+func sortEntries(entries []entry) {
+	slices.SortStableFunc(entries, func(a, b entry) int { return cmp.Compare(a.name, b.name) })
+}
 
 // substOf returns the substitution of sorted entries, dropping identities. It
 // keeps the slice.
@@ -101,12 +110,9 @@ func (s *Subst) entry(k int) *entry {
 	return &s.rest[k-1]
 }
 
-// entries returns a copy of the entries with room for one more.
+// entries returns a copy of the entries.
 func (s *Subst) entries() []entry {
-	if s == nil {
-		return nil
-	}
-	out := make([]entry, 0, s.Len()+1)
+	out := make([]entry, 0, s.Len())
 	out = append(out, s.first)
 	return append(out, s.rest...)
 }
@@ -198,14 +204,17 @@ func (s *Subst) Extend(n Name, d Dim) *Subst {
 	if s == nil {
 		return Assign(n, d)
 	}
-	entries := append(s.entries(), newEntry(n, d))
-	sortEntries(entries)
-	for k := range len(entries) - 1 {
-		if entries[k].name == n && entries[k+1].name == n {
-			// The sort is stable: the new entry is the later one.
-			entries = slices.Delete(entries, k, k+1)
-			break
-		}
+	entries := make([]entry, 0, s.Len()+1)
+	k := 0
+	for ; k < s.Len() && s.entry(k).name < n; k++ {
+		entries = append(entries, *s.entry(k))
+	}
+	entries = append(entries, newEntry(n, d))
+	if k < s.Len() && s.entry(k).name == n {
+		k++
+	}
+	for ; k < s.Len(); k++ {
+		entries = append(entries, *s.entry(k))
 	}
 	return substOf(entries)
 }

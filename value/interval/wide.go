@@ -1,10 +1,3 @@
-package interval
-
-import (
-	"cmp"
-	"slices"
-)
-
 // The wide algebra: conjunctions of any names, and their antichains.
 //
 // A conj is a word for the names below 32 and a list of codes for the others.
@@ -12,6 +5,14 @@ import (
 // for the words' bit operations. Nothing here is meant to be fast; it is meant
 // to be right, and to stop where the narrow algebra stops. The tests rename
 // problems from one algebra to the other.
+
+package interval
+
+import (
+	"cmp"
+	"math/bits"
+	"slices"
+)
 
 // high holds the literals of names from 32 up: ascending codes, at least one.
 // The code of a literal is twice its name, plus one for the second literal.
@@ -141,7 +142,7 @@ func (c conj) compare(d conj) int {
 }
 
 // size is the number of literals.
-func (c conj) size() int { return popcount(c.low) + len(c.codes()) }
+func (c conj) size() int { return bits.OnesCount64(c.low) + len(c.codes()) }
 
 // support returns an over-approximation of the names in c.
 func (c conj) support() Support {

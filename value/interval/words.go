@@ -1,11 +1,3 @@
-package interval
-
-import (
-	"fmt"
-	"math/bits"
-	"slices"
-)
-
 // The narrow algebra: antichains of machine words.
 //
 // A conjunction over the names below 32 is one word, two bits a name: name k
@@ -20,13 +12,21 @@ import (
 // moves them to the heap when they outgrow it. All growth goes through
 // addWord, which bounds what is live and counts the work.
 
+package interval
+
+import (
+	"fmt"
+	"math/bits"
+	"slices"
+)
+
 // MaxConjunctions bounds the conjunctions of a Dim or Face. An operation which
 // would keep more of them, also for a moment, or which would compare
-// conjunctions more than about 2^26 times, panics with a *SizeError.
+// conjunctions more than about 2^28 times, panics with a *SizeError.
 const MaxConjunctions = 1 << 14
 
 // maxWork bounds the comparisons of conjunctions in one operation.
-const maxWork = 1 << 26
+const maxWork = 1 << 28
 
 // SizeError is the value with which an operation panics when a normal form
 // would get too large to build. It depends on the operands alone.
@@ -63,6 +63,9 @@ const (
 	narrowNames = 32
 )
 
+// leadingZeros returns the index of the earliest literal of w.
+func leadingZeros(w uint64) int { return bits.LeadingZeros64(w) }
+
 // firstBit returns the bit of the first literal of n, which must be below 32.
 func firstBit(n Name) uint64 { return 1 << 63 >> (2 * uint32(n)) }
 
@@ -96,8 +99,11 @@ func wordSupport(w uint64) Support {
 }
 
 // smallChain is the length up to which addWord does not count its comparisons;
-// its callers count the calls.
-const smallChain = 16
+// its callers count smallCost for each call.
+const (
+	smallChain = 16
+	smallCost  = 4
+)
 
 // addWord joins w to the antichain ws, which it may overwrite. The result is an
 // antichain, in no particular order.
@@ -133,7 +139,7 @@ func replaceFrom(ws []uint64, i int, w uint64) []uint64 {
 // conjunctions are left out.
 func meetWords(dst, a, b []uint64, faces bool, k *work) []uint64 {
 	for _, v := range a {
-		k.add(len(b), len(dst))
+		k.add(smallCost*len(b), len(dst))
 		for _, w := range b {
 			if u := v | w; !faces || consistentWord(u) {
 				dst = addWord(dst, u, k)
@@ -148,7 +154,7 @@ func meetWords(dst, a, b []uint64, faces bool, k *work) []uint64 {
 func meetBits(dst, a []uint64, w uint64, faces bool, k *work) []uint64 {
 	for ; w != 0; w &= w - 1 {
 		bit := w & -w
-		k.add(len(a), len(dst))
+		k.add(smallCost*len(a), len(dst))
 		for _, v := range a {
 			if u := v | bit; !faces || consistentWord(u) {
 				dst = addWord(dst, u, k)
