@@ -92,7 +92,10 @@ func (p Place) String() string {
 	return ""
 }
 
-// Error renders the error in one line.
+// maxErrorText is where a term in an error's text is cut off, in bytes; the error itself holds it whole.
+const maxErrorText = 1 << 16
+
+// Error renders the error in one line; very long terms are cut off.
 func (e *Error) Error() string {
 	var b strings.Builder
 	if where := e.Place.String(); where != "" {
@@ -108,10 +111,10 @@ func (e *Error) Error() string {
 	}
 	want, got := e.WantText, e.GotText
 	if e.Want != nil {
-		want = e.Want.String()
+		want = e.Want.Text(maxErrorText)
 	}
 	if e.Got != nil {
-		got = e.Got.String()
+		got = e.Got.Text(maxErrorText)
 	}
 	if want != "" {
 		b.WriteString(": expected " + want)

@@ -29,10 +29,13 @@ func (w *Written) Text(limit int) string {
 	return p.out.String()
 }
 
-// piece is what remains to be printed: a text, or a term.
+// piece is what remains to be printed: a text, a term, or the rest of a nest
+// that is written as one form. The rest is not taken apart before its turn
+// comes: in a shared graph every nest may hold further ones.
 type piece struct {
 	text string
 	w    *Written
+	rest string // the head word of the nest
 }
 
 // printer holds the text so far and the pieces to come, the next one last.
@@ -43,11 +46,13 @@ type printer struct {
 	pieces []piece // of the form at hand, in order
 }
 
-func (p *printer) push(w *Written)        { p.todo = append(p.todo, piece{w: w}) }
-func (p *printer) text(s string)          { p.pieces = append(p.pieces, piece{text: s}) }
-func (p *printer) term(w *Written)        { p.pieces = append(p.pieces, piece{w: w}) }
-func (p *printer) spaced(w *Written)      { p.text(" "); p.term(w) }
-func (p *printer) names(binders []Binder) { p.namesAfter("", binders) }
+func (p *printer) push(w *Written)   { p.todo = append(p.todo, piece{w: w}) }
+func (p *printer) text(s string)     { p.pieces = append(p.pieces, piece{text: s}) }
+func (p *printer) term(w *Written)   { p.pieces = append(p.pieces, piece{w: w}) }
+func (p *printer) spaced(w *Written) { p.text(" "); p.term(w) }
+func (p *printer) rest(word string, w *Written) {
+	p.pieces = append(p.pieces, piece{w: w, rest: word})
+}
 
 func (p *printer) namesAfter(before string, binders []Binder) {
 	for _, b := range binders {
@@ -71,7 +76,11 @@ func (p *printer) run() {
 			continue
 		}
 		p.pieces = p.pieces[:0]
-		p.expand(next.w)
+		if next.rest != "" {
+			p.follow(next.rest, next.w)
+		} else {
+			p.expand(next.w)
+		}
 		for k := len(p.pieces) - 1; k >= 0; k-- {
 			p.todo = append(p.todo, p.pieces[k])
 		}
@@ -125,15 +134,11 @@ func (p *printer) form(w *Written) {
 	case w.isChain("lam", 1, 0), w.isChain("line", 1, 0):
 		p.nestedNames(w)
 	case w.isChain("Pi", 2, 1), w.isChain("Sigma", 2, 1), w.isChain("let", 3, 2):
-		p.nestedBindings(w)
+		p.text(" (")
+		p.binding(w)
 	case w.isPlain("->"), w.isPlain("*"), w.isPlain("pair"):
-		for word := w.Word; ; {
-			p.spaced(w.Parts[0].Body)
-			if w = w.Parts[1].Body; !w.isPlain(word) {
-				break
-			}
-		}
-		p.spaced(w)
+		p.spaced(w.Parts[0].Body)
+		p.rest(w.Word, w.Parts[1].Body)
 	case w.isPlain("at"):
 		p.nestedAt(w)
 	default:
@@ -180,19 +185,41 @@ func (p *printer) nestedNames(w *Written) {
 	p.term(w)
 }
 
-func (p *printer) nestedBindings(w *Written) {
-	word, n, before := w.Word, len(w.Parts), " (("
-	for w.isChain(word, n, n-1) {
-		p.text(before)
-		p.text(w.Parts[n-1].Binders[0].Name)
-		for _, part := range w.Parts[:n-1] {
-			p.spaced(part.Body)
-		}
-		p.text(")")
-		before, w = " (", w.Parts[n-1].Body
+// binding prints the first binding of w and then what follows.
+func (p *printer) binding(w *Written) {
+	last := len(w.Parts) - 1
+	p.text("(" + w.Parts[last].Binders[0].Name)
+	for _, part := range w.Parts[:last] {
+		p.spaced(part.Body)
 	}
-	p.text(") ")
-	p.term(w)
+	p.text(")")
+	p.rest(w.Word, w.Parts[last].Body)
+}
+
+// follow prints what follows in a nest of word: one more part or binding, or the last part.
+func (p *printer) follow(word string, w *Written) {
+	switch word {
+	case "->", "*", "pair":
+		p.text(" ")
+		if !w.isPlain(word) {
+			p.term(w)
+			return
+		}
+		p.term(w.Parts[0].Body)
+		p.rest(word, w.Parts[1].Body)
+	default:
+		last := 1
+		if word == "let" {
+			last = 2
+		}
+		if !w.isChain(word, last+1, last) {
+			p.text(") ")
+			p.term(w)
+			return
+		}
+		p.text(" ")
+		p.binding(w)
+	}
 }
 
 func (p *printer) nestedAt(w *Written) {
@@ -216,7 +243,7 @@ func (p *printer) part(part Part) {
 		p.term(part.Body)
 	default:
 		p.text("(")
-		p.names(part.Binders)
+		p.namesAfter("", part.Binders)
 		p.spaced(part.Body)
 		p.text(")")
 	}
@@ -242,7 +269,7 @@ func (p *printer) rows(cases bool, rows [][]Part) {
 				p.text(missing)
 			case len(part.Binders) > 0:
 				p.text("(")
-				p.names(part.Binders)
+				p.namesAfter("", part.Binders)
 				p.text(") ")
 				p.term(part.Body)
 			default:

@@ -12,7 +12,7 @@ package term
 // nearly linear in the number of distinct nodes of both, however large they
 // are as trees; nesting costs no stack. Safe for concurrent use.
 func Same(a, b Core) bool {
-	c := comparison{}
+	c := comparison{class: classes[*Op]{}}
 	c.todo = append(c.todo, [2]Arg{a, b})
 	for len(c.todo) > 0 {
 		next := c.todo[len(c.todo)-1]
@@ -24,37 +24,37 @@ func Same(a, b Core) bool {
 	return true
 }
 
-// comparison holds the pairs still to be compared and, for an operator that
-// has been compared, another one of its class; the root of a class has none.
-type comparison struct {
-	todo  [][2]Arg
-	class map[*Op]*Op
-}
+// classes holds, for a node that has been compared, another one of its class;
+// the root of a class has none.
+type classes[N comparable] map[N]N
 
-// root returns the root of o's class, halving the way to it.
-func (c *comparison) root(o *Op) *Op {
+// root returns the root of n's class, halving the way to it.
+func (c classes[N]) root(n N) N {
 	for {
-		up, ok := c.class[o]
+		up, ok := c[n]
 		if !ok {
-			return o
+			return n
 		}
-		if upper, ok := c.class[up]; ok {
-			c.class[o] = upper
+		if upper, ok := c[up]; ok {
+			c[n] = upper
 		}
-		o = up
+		n = up
 	}
 }
 
 // join makes one class of two and reports whether they were one already.
-func (c *comparison) join(a, b *Op) bool {
+func (c classes[N]) join(a, b N) bool {
 	if a, b = c.root(a), c.root(b); a == b {
 		return true
 	}
-	if c.class == nil {
-		c.class = map[*Op]*Op{}
-	}
-	c.class[a] = b
+	c[a] = b
 	return false
+}
+
+// comparison holds the pairs still to be compared.
+type comparison struct {
+	todo  [][2]Arg
+	class classes[*Op]
 }
 
 // agree compares a and b as far as they lie open and puts their parts on the list.
@@ -119,7 +119,7 @@ func (c *comparison) operators(a, b *Op) bool {
 	if a.Sig != b.Sig || len(a.Args) != len(b.Args) {
 		return false
 	}
-	if len(a.Args) == 0 || c.join(a, b) {
+	if len(a.Args) == 0 || c.class.join(a, b) {
 		return true
 	}
 	return c.all(a.Args, b.Args)
@@ -136,10 +136,10 @@ func (c *comparison) all(a, b []Arg) bool {
 }
 
 // Same reports whether w and v are the same tree, places aside. Names count:
-// two terms that differ in their bound names are not the same here. Shared
-// parts are compared each time they occur, unless both sides share them.
-// Nesting costs no stack.
+// two terms that differ in their bound names are not the same here. Cost as for
+// the [Same] of core terms.
 func (w *Written) Same(v *Written) bool {
+	class := classes[*Written]{}
 	todo := [][2]*Written{{w, v}}
 	for len(todo) > 0 {
 		w, v := todo[len(todo)-1][0], todo[len(todo)-1][1]
@@ -150,6 +150,9 @@ func (w *Written) Same(v *Written) bool {
 		if w == nil || v == nil || w.Kind != v.Kind || w.Word != v.Word || (w.Number == nil) != (v.Number == nil) ||
 			w.Number != nil && w.Number.Cmp(v.Number) != 0 {
 			return false
+		}
+		if len(w.Parts) == 0 && len(v.Parts) == 0 || class.join(w, v) {
+			continue
 		}
 		rows := [][2][]Part{{w.Parts, v.Parts}}
 		for len(rows) > 0 {

@@ -54,7 +54,7 @@ func (w *writer) app(c *Op) *Written {
 	}
 	w.made += n - 2 // this node and the head are counted elsewhere
 	f := &Written{Kind: ApplyKind, Parts: make([]Part, n)}
-	if o, ok := head.(*Op); ok && len(o.Args) > 0 && (o.Sig.Name == "data" || o.Sig.Name == "con") {
+	if o, ok := head.(*Op); ok && (o.Sig.Name == "data" && len(o.Args) == 1 || o.Sig.Name == "con" && len(o.Args) == 2) {
 		// A bare name here would take the arguments for its own.
 		f.Parts[0].Body = &Written{Kind: ApplyKind, Parts: make([]Part, 1)}
 		w.core(head, &f.Parts[0].Body.Parts[0].Body)
