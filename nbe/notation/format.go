@@ -62,7 +62,7 @@ func layout(text string, width int) string {
 			b.WriteString("\n" + strings.Repeat(" ", p.indent))
 			column = p.indent
 		}
-if p.n.kind != listNode || column+int(p.n.width)+p.closes <= width {
+		if p.n.kind != listNode || column+int(p.n.width)+p.closes <= width {
 			todo = p.n.flat(write, todo)
 			continue
 		}

@@ -106,7 +106,7 @@ func (r *reader) elim(n *node, items []node) *term.Written {
 		return nil
 	}
 	w := r.newForm(n, "elim", 3)
-	r.under(&items[0], 1, &w.Parts[0])
+	r.under(&items[0], []term.Sort{term.TermSort}, &w.Parts[0])
 	r.put(&items[1], termHere, &w.Parts[1].Body)
 	rows := make([][]term.Part, len(items)-2)
 	w.Parts[2].Rows = rows
@@ -132,14 +132,11 @@ func (r *reader) elim(n *node, items []node) *term.Written {
 	return w
 }
 
-// under reads a body under k names, "(i … t)".
-func (r *reader) under(n *node, k int, part *term.Part) {
+// under reads a body under names, "(i … t)".
+func (r *reader) under(n *node, binds []term.Sort, part *term.Part) {
+	k := len(binds)
 	if n.kind != listNode || len(n.items) != k+1 {
-		want := "(x A)"
-		for j := 1; j < k; j++ {
-			want = "(x " + want[1:]
-		}
-		r.fault(n, want)
+		r.fault(n, namesText(binds, " A)"))
 		return
 	}
 	part.Binders = r.binders(n.items[:k])
@@ -177,13 +174,13 @@ func (r *reader) slots(parts *[]term.Part, items []node, slots []term.Slot, row 
 				if items[0].kind == listNode && len(items[0].items) == len(s.Binds) {
 					part.Binders = r.binders(items[0].items)
 				} else {
-					r.fault(&items[0], namesText(len(s.Binds)))
+					r.fault(&items[0], namesText(s.Binds, ")"))
 				}
 				r.put(&items[1], termHere, &part.Body)
 				items = items[2:]
 				continue
 			case len(s.Binds) > 0:
-				r.under(&items[0], len(s.Binds), part)
+				r.under(&items[0], s.Binds, part)
 			default:
 				r.put(&items[0], positionOf(s), &part.Body)
 			}
@@ -191,13 +188,4 @@ func (r *reader) slots(parts *[]term.Part, items []node, slots []term.Slot, row 
 		}
 	}
 	return len(items) == 0
-}
-
-// namesText is the text of a list of k names, for messages.
-func namesText(k int) string {
-	text := "(i"
-	for j := 1; j < k; j++ {
-		text += " j"
-	}
-	return text + ")"
 }

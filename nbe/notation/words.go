@@ -145,13 +145,13 @@ func slotsText(slots []term.Slot, row bool) string {
 	terms := 0
 	for _, s := range slots {
 		text := ""
-		switch names := strings.Repeat(" i", len(s.Binds)); {
+		switch {
 		case s.Rows != nil:
 			text = rowText(s.Rows)
-		case names != "" && row:
-			text = "(" + names[1:] + ") t"
-		case names != "":
-			text = "(" + names[1:] + " A)"
+		case len(s.Binds) > 0 && row:
+			text = namesText(s.Binds, ")") + " t"
+		case len(s.Binds) > 0:
+			text = namesText(s.Binds, " A)")
 		case s.Sort == term.DimensionSort:
 			text = "r"
 		case s.Sort == term.FaceSort:
@@ -170,4 +170,20 @@ func slotsText(slots []term.Slot, row bool) string {
 		texts = append(texts, text)
 	}
 	return strings.Join(texts, " ")
+}
+
+// namesText shows the names that a slot binds, and what follows them.
+func namesText(binds []term.Sort, end string) string {
+	next := map[term.Sort]int{}
+	var names []string
+	for _, sort := range binds {
+		letters := "xyzuvw"
+		if sort == term.DimensionSort {
+			letters = "ijklmn"
+		}
+		k := next[sort] % len(letters)
+		names = append(names, letters[k:k+1])
+		next[sort]++
+	}
+	return "(" + strings.Join(names, " ") + end
 }

@@ -38,9 +38,12 @@ type Op struct {
 
 // Bound is a body under binders; the signature tells which of them are
 // variables and which dimensions. Hints are the host's names, for printing.
+// Dimensions says how many of the binders, the last ones, are dimensions; it
+// is looked at where the signature leaves the number of binders open.
 type Bound struct {
-	Hints []string
-	Body  Core
+	Hints      []string
+	Body       Core
+	Dimensions int
 }
 
 // Dimension is an interval expression as an argument.

@@ -351,6 +351,12 @@ func drawSubst(t *rapid.T, names, into []Name) *Subst {
 			from, to = append(from, n), append(to, Lit(pickFrom(t, into), pick(t, 2) == 1))
 		case 3:
 			from, to = append(from, n), append(to, drawDim(t, into, 2))
+		case 4: // a connection, also of a name with its own reversal
+			l, m := Lit(pickFrom(t, into), pick(t, 2) == 1), Lit(pickFrom(t, into), pick(t, 2) == 1)
+			if pick(t, 2) == 1 {
+				m = l.Rev()
+			}
+			from, to = append(from, n), append(to, [...]Dim{l.Min(m), l.Max(m)}[pick(t, 2)])
 		}
 	}
 	return NewSubst(from, to)

@@ -43,7 +43,7 @@ func TestFaceAgreesWithASolver(t *testing.T) {
 func TestFaceQuestions(t *testing.T) {
 	names := []Name{0, 5, 31, 32, 63, 1000}
 	rapid.Check(t, func(t *rapid.T) {
-		f := drawFace(t, names, 3)
+		f := drawFace(t, pickFrom(t, [][]Name{names, {0, 5, 31}}), 4)
 		requireForm(t, f.form, true)
 		require.Equal(t, f.Equal(Bot()), f.IsBot())
 		require.Equal(t, f.Equal(Top()), f.IsTop())

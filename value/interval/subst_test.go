@@ -218,11 +218,13 @@ func TestSkippable(t *testing.T) {
 			for k := range sets {
 				sets[k] = map[Name]bool{}
 				for _, n := range into {
-					// Frontier and faces are part of the support.
 					in := pick(t, 3) == 0
+					if in {
+						sups[k] |= Single(n)
+					}
+					// Frontier and faces count as part of the support.
 					if in || k == 2 && (sets[0][n] || sets[1][n]) {
 						sets[k][n] = true
-						sups[k] |= Single(n)
 					}
 				}
 			}

@@ -1,0 +1,186 @@
+package eval
+
+import "example.com/boxwright/value"
+
+// Abstraction is a compiled body with its own frame: first the arguments, then
+// the captured slots of the surrounding frame, exactly those it uses.
+type Abstraction struct {
+	captures []int // slots of the surrounding frame
+	arity    int
+	hints    []string
+	body     Code
+}
+
+func (a *Abstraction) capture(to, from Frame) {
+	for k, slot := range a.captures {
+		to[k] = from[slot]
+	}
+}
+
+func (a *Abstraction) support(f Frame) (sup value.Support) {
+	for _, slot := range a.captures {
+		sup |= f[slot].Support()
+	}
+	return sup
+}
+
+// closure is an abstraction with what it captured.
+type closure struct {
+	abs     *Abstraction
+	env     []value.Value
+	support value.Support
+}
+
+func (a *Abstraction) close(run *value.Run, f Frame) *closure {
+	run.Charge(value.PriceClosure)
+	c := &closure{abs: a}
+	if n := len(a.captures); n > 0 {
+		c.env = make([]value.Value, n)
+		for k, slot := range a.captures {
+			v := value.Peek(f[slot])
+			c.env[k] = v
+			c.support |= v.Support()
+		}
+	}
+	return c
+}
+
+// Support is the union over what is captured.
+func (c *closure) Support() value.Support { return c.support }
+
+func (c *closure) substitute(run *value.Run, s *value.Subst) *closure {
+	if !run.Plain.NoSupport && c.support&s.Domain() == 0 {
+		return c
+	}
+	run.Charge(value.PriceClosure)
+	d := &closure{abs: c.abs, env: make([]value.Value, len(c.env))}
+	for k, v := range c.env {
+		v = run.Substitute(v, s)
+		d.env[k] = v
+		d.support |= v.Support()
+	}
+	return d
+}
+
+// Substitute delays s over what is captured.
+func (c *closure) Substitute(run *value.Run, s *value.Subst) value.Closure {
+	return c.substitute(run, s)
+}
+
+// Apply evaluates the body in a frame of the run's.
+func (c *closure) Apply(run *value.Run, arg value.Value) value.Value {
+	m := run.Mark()
+	f := run.Frame(1 + len(c.env))
+	f[0] = arg
+	copy(f[1:], c.env)
+	v := c.abs.body.Eval(run, f)
+	run.Release(m)
+	return v
+}
+
+// Open is the body in a cell.
+func (c *closure) Open(run *value.Run, arg value.Value) value.Value {
+	return c.OpenAll(run, []value.Value{arg})
+}
+
+// Hint is the host's name of the variable.
+func (c *closure) Hint() string { return c.HintAt(0) }
+
+// ApplyAll evaluates the body under all its arguments.
+func (c *closure) ApplyAll(run *value.Run, args []value.Value) value.Value {
+	m := run.Mark()
+	f := run.Frame(len(args) + len(c.env))
+	copy(f, args)
+	copy(f[len(args):], c.env)
+	v := c.abs.body.Eval(run, f)
+	run.Release(m)
+	return v
+}
+
+// OpenAll is the body under all its arguments, in a cell.
+func (c *closure) OpenAll(run *value.Run, args []value.Value) value.Value {
+	env := make([]value.Value, len(args)+len(c.env))
+	copy(env, args)
+	copy(env[len(args):], c.env)
+	return newThunk(run, c.abs.body, env)
+}
+
+// Arity is the number of arguments.
+func (c *closure) Arity() int { return c.abs.arity }
+
+// HintAt is the host's name of argument k.
+func (c *closure) HintAt(k int) string {
+	if k < len(c.abs.hints) {
+		return c.abs.hints[k]
+	}
+	return "_"
+}
+
+type caseClosure struct{ *closure }
+
+// SubstituteCase delays s over what is captured.
+func (c caseClosure) SubstituteCase(run *value.Run, s *value.Subst) value.Case {
+	return caseClosure{c.closure.substitute(run, s)}
+}
+
+// AsClosure is a case of one argument as a closure.
+func (c caseClosure) AsClosure() value.Closure { return c.closure }
+
+// thunk is the body, with one argument before the captured slots if arg is not
+// nil, as a cell.
+func (a *Abstraction) thunk(run *value.Run, f Frame, arg value.Value) value.Value {
+	w := &thunk{}
+	n := len(a.captures)
+	if arg != nil {
+		n++
+	}
+	env := w.few[:]
+	if n > len(env) {
+		env = make([]value.Value, n)
+	}
+	env = env[:n]
+	if arg != nil {
+		env[0] = arg
+		a.capture(env[1:], f)
+	} else {
+		a.capture(env, f)
+	}
+	return w.cell(run, a.body, env)
+}
+
+// thunk is a compiled term waiting in its environment; a small environment
+// stands in the object itself.
+type thunk struct {
+	value.Pending
+	code Code
+	env  []value.Value
+	few  [3]value.Value
+}
+
+// Do evaluates the term. The environment is the frame.
+func (t *thunk) Do(run *value.Run) value.Value { return t.code.Eval(run, t.env) }
+
+func newThunk(run *value.Run, code Code, env []value.Value) value.Value {
+	return (&thunk{}).cell(run, code, env)
+}
+
+func (t *thunk) cell(run *value.Run, code Code, env []value.Value) value.Value {
+	op, ok := code.(*opCode)
+	if !ok {
+		return delay(run, code, env)
+	}
+	if op.cheap > 0 {
+		return op.Eval(run, env)
+	}
+	if op.folds {
+		return op.fold(run, env)
+	}
+	var support value.Support
+	for k, v := range env {
+		v = value.Peek(v)
+		env[k] = v
+		support |= v.Support()
+	}
+	t.code, t.env = code, env
+	return run.NewLazy(support, &t.Pending, t)
+}

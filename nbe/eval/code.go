@@ -1,0 +1,229 @@
+// Package eval turns core terms into values. A term is compiled once: every
+// binder and every delayed argument becomes an [Abstraction] that says exactly
+// which slots of the surrounding frame it captures, and every operator becomes
+// an [Operation] with compiled arguments. Evaluation names no former: what an
+// operator does, its Operation says, the built-in ones like a host's.
+package eval
+
+import (
+	"example.com/boxwright/nbe/term"
+	"example.com/boxwright/value"
+	"example.com/boxwright/value/interval"
+)
+
+// Frame holds the values of a body's bound variables and of what it captured;
+// dimensions stand in it as *value.Dimension. A frame is only lent: nothing
+// may keep it after Eval returns.
+type Frame = []value.Value
+
+// Code is a compiled term.
+type Code interface {
+	// Eval evaluates it, on demand; the result may be a lazy cell still to be forced.
+	Eval(run *value.Run, f Frame) value.Value
+}
+
+// Operation is what a core operator does. It is stateless and safe for concurrent use.
+type Operation interface {
+	Eval(run *value.Run, f Frame, args []Arg) value.Value
+}
+
+// Canonical is an Operation whose Eval does no work beyond building a value:
+// delaying it would cost more than doing it.
+type Canonical interface {
+	Operation
+	Canonical()
+}
+
+// Eliminator is an Operation that waits for one of its arguments.
+type Eliminator interface {
+	Operation
+	// Principal is the argument it waits for.
+	Principal() int
+	// Frame is the elimination itself, for a neutral.
+	Frame(run *value.Run, f Frame, args []Arg) value.Frame
+}
+
+type slotCode int
+
+func (c slotCode) Eval(_ *value.Run, f Frame) value.Value { return f[c] }
+
+type constantCode struct{ v value.Value }
+
+func (c constantCode) Eval(*value.Run, Frame) value.Value { return c.v }
+
+type globalCode struct{ g value.Global }
+
+func (c globalCode) Eval(run *value.Run, _ Frame) value.Value { return run.Unfold(c.g) }
+
+type opCode struct {
+	op    Operation
+	args  []Arg
+	folds bool // its principal argument ends in a global
+	cheap int  // 0: not cheap; otherwise 1 + how deep cheap operators nest in it
+}
+
+func (c *opCode) Eval(run *value.Run, f Frame) (v value.Value) {
+	if run.Enter() {
+		run.Hop(func() { v = c.op.Eval(run, f, c.args) })
+	} else {
+		v = c.op.Eval(run, f, c.args)
+	}
+	run.Leave()
+	return v
+}
+
+// fold is a definition under eliminations that nobody needs the value of yet:
+// its folded form in a cell or, where the run keeps the definition opaque, the neutral.
+func (c *opCode) fold(run *value.Run, f Frame) value.Value {
+	var frames []value.Frame
+	for {
+		e := c.op.(Eliminator)
+		frames = append(frames, e.Frame(run, f, c.args))
+		switch p := c.args[e.Principal()].code.(type) {
+		case *opCode:
+			c = p
+		case globalCode:
+			v := run.Folded(p.g)
+			l, lazy := v.(*value.Lazy)
+			if !lazy || l.Fold() == nil {
+				for k := len(frames) - 1; k >= 0; k-- {
+					v = frames[k].Resume(run, v)
+				}
+				return v
+			}
+			n := l.Fold()
+			for k := len(frames) - 1; k >= 0; k-- {
+				n = n.Eliminate(run, frames[k])
+			}
+			return run.Fold(n)
+		}
+	}
+}
+
+// Arg is a compiled argument of an operator: by the slot of its signature a
+// term, a body under binders, a dimension, a face, rows, or a payload.
+type Arg struct {
+	code    Code         // a term in the surrounding frame
+	abs     *Abstraction // a delayed term, or a body under binders
+	dim     *dimensionCode
+	face    *faceCode
+	Rows    [][]Arg
+	Payload term.Arg
+}
+
+// Eval evaluates a term argument, on demand.
+func (a *Arg) Eval(run *value.Run, f Frame) value.Value {
+	if a.code != nil {
+		return a.code.Eval(run, f)
+	}
+	if a.dim != nil {
+		return value.DimensionOf(a.dim.eval(f))
+	}
+	m := run.Mark()
+	frame := run.Frame(len(a.abs.captures))
+	a.abs.capture(frame, f)
+	v := a.abs.body.Eval(run, frame)
+	run.Release(m)
+	return v
+}
+
+// Delay is a term argument without doing any work; a dimension argument is its value.
+func (a *Arg) Delay(run *value.Run, f Frame) value.Value {
+	switch {
+	case a.code != nil:
+		return delay(run, a.code, f)
+	case a.dim != nil:
+		return value.DimensionOf(a.dim.eval(f))
+	}
+	if len(a.abs.captures) == 0 {
+		return a.abs.thunk(run, nil, nil)
+	}
+	return a.abs.thunk(run, f, nil)
+}
+
+func delay(run *value.Run, c Code, f Frame) value.Value {
+	switch c := c.(type) {
+	case slotCode:
+		return f[c]
+	case constantCode:
+		return c.v
+	case globalCode:
+		return run.Folded(c.g)
+	}
+	return c.Eval(run, f) // only cheap operators stand undelayed
+}
+
+// IsDimension reports whether the argument is a dimension.
+func (a *Arg) IsDimension() bool { return a.dim != nil }
+
+// Dimension evaluates a dimension argument.
+func (a *Arg) Dimension(f Frame) interval.Dim { return a.dim.eval(f) }
+
+// Face evaluates a face argument.
+func (a *Arg) Face(f Frame) interval.Face { return a.face.eval(f) }
+
+// Close is a body under one binder as a closure.
+func (a *Arg) Close(run *value.Run, f Frame) value.Closure { return a.abs.close(run, f) }
+
+// CloseAll is a body under any number of binders as a case.
+func (a *Arg) CloseAll(run *value.Run, f Frame) value.Case { return caseClosure{a.abs.close(run, f)} }
+
+// Line is a body under one dimension binder as a line: a fresh name outside
+// avoid, and the body at it, delayed.
+func (a *Arg) Line(run *value.Run, f Frame, avoid value.Support) (value.Name, value.Value) {
+	i := run.Fresh(a.abs.support(f) | avoid)
+	return i, a.abs.thunk(run, f, value.DimensionName(i))
+}
+
+// Walls evaluates rows of face and line. Each wall is made under each
+// conjunction of its own face, with the conjunction substituted into
+// everything it captures.
+func (a *Arg) Walls(run *value.Run, f Frame) value.System {
+	out := make(value.System, 0, len(a.Rows)+2)
+	for _, row := range a.Rows {
+		face := row[0].Face(f)
+		for k := range face.Len() {
+			cube := face.Cube(k)
+			under := restrict(run, row[1].abs, f, cube)
+			i, body := row[1].Line(run, under, cube.Support())
+			out = append(out, value.Wall{Cube: cube, I: i, Body: body})
+		}
+	}
+	return out
+}
+
+// Restricted calls yield with each conjunction of the row's face (its argument
+// 0) and with the frame restricted to it, for the row's other arguments.
+func Restricted(run *value.Run, f Frame, row []Arg, yield func(cube interval.Cube, f Frame)) {
+	face := row[0].Face(f)
+	for k := range face.Len() {
+		cube := face.Cube(k)
+		if cube.IsTop() {
+			yield(cube, f)
+			continue
+		}
+		g := make(Frame, len(f))
+		for k, v := range f {
+			if v != nil {
+				g[k] = run.Restrict(v, cube)
+			}
+		}
+		yield(cube, g)
+	}
+}
+
+// restrict is the frame f on a cube, in the slots that abs captures.
+func restrict(run *value.Run, abs *Abstraction, f Frame, cube interval.Cube) Frame {
+	if cube.IsTop() {
+		return f
+	}
+	g := make(Frame, len(f))
+	for _, slot := range abs.captures {
+		g[slot] = run.Restrict(f[slot], cube)
+	}
+	return g
+}
+
+// Shares reports whether two arguments of one operator are the same shared
+// subterm, so that they may share their cell too.
+func (a *Arg) Shares(b *Arg) bool { return a.abs != nil && a.abs == b.abs }

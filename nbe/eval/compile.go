@@ -1,0 +1,272 @@
+package eval
+
+import (
+	"example.com/boxwright/nbe/term"
+	"example.com/boxwright/value"
+)
+
+// Resolver tells the compiler what names stand for.
+type Resolver interface {
+	// Operation is what an operator does, nil if no former brings it.
+	Operation(sig *term.Signature) Operation
+	// Global is a definition or an assumption, nil if there is none.
+	Global(name string) value.Global
+}
+
+// Compile compiles a core term of a scope of nv variables and nd dimensions,
+// over those of them that are listed, by level; it must mention no others. The
+// cost is linear in its size as a shared graph, for what is shared in one scope.
+func Compile(run *value.Run, r Resolver, c term.Core, nv, nd int, variables, dimensions []int) *Abstraction {
+	k := &compiler{run: run, r: r}
+	abs := &Abstraction{arity: len(variables) + len(dimensions)}
+	l := &layout{abs: abs, variables: map[int]int{}, dimensions: map[int]int{}, size: abs.arity}
+	for s, level := range variables {
+		l.variables[level] = s
+	}
+	for s, level := range dimensions {
+		l.dimensions[level] = len(variables) + s
+	}
+	abs.body = k.term(c, l, nv, nd)
+	return abs
+}
+
+// Levels are the levels below n, for Compile.
+func Levels(n int) []int {
+	out := make([]int, n)
+	for k := range out {
+		out[k] = k
+	}
+	return out
+}
+
+// Eval evaluates a compiled term whose scope is env: its variables, then its
+// dimensions. No work is done before the result is forced.
+func (a *Abstraction) Eval(run *value.Run, env []value.Value) value.Value {
+	return newThunk(run, a.body, append([]value.Value(nil), env...))
+}
+
+// Case is a compiled term as a case over its scope.
+func (a *Abstraction) Case(run *value.Run) value.Case { return caseClosure{a.close(run, nil)} }
+
+type compiler struct {
+	run  *value.Run
+	r    Resolver
+	seen map[seenKey]*Abstraction
+}
+
+type seenKey struct {
+	arg term.Arg
+	l   *layout
+}
+
+// layout says which slot holds what in one frame. A level that is not there
+// yet is captured from the surrounding frame.
+type layout struct {
+	outer                 *layout
+	abs                   *Abstraction
+	variables, dimensions map[int]int
+	size                  int
+}
+
+func (l *layout) slot(level int, dimension bool) int {
+	m := l.variables
+	if dimension {
+		m = l.dimensions
+	}
+	if s, ok := m[level]; ok {
+		return s
+	}
+	if l.outer == nil {
+		return -1
+	}
+	from := l.outer.slot(level, dimension)
+	if from < 0 {
+		return -1
+	}
+	l.abs.captures = append(l.abs.captures, from)
+	s := l.size
+	l.size++
+	m[level] = s
+	return s
+}
+
+func (k *compiler) fault(what string, at any) {
+	k.run.Fail(&term.Error{Kind: term.Malformed, Message: "this core term cannot be compiled: " + what, Detail: at})
+}
+
+func (k *compiler) slot(l *layout, level int, dimension bool) int {
+	s := l.slot(level, dimension)
+	if s < 0 {
+		k.fault("a level is not in scope", level)
+	}
+	return s
+}
+
+func (k *compiler) term(c term.Core, l *layout, nv, nd int) (code Code) {
+	switch c := c.(type) {
+	case *term.Variable:
+		return slotCode(k.slot(l, c.Level, false))
+	case *term.Global:
+		g := k.r.Global(c.Name)
+		if g == nil {
+			k.run.Fail(&term.Error{Kind: term.NotFound, Message: "there is no definition or assumption of this name", GotText: c.Name})
+		}
+		return globalCode{g}
+	case *term.Op:
+		k.run.Down(func() { code = k.op(c, l, nv, nd) })
+		return code
+	}
+	k.fault("an unknown node", c)
+	return nil
+}
+
+// cheapest is how deep canonical operators may nest and still be built at once.
+const cheapest = 3
+
+func (k *compiler) op(c *term.Op, l *layout, nv, nd int) Code {
+	op := k.r.Operation(c.Sig)
+	if op == nil {
+		k.run.Fail(&term.Error{Kind: term.NotFound, Message: "no former brings this operator", GotText: c.Sig.Name})
+	}
+	out := &opCode{op: op, args: make([]Arg, len(c.Args))}
+	principal := -1
+	if e, ok := op.(Eliminator); ok {
+		principal = e.Principal()
+	}
+	cheap := 1
+	for i, a := range c.Args {
+		slot := c.Sig.SlotOf(i).Slot
+		if i == principal {
+			core, ok := a.(term.Core)
+			if !ok {
+				k.fault("an argument of the wrong sort", c)
+			}
+			code := k.term(core, l, nv, nd)
+			out.args[i].code = code
+			switch p := code.(type) {
+			case globalCode:
+				out.folds = true
+			case *opCode:
+				out.folds = p.folds
+			}
+			continue
+		}
+		out.args[i] = k.arg(a, slot, l, nv, nd)
+		if o, ok := out.args[i].code.(*opCode); ok && o.cheap >= cheap {
+			cheap = o.cheap + 1
+		}
+	}
+	if _, ok := op.(Canonical); ok && cheap <= cheapest {
+		out.cheap = cheap
+	}
+	if p, ok := op.(Preparer); ok {
+		if payload, ok := p.Prepare(c, nv); ok {
+			out.args = append(out.args, Arg{Payload: payload})
+		}
+	}
+	if constant, ok := op.(Closed); ok {
+		return constantCode{constant.Value(k.run, out.args)}
+	}
+	return out
+}
+
+// Closed is an Operation whose value depends on nothing in the frame: a
+// numeral, a universe. It is made once, when the term is compiled.
+type Closed interface {
+	Operation
+	Value(run *value.Run, args []Arg) value.Value
+}
+
+// Preparer is an Operation that looks at its term once, when it is compiled in
+// a scope of the given number of variables; what it finds is one more argument.
+type Preparer interface {
+	Operation
+	Prepare(c *term.Op, variables int) (term.Arg, bool)
+}
+
+func (k *compiler) arg(a term.Arg, slot term.Slot, l *layout, nv, nd int) Arg {
+	switch a := a.(type) {
+	case *term.Variable, *term.Global:
+		return Arg{code: k.term(a.(term.Core), l, nv, nd)}
+	case *term.Op:
+		abs := k.abstraction(a, a, nil, nil, l, nv, nd)
+		if o, ok := abs.body.(*opCode); !ok || o.cheap > 0 {
+			// building it costs less than delaying it, so it stands in the surrounding frame
+			if ok {
+				return Arg{code: k.term(a, l, nv, nd)}
+			}
+			return Arg{code: abs.body}
+		}
+		return Arg{abs: abs}
+	case *term.Bound:
+		return Arg{abs: k.abstraction(a, a.Body, k.binds(a, slot), a.Hints, l, nv, nd)}
+	case term.Dimension:
+		d := &dimensionCode{dim: a.Dim}
+		for _, n := range a.Dim.Names() {
+			d.names = append(d.names, n)
+			d.slots = append(d.slots, k.slot(l, int(n), true))
+		}
+		_, negated, ok := a.Dim.Literal()
+		d.literal = ok && !negated
+		return Arg{dim: d}
+	case *term.Face:
+		f := &faceCode{face: a.Face}
+		for _, n := range a.Face.Names() {
+			f.names = append(f.names, n)
+			f.slots = append(f.slots, k.slot(l, int(n), true))
+		}
+		return Arg{face: f}
+	case term.Rows:
+		rows := make([][]Arg, len(a))
+		for i, row := range a {
+			rows[i] = make([]Arg, len(row))
+			for j, x := range row {
+				var s term.Slot
+				if j < len(slot.Rows) {
+					s = slot.Rows[j]
+				} else if n := len(slot.Rows); n > 0 {
+					s = slot.Rows[n-1]
+				}
+				rows[i][j] = k.arg(x, s, l, nv, nd)
+			}
+		}
+		return Arg{Rows: rows}
+	}
+	return Arg{Payload: a}
+}
+
+// binds are the sorts of the names a binds. Where the slot leaves them open, a
+// trailing number of them are dimensions, which the binder itself says.
+func (k *compiler) binds(a *term.Bound, slot term.Slot) []term.Sort {
+	if !slot.Many {
+		return slot.Binds
+	}
+	out := make([]term.Sort, len(a.Hints))
+	for i := len(out) - a.Dimensions; i < len(out); i++ {
+		out[i] = term.DimensionSort
+	}
+	return out
+}
+
+func (k *compiler) abstraction(key term.Arg, body term.Core, binds []term.Sort, hints []string, l *layout, nv, nd int) *Abstraction {
+	if abs, ok := k.seen[seenKey{key, l}]; ok {
+		return abs
+	}
+	abs := &Abstraction{arity: len(binds), hints: hints}
+	inner := &layout{outer: l, abs: abs, variables: map[int]int{}, dimensions: map[int]int{}, size: len(binds)}
+	for s, sort := range binds {
+		if sort == term.DimensionSort {
+			inner.dimensions[nd] = s
+			nd++
+		} else {
+			inner.variables[nv] = s
+			nv++
+		}
+	}
+	abs.body = k.term(body, inner, nv, nd)
+	if k.seen == nil {
+		k.seen = map[seenKey]*Abstraction{}
+	}
+	k.seen[seenKey{key, l}] = abs
+	return abs
+}

@@ -1,0 +1,312 @@
+package prims
+
+import (
+	"example.com/boxwright/nbe/eval"
+	"example.com/boxwright/nbe/term"
+	"example.com/boxwright/value"
+	"example.com/boxwright/value/interval"
+)
+
+// Elimination of data types into a family x.C: one case for each constructor,
+// taking its arguments, an induction hypothesis for each recursive argument,
+// and its dimensions. Eliminators commute with formal composites (CHM 3):
+//
+//	elim (x.C) cases (hcomp D u0 [φ ↦ i.u]) =
+//	  comp (i. C(h(i))) (elim … u0) [φ ↦ i. elim … u],     h = hfill D u0 [φ ↦ i.u]
+
+// Recursion says how a data type occurs in the type of a recursive argument:
+// R ::= D | Π(y:B) R | Π(i:I) R | Path (i.R) a b.
+type Recursion struct {
+	shape recursionShape
+	inner *Recursion
+	// the rules that make the hypothesis and its type under Π
+	hypothesis, hypothesisType *value.Rule
+}
+
+type recursionShape uint8
+
+const (
+	recursionSelf recursionShape = iota
+	recursionPi
+	recursionDimension
+	recursionPath
+)
+
+func newRecursion(shape recursionShape, inner *Recursion) *Recursion {
+	r := &Recursion{shape: shape, inner: inner}
+	r.hypothesis = &value.Rule{Name: "y", Apply: func(run *value.Run, c *value.Captured, y value.Value) value.Value {
+		return run.Force(c.Values[0]).(*Eliminator).hypothesis(run, inner, LaterApply(run, c.Values[1], y))
+	}}
+	r.hypothesisType = &value.Rule{Name: "y", Apply: func(run *value.Run, c *value.Captured, y value.Value) value.Value {
+		return run.Force(c.Values[0]).(*Eliminator).hypothesisType(run, inner, codomainAt(run, c.Values[1], y), LaterApply(run, c.Values[2], y))
+	}}
+	return r
+}
+
+func codomainAt(run *value.Run, t, y value.Value) value.Value {
+	switch t := run.Force(t).(type) {
+	case *Pi:
+		return t.Codomain.Open(run, y)
+	case *PiDimension:
+		return t.Codomain.Open(run, y)
+	case *Path:
+		return t.Line.Open(run, y)
+	default:
+		run.Fault("%T is no type of a recursive argument", t)
+		return nil
+	}
+}
+
+// Eliminator is an elimination without what it eliminates. It is a value, so
+// that closures can capture it.
+type Eliminator struct {
+	data    *Data
+	family  value.Closure
+	cases   []value.Case // by constructor; nil for those that are not given yet
+	step    *stepRule    // for numerals
+	support value.Support
+}
+
+// Support is the union of the parts'.
+func (e *Eliminator) Support() value.Support { return e.support }
+
+func newEliminator(d *Data, family value.Closure, cases []value.Case, step *stepRule) *Eliminator {
+	e := &Eliminator{d, family, cases, step, family.Support()}
+	for _, c := range cases {
+		if c != nil {
+			e.support |= c.Support()
+		}
+	}
+	return e
+}
+
+// Substitute delays s over family and cases.
+func (e *Eliminator) Substitute(run *value.Run, s *value.Subst) value.Value {
+	return e.substitute(run, s)
+}
+
+func (e *Eliminator) substitute(run *value.Run, s *value.Subst) *Eliminator {
+	if e.support&s.Domain() == 0 && !run.Plain.NoSupport {
+		return e
+	}
+	cases := make([]value.Case, len(e.cases))
+	for k, c := range e.cases {
+		if c != nil {
+			cases[k] = c.SubstituteCase(run, s)
+		}
+	}
+	return newEliminator(e.data, e.family.Substitute(run, s), cases, e.step)
+}
+
+// Eliminate eliminates v, on demand; the result may be lazy.
+func (e *Eliminator) Eliminate(run *value.Run, v value.Value) value.Value {
+	v = run.Force(v)
+	switch v := v.(type) {
+	case *value.Neutral:
+		return v.Eliminate(run, &elimFrame{e})
+	case *Formal:
+		return e.composite(run, v)
+	case *Number:
+		if e.step != nil && !run.Plain.NoNumerals {
+			return e.numeral(run, v)
+		}
+	case *Successors:
+		if e.step != nil && e.step.affine && !run.Plain.NoNumerals {
+			run.Step()
+			return successors(e.data, e.step.count.times(v.count), e.Later(run, v.base))
+		}
+	}
+	c, args, ok := shown(run, v)
+	if !ok {
+		run.Fault("elimination of %T", v)
+	}
+	var dims []interval.Dim
+	if con, ok := v.(*Con); ok {
+		dims = con.Dims
+	}
+	return e.onCase(run, c, args, dims)
+}
+
+func (e *Eliminator) onCase(run *value.Run, c *Constructor, args []value.Value, dims []interval.Dim) value.Value {
+	run.Step()
+	if e.cases[c.Index] == nil {
+		run.Fault("the case of %s is not there yet", c.Name)
+	}
+	env := make([]value.Value, 0, 2*len(args)+len(dims))
+	env = append(env, args...)
+	for k, a := range c.Args {
+		if a.Recursive != nil {
+			env = append(env, e.hypothesis(run, a.Recursive, args[k]))
+		}
+	}
+	for _, d := range dims {
+		env = append(env, value.DimensionOf(d))
+	}
+	return e.cases[c.Index].ApplyAll(run, env)
+}
+
+// Later is Eliminate in a cell.
+func (e *Eliminator) Later(run *value.Run, v value.Value) value.Value {
+	return run.Later(e.support|v.Support(), func(run *value.Run) value.Value { return e.Eliminate(run, v) })
+}
+
+// composite commutes the elimination with a formal composite.
+func (e *Eliminator) composite(run *value.Run, v *Formal) value.Value {
+	run.Step()
+	i := run.Fresh(e.support | v.support)
+	h := Hfill(run, i, v.Type, v.Base, v.Walls)
+	walls := v.Walls.Map(run, e.support, 0, func(run *value.Run, _ value.Name, u value.Value, cut *value.Subst) value.Value {
+		if cut == nil {
+			return e.Eliminate(run, u)
+		}
+		return e.substitute(run, cut).Eliminate(run, u)
+	})
+	return Comp(run, i, e.family.Open(run, h), e.Later(run, v.Base), walls)
+}
+
+// hypothesis is the induction hypothesis for an argument: its elimination, at
+// each value of a function, along a path.
+func (e *Eliminator) hypothesis(run *value.Run, r *Recursion, v value.Value) value.Value {
+	switch r.shape {
+	case recursionSelf:
+		return e.Later(run, v)
+	case recursionPath:
+		i := run.Fresh(e.support | v.Support())
+		return over(i, e.hypothesis(run, r.inner, LaterAt(run, v, interval.Var(i))))
+	default:
+		return &Lam{value.NewCaptured(run, value.Captured{Rule: r.hypothesis, Values: []value.Value{e, v}})}
+	}
+}
+
+// hypothesisType is the type of the hypothesis for v, an argument of type t.
+func (e *Eliminator) hypothesisType(run *value.Run, r *Recursion, t, v value.Value) value.Value {
+	if r.shape == recursionSelf {
+		return e.family.Open(run, v)
+	}
+	switch t := run.Force(t).(type) {
+	case *Pi:
+		return &Pi{t.Domain, value.NewCaptured(run, value.Captured{Rule: r.hypothesisType, Values: []value.Value{e, t, v}})}
+	case *PiDimension:
+		return &PiDimension{value.NewCaptured(run, value.Captured{Rule: r.hypothesisType, Values: []value.Value{e, t, v}})}
+	case *Path:
+		i := run.Fresh(e.support | t.Support() | v.Support())
+		line := e.hypothesisType(run, r.inner, t.Line.Open(run, value.DimensionName(i)), LaterAt(run, v, interval.Var(i)))
+		return &Path{&value.Line{I: i, Body: line, Name: "i"}, e.hypothesis(run, r.inner, t.A0), e.hypothesis(run, r.inner, t.A1)}
+	default:
+		run.Fault("%T is no type of a recursive argument", t)
+		return nil
+	}
+}
+
+// binding makes variables and dimensions one after the other: the reader-back's,
+// the comparer's or the checker's.
+type binding interface {
+	Variable(hint string, t value.Value) value.Value
+	Dimension(hint string) value.Name
+}
+
+// caseBinders binds what the case of c takes, at the given parameters, and
+// returns it together with the family at the constructor. name gives the hints.
+func (e *Eliminator) caseBinders(run *value.Run, b binding, c *Constructor, params []value.Value, name func(k int, standard string) string) (env []value.Value, t value.Value) {
+	args := make([]value.Value, len(c.Args))
+	k := 0
+	for n := range c.Args {
+		args[n] = b.Variable(name(k, c.Args[n].Name), c.Args[n].At(run, params, args))
+		k++
+	}
+	env = append(env, args...)
+	for n := range c.Args {
+		if r := c.Args[n].Recursive; r != nil {
+			env = append(env, b.Variable(name(k, "h"), e.hypothesisType(run, r, c.Args[n].At(run, params, args), args[n])))
+			k++
+		}
+	}
+	dims := make([]interval.Dim, len(c.Dims))
+	for n := range c.Dims {
+		i := b.Dimension(name(k, c.Dims[n]))
+		dims[n] = interval.Var(i)
+		env = append(env, value.DimensionName(i))
+		k++
+	}
+	return env, e.family.Open(run, NewCon(run, c, params, args, dims))
+}
+
+type elimFrame struct{ *Eliminator }
+
+func (f *elimFrame) Frontier() (frontier, faces value.Support) { return 0, 0 }
+func (f *elimFrame) Relabel(run *value.Run, s *value.Subst) value.Frame {
+	return &elimFrame{f.substitute(run, s)}
+}
+func (f *elimFrame) Resume(run *value.Run, head value.Value) value.Value {
+	return f.Eliminate(run, head)
+}
+func (f *elimFrame) Type(run *value.Run, _ value.Value, n *value.Neutral) value.Value {
+	return f.family.Open(run, n)
+}
+
+func (f *elimFrame) ReadBack(q value.Quoter, head value.Core, t value.Value) value.Core {
+	run := q.Run()
+	d := run.Force(t).(*DataType)
+	family := q.Variable(f.family.Hint(), d, func(x value.Value) value.Core { return q.Type(f.family.Open(run, x)) })
+	rows := term.Rows{}
+	for k, c := range f.cases {
+		con := f.data.Constructors[k]
+		b := q.Binders(func(b value.Binding) value.Core {
+			env, t := f.caseBinders(run, b, con, d.Params, func(k int, standard string) string { return hint(c.HintAt(k), standard) })
+			return q.Term(t, c.OpenAll(run, env))
+		})
+		b.Dimensions = len(con.Dims)
+		rows = append(rows, []term.Arg{con.reference, b})
+	}
+	return op(elimSig, f.data.eliminator, family, head, rows)
+}
+
+func (f *elimFrame) Same(c value.Comparer, other value.Frame, t value.Value) bool {
+	o, ok := other.(*elimFrame)
+	if !ok || o.data != f.data {
+		return false
+	}
+	run := c.Run()
+	d := run.Force(t).(*DataType)
+	if !c.Variable(f.family.Hint(), d, func(x value.Value) bool {
+		return c.EqualTypes("the family", f.family.Open(run, x), o.family.Open(run, x))
+	}) {
+		return false
+	}
+	for k := range f.cases {
+		con := f.data.Constructors[k]
+		if !c.Binders(func(b value.Binding) bool {
+			env, t := f.caseBinders(run, b, con, d.Params, func(k int, standard string) string { return standard })
+			return c.Terms("the case of "+con.Name, t, f.cases[k].OpenAll(run, env), o.cases[k].OpenAll(run, env))
+		}) {
+			return false
+		}
+	}
+	return true
+}
+
+type elimOp struct{}
+
+func (elimOp) Principal() int { return 2 }
+
+func (elimOp) eliminator(run *value.Run, f eval.Frame, args []eval.Arg) *Eliminator {
+	d := args[0].Payload.(term.Reference).Target.(*Data)
+	cases := make([]value.Case, len(d.Constructors))
+	for _, row := range args[3].Rows {
+		cases[row[0].Payload.(term.Reference).Index] = row[1].CloseAll(run, f)
+	}
+	var step *stepRule
+	if len(args) > 4 {
+		step = args[4].Payload.(stepPayload).stepRule
+	}
+	return newEliminator(d, args[1].Close(run, f), cases, step)
+}
+
+func (o elimOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
+	v := args[2].Eval(run, f)
+	return o.eliminator(run, f, args).Eliminate(run, v)
+}
+
+func (o elimOp) Frame(run *value.Run, f eval.Frame, args []eval.Arg) value.Frame {
+	return &elimFrame{o.eliminator(run, f, args)}
+}

@@ -1,0 +1,118 @@
+package prims
+
+import (
+	"example.com/boxwright/value"
+	"example.com/boxwright/value/interval"
+)
+
+// Fibers, contractibility and equivalences (CCHM 5), as types, and the
+// equivalence between the ends of a line of types (CCHM 7.1).
+//
+//	Fiber (f:T→A) y  = Σ(x:T) Path A y (f x)
+//	Contr X          = Σ(x:X) Π(y:X) Path X x y
+//	Equiv T A        = Σ(f:T→A) Π(y:A) Contr (Fiber f y)
+
+func captured(run *value.Run, r *value.Rule, vs ...value.Value) value.Closure {
+	return value.NewCaptured(run, value.Captured{Rule: r, Values: vs})
+}
+
+// FiberType is the fiber of f : T → A over y.
+func FiberType(run *value.Run, t, a, f, y value.Value) value.Value {
+	return &Sigma{t, captured(run, fiberPath, a, f, y)}
+}
+
+var fiberPath = &value.Rule{Name: "x", Apply: func(run *value.Run, c *value.Captured, x value.Value) value.Value {
+	a, f, y := c.Values[0], c.Values[1], c.Values[2]
+	return &Path{value.Constant{V: a}, y, LaterApply(run, f, x)}
+}}
+
+// ContrType says that X is contractible.
+func ContrType(run *value.Run, x value.Value) value.Value {
+	return &Sigma{x, captured(run, contraction, x)}
+}
+
+var contraction = &value.Rule{Name: "x", Apply: func(run *value.Run, c *value.Captured, center value.Value) value.Value {
+	return &Pi{c.Values[0], captured(run, contractionPath, c.Values[0], center)}
+}}
+
+var contractionPath = &value.Rule{Name: "y", Apply: func(_ *value.Run, c *value.Captured, y value.Value) value.Value {
+	return &Path{value.Constant{V: c.Values[0]}, c.Values[1], y}
+}}
+
+// EquivType is the type of equivalences from T to A.
+func EquivType(run *value.Run, t, a value.Value) value.Value {
+	return &Sigma{&Pi{t, value.Constant{V: a}}, captured(run, isEquivalence, t, a)}
+}
+
+var isEquivalence = &value.Rule{Name: "f", Apply: func(run *value.Run, c *value.Captured, f value.Value) value.Value {
+	t, a := c.Values[0], c.Values[1]
+	return &Pi{a, captured(run, contractibleFiber, t, a, f)}
+}}
+
+var contractibleFiber = &value.Rule{Name: "y", Apply: func(run *value.Run, c *value.Captured, y value.Value) value.Value {
+	return ContrType(run, FiberType(run, c.Values[0], c.Values[1], c.Values[2], y))
+}}
+
+// LineEquiv is the equivalence from L(0) to L(1) along the line i.L, whose map
+// is transport. With
+//
+//	u x i = tfill (i.L(i)) bot x @ i          v y i = transp (j. L(i ∨ ~j)) (i=1) y
+//	b l i = fill (i.L(i)) (v y 0) [(l=0) ↦ i. v y i] [(l=1) ↦ i. u (v y 0) i] @ i
+//	w k i = fill (i.L(~i)) (p @ k) [(k=0) ↦ i. v y (~i)] [(k=1) ↦ i. u x (~i)] @ i,   α k = w k 1
+//
+// the fibers are contractible by
+//
+//	λy. ((v y 0, ⟨l⟩ b l 1), λ(x,p). ⟨k⟩ (α k, ⟨l⟩ comp (i.L(i)) (α (k∧l)) [(l=0) ↦ i. v y i] [(l=1) ↦ i. u (α k) i]
+//	                                                                    [(k=0) ↦ i. b l i] [(k=1) ↦ i. w l (~i)]))
+func LineEquiv(run *value.Run, i value.Name, l value.Value) value.Value {
+	lines := []value.Value{l}
+	return &Pair{
+		&Lam{value.NewCaptured(run, value.Captured{Rule: alongLine, I: i, Line: lines})},
+		&Lam{value.NewCaptured(run, value.Captured{Rule: lineFibers, I: i, Line: lines})},
+	}
+}
+
+var alongLine = &value.Rule{Name: "x", Apply: func(run *value.Run, c *value.Captured, x value.Value) value.Value {
+	return Transp(run, c.I, c.Line[0], interval.Bot(), x)
+}}
+
+var lineFibers = &value.Rule{Name: "y", Apply: func(run *value.Run, c *value.Captured, y value.Value) value.Value {
+	i, line := c.I, c.Line[0]
+	l := run.Fresh(line.Support() | y.Support() | interval.Single(i))
+	v0 := Backward(run, i, line, interval.Bot(), y)
+	end := lineFiberPath(run, i, line, y, v0, l)
+	center := &Pair{v0, over(l, run.At(end, i, interval.One()))}
+	return &Pair{center, &Lam{value.NewCaptured(run, value.Captured{Rule: lineContraction, Values: []value.Value{y}, I: i, Line: c.Line})}}
+}}
+
+// lineFiberPath is b l i, at l and i.
+func lineFiberPath(run *value.Run, i value.Name, line, y, v0 value.Value, l value.Name) value.Value {
+	v := Backfill(run, i, line, interval.Bot(), y)
+	u := Tfill(run, i, line, interval.Bot(), v0)
+	walls := value.System{}.Line(run, interval.Eq0(l), i, v).Line(run, interval.Eq1(l), i, u)
+	return Fill(run, i, line, v0, walls)
+}
+
+var lineContraction = &value.Rule{Name: "p", Apply: func(run *value.Run, c *value.Captured, xp value.Value) value.Value {
+	i, line, y := c.I, c.Line[0], c.Values[0]
+	x, p := LaterFirst(run, xp), LaterSecond(run, xp)
+	used := line.Support() | y.Support() | xp.Support() | interval.Single(i)
+	k := run.Fresh(used)
+	l := run.Fresh(used | interval.Single(k))
+	atK, atL := interval.Var(k), interval.Var(l)
+	flip := interval.Assign(i, interval.Var(i).Rev())
+
+	v := Backfill(run, i, line, interval.Bot(), y) // v y i
+	v0 := Backward(run, i, line, interval.Bot(), y)
+	w := Fill(run, i, run.Substitute(line, flip), LaterAt(run, p, atK), // w k i
+		value.System{}.Line(run, interval.Eq0(k), i, run.Substitute(v, flip)).
+			Line(run, interval.Eq1(k), i, run.Substitute(Tfill(run, i, line, interval.Bot(), x), flip)))
+	alpha := run.At(w, i, interval.One()) // α k
+	walls := value.System{}.
+		Line(run, interval.Eq0(l), i, v).
+		Line(run, interval.Eq1(l), i, Tfill(run, i, line, interval.Bot(), alpha)).
+		Line(run, interval.Eq0(k), i, lineFiberPath(run, i, line, y, v0, l)).
+		Line(run, interval.Eq1(k), i, run.Substitute(run.Substitute(w, interval.Assign(k, atL)), flip))
+	square := LaterComp(run, i, line, run.At(alpha, k, atK.Min(atL)), walls)
+	return over(k, &Pair{alpha, over(l, square)})
+}}

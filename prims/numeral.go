@@ -1,0 +1,249 @@
+package prims
+
+import (
+	"math/big"
+	"math/bits"
+
+	"example.com/boxwright/nbe/eval"
+	"example.com/boxwright/nbe/term"
+	"example.com/boxwright/value"
+)
+
+// Numerals: sucⁿ zero is stored as a number, and sucⁿ x as n + x, so that a
+// number costs its digits. Everything else about natural numbers comes from
+// their declaration (nat.go).
+
+// natural is a natural number: small, or big when big is not nil.
+type natural struct {
+	small uint64
+	big   *big.Int
+}
+
+func naturalOf(b *big.Int) natural {
+	if b.IsUint64() {
+		return natural{small: b.Uint64()}
+	}
+	return natural{big: b}
+}
+
+func (n natural) Int() *big.Int {
+	if n.big != nil {
+		return n.big
+	}
+	return new(big.Int).SetUint64(n.small)
+}
+
+func (n natural) isZero() bool { return n.big == nil && n.small == 0 }
+
+func (n natural) equal(m natural) bool {
+	if n.big == nil || m.big == nil {
+		return n.big == nil && m.big == nil && n.small == m.small
+	}
+	return n.big.Cmp(m.big) == 0
+}
+
+func (n natural) plus(m natural) natural {
+	if n.big == nil && m.big == nil {
+		if sum, carry := bits.Add64(n.small, m.small, 0); carry == 0 {
+			return natural{small: sum}
+		}
+	}
+	return naturalOf(new(big.Int).Add(n.Int(), m.Int()))
+}
+
+func (n natural) times(m natural) natural {
+	if n.big == nil && m.big == nil {
+		if high, low := bits.Mul64(n.small, m.small); high == 0 {
+			return natural{small: low}
+		}
+	}
+	return naturalOf(new(big.Int).Mul(n.Int(), m.Int()))
+}
+
+func (n natural) minus(m natural) natural {
+	if n.big == nil {
+		return natural{small: n.small - m.small}
+	}
+	return naturalOf(new(big.Int).Sub(n.Int(), m.Int()))
+}
+
+func (n natural) less(m natural) bool { return n.Int().Cmp(m.Int()) < 0 }
+
+// price is what a number of this size is charged.
+func (n natural) price() int64 {
+	if n.big == nil {
+		return value.PriceNode
+	}
+	return value.PriceNode + int64(n.big.BitLen()/8)
+}
+
+// Number is sucⁿ zero as a value.
+type Number struct {
+	data *Data
+	n    natural
+}
+
+// Successors is suc^count base, count ≥ 1, as a value.
+type Successors struct {
+	data  *Data
+	count natural
+	base  value.Value
+}
+
+// Support is empty.
+func (n *Number) Support() value.Support { return 0 }
+
+// Substitute changes nothing.
+func (n *Number) Substitute(*value.Run, *value.Subst) value.Value { return n }
+
+// Int is the number. The caller may not change it.
+func (n *Number) Int() *big.Int { return n.n.Int() }
+
+func (n *Number) isZero() bool { return n.n.isZero() }
+
+func (n *Number) predecessor() value.Value { return &Number{n.data, n.n.minus(natural{small: 1})} }
+
+// Support is the base's.
+func (s *Successors) Support() value.Support { return s.base.Support() }
+
+// Substitute delays t over the base.
+func (s *Successors) Substitute(run *value.Run, t *value.Subst) value.Value {
+	return successors(s.data, s.count, run.Substitute(s.base, t))
+}
+
+func (s *Successors) predecessor() value.Value {
+	return successors(s.data, s.count.minus(natural{small: 1}), s.base)
+}
+
+// successors is suc^n v, put together where v is known to be a number.
+func successors(d *Data, n natural, v value.Value) value.Value {
+	if n.isZero() {
+		return v
+	}
+	switch v := value.Peek(v).(type) {
+	case *Number:
+		return &Number{d, v.n.plus(n)}
+	case *Successors:
+		return &Successors{d, v.count.plus(n), v.base}
+	default:
+		return &Successors{d, n, v}
+	}
+}
+
+// counted is v as a number plus a rest; the rest is nil for a numeral.
+func counted(run *value.Run, v value.Value) (n natural, rest value.Value) {
+	for {
+		switch w := run.Force(v).(type) {
+		case *Number:
+			return n.plus(w.n), nil
+		case *Successors:
+			run.Step()
+			n, v = n.plus(w.count), w.base
+		default:
+			return n, w
+		}
+	}
+}
+
+func readNumeral(d *Data, n natural) value.Core {
+	return op(numeralSig, term.Number{Int: n.Int()}, term.Reference{Name: d.Name, Index: -1, Target: d})
+}
+
+// readSuccessors reads suc^n x without nesting the stack.
+func (t *DataType) readSuccessors(q value.Quoter, v *Successors) value.Core {
+	n, rest := counted(q.Run(), v)
+	if rest == nil {
+		return readNumeral(t.Data, n)
+	}
+	core := q.Term(t, rest)
+	suc := t.Data.Constructors[1]
+	for ; !n.isZero(); n = n.minus(natural{small: 1}) {
+		q.Run().Charge(value.PriceNode)
+		core = op(conSig, suc.reference, term.Rows{}, core)
+	}
+	return core
+}
+
+func (t *DataType) sameNumber(c value.Comparer, a, b value.Value) bool {
+	run := c.Run()
+	m, x := counted(run, a)
+	n, y := counted(run, b)
+	if x == nil || y == nil {
+		return x == nil && y == nil && m.equal(n)
+	}
+	return m.equal(n) && c.Terms("the number below the successors", t, x, y)
+}
+
+var numeralSig = &term.Signature{Name: "numeral", Slots: []term.CoreSlot{{}, {Slot: term.Slot{Sort: term.NameSort}, Silent: true}}}
+
+type numeralOp struct{}
+
+func (o numeralOp) Eval(run *value.Run, _ eval.Frame, args []eval.Arg) value.Value {
+	return o.Value(run, args)
+}
+
+func (numeralOp) Value(run *value.Run, args []eval.Arg) value.Value {
+	n := naturalOf(args[0].Payload.(term.Number).Int)
+	run.Charge(n.price())
+	return &Number{args[1].Payload.(term.Reference).Target.(*Data), n}
+}
+
+func numeralFormer() Former {
+	return Former{Name: "numerals", Version: 1, Operators: []Operator{{numeralSig, numeralOp{}}}}
+}
+
+// hcompNumbers is a strict composite of numbers: equal numerals give that
+// numeral, which is what pushing successors would give, and common successors
+// are pushed all at once. ok is false where it is stuck.
+func (t *DataType) hcompNumbers(run *value.Run, base value.Value, walls value.System) (value.Value, bool) {
+	n, rest := countedOne(run, base)
+	sup := t.support
+	rests := make(value.System, len(walls))
+	least := n
+	counts := make([]natural, len(walls))
+	for k, w := range walls {
+		m, r := countedOne(run, w.Body)
+		if m.less(least) {
+			least = m
+		}
+		counts[k] = m
+		rests[k] = value.Wall{Cube: w.Cube, I: w.I, Body: r}
+	}
+	if rest == nil {
+		same := true
+		for k := range walls {
+			same = same && rests[k].Body == nil && counts[k].equal(n)
+		}
+		if same {
+			return &Number{t.Data, n}, true
+		}
+	}
+	if least.isZero() {
+		return nil, false
+	}
+	_ = sup
+	below := func(m natural, r value.Value) value.Value {
+		m = m.minus(least)
+		if r == nil {
+			return &Number{t.Data, m}
+		}
+		return successors(t.Data, m, r)
+	}
+	for k := range walls {
+		rests[k].Body = below(counts[k], rests[k].Body)
+	}
+	return successors(t.Data, least, LaterHcomp(run, t, below(n, rest), rests)), true
+}
+
+// countedOne is v as far as it shows at once: the number, and what is below
+// the successors, not forced further.
+func countedOne(run *value.Run, v value.Value) (natural, value.Value) {
+	switch w := run.Force(v).(type) {
+	case *Number:
+		return w.n, nil
+	case *Successors:
+		return w.count, w.base
+	default:
+		return natural{}, w
+	}
+}

@@ -1,0 +1,207 @@
+// Package quote turns values back into syntax and compares them: reading back
+// to normal forms, the conversion check, and the account of where two values
+// differ. What the formers know of it, they say through value.Quoter and
+// value.Comparer.
+package quote
+
+import (
+	"example.com/boxwright/nbe/term"
+	"example.com/boxwright/value"
+	"example.com/boxwright/value/interval"
+)
+
+// Fold decides which definitions reading back keeps folded.
+type Fold func(g value.Global) bool
+
+// Reader reads values back in a scope. It belongs to one run. Readback keeps
+// sharing: a value that has been read at a type, in a scope, is read once.
+type Reader struct {
+	run        *value.Run
+	variables  int
+	dimensions int
+	fold       Fold
+	memo       map[memoKey]value.Core
+	nodes      int64
+	limit      int64
+}
+
+type memoKey struct {
+	t, v                  value.Value
+	variables, dimensions int
+}
+
+// NewReader reads back in a scope of the given numbers of variables and
+// dimensions; the names of the dimensions in scope are their levels. fold may
+// be nil: every definition is unfolded.
+func NewReader(run *value.Run, variables, dimensions int, fold Fold) *Reader {
+	return &Reader{run: run, variables: variables, dimensions: dimensions, fold: fold, memo: map[memoKey]value.Core{}, limit: run.Budget().Output}
+}
+
+// Run is the run that reading back is charged to.
+func (q *Reader) Run() *value.Run { return q.run }
+
+func (q *Reader) count() {
+	q.nodes++
+	q.run.Charge(value.PriceNode)
+	if q.nodes > q.limit {
+		q.run.Fail(&term.Error{Kind: term.OutOfBudget, Message: "out of budget: the normal form is too large", Detail: q.run.Stats})
+	}
+	if q.nodes%value.PollEvery == 0 {
+		q.run.Poll()
+	}
+}
+
+// folded is the folded form of v, where reading back keeps it.
+func (q *Reader) folded(v value.Value) *value.Neutral {
+	l, ok := v.(*value.Lazy)
+	if !ok || q.fold == nil {
+		return nil
+	}
+	n := l.Fold()
+	if n != nil && q.fold(n.Head().(*value.GlobalHead).Global) {
+		return n
+	}
+	return nil
+}
+
+// Type reads a type back.
+func (q *Reader) Type(v value.Value) (c value.Core) {
+	key := memoKey{nil, v, q.variables, q.dimensions}
+	if c, ok := q.memo[key]; ok {
+		return c
+	}
+	q.run.Down(func() {
+		if n := q.folded(v); n != nil {
+			c = q.Neutral(n)
+			return
+		}
+		q.count()
+		switch t := q.run.Force(v).(type) {
+		case value.Type:
+			c = t.ReadBack(q)
+		case *value.Neutral:
+			c = q.Neutral(t)
+		default:
+			q.run.Fault("%T is read back as a type", t)
+		}
+	})
+	q.memo[key] = c
+	return c
+}
+
+// Term reads v back at type t, η-long.
+func (q *Reader) Term(t, v value.Value) (c value.Core) {
+	key := memoKey{t, v, q.variables, q.dimensions}
+	if c, ok := q.memo[key]; ok {
+		return c
+	}
+	q.run.Down(func() {
+		if n := q.folded(v); n != nil {
+			c = q.Neutral(n)
+			return
+		}
+		q.count()
+		switch t := q.run.Force(t).(type) {
+		case value.Type:
+			c = t.ReadBackElement(q, q.run.Force(v))
+		case *value.Neutral:
+			n, ok := q.run.Force(v).(*value.Neutral)
+			if !ok {
+				q.run.Fault("%T stands in a neutral type", q.run.Force(v))
+			}
+			c = q.Neutral(n)
+		default:
+			q.run.Fault("%T is read back at as a type", t)
+		}
+	})
+	q.memo[key] = c
+	return c
+}
+
+// Neutral reads a neutral back, along its spine.
+func (q *Reader) Neutral(n *value.Neutral) value.Core {
+	c := n.Head().ReadBack(q)
+	if n.Length() == 0 {
+		return c
+	}
+	t := n.Head().Type(q.run)
+	for _, p := range n.Prefixes()[1:] {
+		q.count()
+		before, f := p.Split()
+		c = f.ReadBack(q, c, t)
+		t = f.Type(q.run, t, before)
+	}
+	return c
+}
+
+// Variable goes under the binder of a variable.
+func (q *Reader) Variable(hint string, t value.Value, body func(x value.Value) value.Core) *term.Bound {
+	x := value.NewVariable(q.variables, hint, t)
+	q.variables++
+	c := body(x)
+	q.variables--
+	return &term.Bound{Hints: []string{hint}, Body: c}
+}
+
+// Dimension goes under the binder of a dimension.
+func (q *Reader) Dimension(hint string, body func(i value.Name) value.Core) *term.Bound {
+	i := value.Name(q.dimensions)
+	q.dimensions++
+	c := body(i)
+	q.dimensions--
+	return &term.Bound{Hints: []string{hint}, Body: c, Dimensions: 1}
+}
+
+type readerBinding struct {
+	q     *Reader
+	hints []string
+}
+
+func (b *readerBinding) Variable(hint string, t value.Value) value.Value {
+	x := value.NewVariable(b.q.variables, hint, t)
+	b.q.variables++
+	b.hints = append(b.hints, hint)
+	return x
+}
+
+func (b *readerBinding) Dimension(hint string) value.Name {
+	i := value.Name(b.q.dimensions)
+	b.q.dimensions++
+	b.hints = append(b.hints, hint)
+	return i
+}
+
+// Binders goes under several binders at once.
+func (q *Reader) Binders(body func(b value.Binding) value.Core) *term.Bound {
+	v, d := q.variables, q.dimensions
+	b := &readerBinding{q: q}
+	c := body(b)
+	q.variables, q.dimensions = v, d
+	return &term.Bound{Hints: b.hints, Body: c}
+}
+
+// Walls reads a system back at type t: irredundant, in canonical order, each
+// wall at t on its own face.
+func (q *Reader) Walls(t value.Value, s value.System) term.Rows {
+	walls := s.Irredundant()
+	cubes := make([]interval.Cube, len(walls))
+	for k, w := range walls {
+		cubes[k] = w.Cube
+	}
+	return q.Rows(cubes, func(k int) []term.Arg {
+		w := walls[k]
+		here := q.run.Restrict(t, w.Cube)
+		return []term.Arg{q.Dimension("i", func(i value.Name) value.Core {
+			return q.Term(here, q.run.At(w.Body, w.I, interval.Var(i)))
+		})}
+	})
+}
+
+// Rows reads other systems back; the cubes stand in canonical order.
+func (q *Reader) Rows(cubes []interval.Cube, row func(k int) []term.Arg) term.Rows {
+	rows := make(term.Rows, len(cubes))
+	for k, c := range cubes {
+		rows[k] = append([]term.Arg{&term.Face{Face: c.Face()}}, row(k)...)
+	}
+	return rows
+}

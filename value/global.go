@@ -1,0 +1,175 @@
+package value
+
+import "example.com/boxwright/nbe/term"
+
+// Global is a definition or an assumption as evaluation sees it. Its methods
+// are safe for concurrent use.
+type Global interface {
+	GlobalName() string
+	// TypeValue is its type.
+	TypeValue(run *Run) Value
+	// Unfold is its value: for an assumption the neutral itself.
+	Unfold(run *Run) Value
+	// Folded is what stands for it where nobody needs its value yet: a cell
+	// with a folded form, or the neutral of an assumption.
+	Folded(run *Run) Value
+}
+
+// Unfolder decides for a run how globals unfold, where a call keeps some of
+// them opaque.
+type Unfolder interface {
+	Unfold(run *Run, g Global) Value
+	Folded(run *Run, g Global) Value
+}
+
+// Unfold is the value of a global in this run.
+func (r *Run) Unfold(g Global) Value {
+	r.Unfolded++
+	if d, ok := r.solutions[g]; ok {
+		g = d
+	}
+	if r.unfold != nil {
+		return r.unfold.Unfold(r, g)
+	}
+	return g.Unfold(r)
+}
+
+// Folded is a global that nobody needs the value of yet.
+func (r *Run) Folded(g Global) Value {
+	if d, ok := r.solutions[g]; ok {
+		g = d
+	}
+	if r.unfold != nil {
+		return r.unfold.Folded(r, g)
+	}
+	return g.Folded(r)
+}
+
+// Fold is the cell of a definition under eliminations: n, headed by a global,
+// is what it prints and compares as; its work unfolds the global and resumes
+// the eliminations.
+func (r *Run) Fold(n *Neutral) *Lazy {
+	w := &foldWork{n: n}
+	l := r.NewLazy(n.support, &w.Pending, w)
+	l.fold = n
+	return l
+}
+
+type foldWork struct {
+	Pending
+	n *Neutral
+}
+
+func (w *foldWork) Do(run *Run) Value {
+	run.Step()
+	v := run.Unfold(w.n.head.(*GlobalHead).Global)
+	for _, f := range w.n.Frames() {
+		v = f.Resume(run, v)
+	}
+	return v
+}
+
+// GlobalHead is a global that is not unfolded: an assumption, an opaque
+// definition, or any definition in its folded form.
+type GlobalHead struct{ Global Global }
+
+// Support is empty: globals are closed.
+func (h *GlobalHead) Support() Support { return 0 }
+
+// Frontier is empty.
+func (h *GlobalHead) Frontier() (frontier, faces Support) { return 0, 0 }
+
+// Relabel changes nothing.
+func (h *GlobalHead) Relabel(*Run, *Subst) Head { return h }
+
+// Recompute changes nothing.
+func (h *GlobalHead) Recompute(*Run, *Subst) Value { return NewNeutral(h) }
+
+// ReadBack is the global's name.
+func (h *GlobalHead) ReadBack(Quoter) Core { return &term.Global{Name: h.Global.GlobalName()} }
+
+// Type is the global's.
+func (h *GlobalHead) Type(run *Run) Value { return h.Global.TypeValue(run) }
+
+// Same holds for the same global.
+func (h *GlobalHead) Same(_ Comparer, other Head) bool {
+	o, ok := other.(*GlobalHead)
+	return ok && o.Global == h.Global
+}
+
+// VariableHead is a variable of a scope, by level, with its type. A
+// substitution of dimensions changes the type alone.
+type VariableHead struct {
+	Level int
+	Of    Value // its type
+	Name  string
+}
+
+// NewVariable is a variable as a value.
+func NewVariable(level int, name string, t Value) *Neutral {
+	return NewNeutral(&VariableHead{level, t, name})
+}
+
+// Support is that of its type.
+func (h *VariableHead) Support() Support { return h.Of.Support() }
+
+// Frontier is empty: no substitution of dimensions makes a variable compute.
+func (h *VariableHead) Frontier() (frontier, faces Support) { return 0, 0 }
+
+// Relabel substitutes in the type.
+func (h *VariableHead) Relabel(run *Run, s *Subst) Head {
+	return &VariableHead{h.Level, run.Substitute(h.Of, s), h.Name}
+}
+
+// Recompute substitutes in the type.
+func (h *VariableHead) Recompute(run *Run, s *Subst) Value { return NewNeutral(h.Relabel(run, s)) }
+
+// Type is its type.
+func (h *VariableHead) Type(*Run) Value { return h.Of }
+
+// ReadBack is the variable's level.
+func (h *VariableHead) ReadBack(Quoter) Core { return &term.Variable{Level: h.Level} }
+
+// Same holds for the same level.
+func (h *VariableHead) Same(_ Comparer, other Head) bool {
+	o, ok := other.(*VariableHead)
+	return ok && o.Level == h.Level
+}
+
+// refresh is v, computed further where it is a neutral that was stuck on an
+// assumption or a hole which has become a definition since. The result is kept
+// for this run alone: others may not have the definition.
+func (r *Run) refresh(v Value) Value {
+	n, ok := v.(*Neutral)
+	if !ok {
+		return v
+	}
+	if w, ok := r.refreshed[n]; ok {
+		return w
+	}
+	if r.refreshed == nil {
+		r.refreshed = map[*Neutral]Value{}
+	}
+	r.refreshed[n] = n // what asks again on the way sees it as it is
+	var w Value
+	if h, ok := n.head.(*GlobalHead); ok {
+		w = n
+		if _, solved := r.solutions[h.Global]; solved {
+			w = r.resume(n, r.Unfold(h.Global))
+		}
+	} else if w = n.head.Recompute(r, nil); n.length > 0 {
+		w = r.resume(n, w)
+	}
+	if l, ok := w.(*Lazy); ok {
+		w = r.Force(l)
+	}
+	r.refreshed[n] = w
+	return w
+}
+
+func (r *Run) resume(n *Neutral, v Value) Value {
+	for _, f := range n.Frames() {
+		v = f.Resume(r, v)
+	}
+	return v
+}

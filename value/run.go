@@ -1,0 +1,280 @@
+package value
+
+import (
+	"context"
+	"fmt"
+	"math/rand/v2"
+	"sync/atomic"
+
+	"example.com/boxwright/nbe/term"
+	"example.com/boxwright/value/interval"
+)
+
+// Budget bounds one run. Every field is a plain number; a run is stopped with
+// an out-of-budget error as soon as one is passed.
+type Budget struct {
+	Steps  int64 // β, eliminations, Kan rules, unfoldings
+	Depth  int64 // nesting of evaluation, in levels
+	Memory int64 // bytes, charged at the fixed prices below
+	Output int64 // nodes of a normal form, as a shared graph
+}
+
+// Prices at which memory is charged, in bytes. They are what the allocations
+// take on a 64-bit machine, rounded up, and stay fixed so that a budget means
+// the same everywhere.
+const (
+	PriceLazy    = 128
+	PriceClosure = 96
+	PriceNode    = 64
+)
+
+// PollEvery is how many steps pass between two looks at the context.
+const PollEvery = 1024
+
+// HopEvery is how many levels of nesting stand on one goroutine's stack; the
+// next level continues on a fresh one. A level takes at most about 3 kB (with
+// the race detector and without optimisation), so one stack stays below 64 MB.
+const HopEvery = 20_000
+
+// Plain switches the engine's shortcuts off, for the plain evaluator that the
+// fast one is tested against. The zero value is the fast evaluator.
+type Plain struct {
+	NoSupport  bool // substitutions are made also where the support says they change nothing
+	NoSharing  bool // a lazy cell is evaluated anew each time it is forced
+	Eager      bool // substitutions are pushed as soon as they are made
+	NoFrontier bool // every substitution that meets a neutral recomputes it
+	NoNumerals bool // a numeral is eliminated step by step
+}
+
+// Stats counts what a run did. For the same calls on a fresh engine the counts
+// are the same on every run and machine.
+type Stats struct {
+	Steps         int64
+	Substitutions int64 // delayed over a value
+	Skipped       int64 // answered by the support
+	Pushed        int64 // pushed one constructor down
+	Relabelled    int64 // neutrals that a substitution could not unstick
+	Lazies        int64 // lazy cells made
+	Forced        int64 // lazy cells evaluated
+	Composites    int64 // hcomp rules
+	Transports    int64 // transp rules
+	Unfolded      int64 // definitions unfolded
+	Identical     int64 // comparisons answered by identity
+	Deepest       int64 // deepest nesting
+	Memory        int64 // bytes charged
+}
+
+// Run is one call's budget and counters, handed to everything that computes.
+// It belongs to one call and is not safe for concurrent use.
+type Run struct {
+	Stats
+	Plain  Plain
+	budget Budget
+	ctx    context.Context
+	check  int64 // the step at which to look at budget and context again
+	depth  int64
+	limit  int64 // the depth at which to hop or stop
+	high   *atomic.Int32
+	draw   *rand.Rand // names drawn at random, a hook for tests
+	unfold Unfolder
+	// solutions are the assumptions and holes that have become definitions
+	// since values were made that are stuck on them
+	solutions map[Global]Global
+	refreshed map[*Neutral]Value
+	stack  [][]Value // segments of call frames
+	top    []Value   // what is left of the current segment
+}
+
+// Settings are what a run is made with.
+type Settings struct {
+	Context context.Context
+	Budget  Budget
+	Plain   Plain
+	High    *atomic.Int32 // supply of names beyond the low ones; shared by all runs of an engine
+	Unfold  Unfolder
+	// Solutions sends assumptions and holes to the definitions that have replaced them.
+	Solutions map[Global]Global
+	// Draw, if not nil, makes fresh names random among the free ones instead of the lowest.
+	Draw *rand.Rand
+}
+
+// NewRun begins a run.
+func NewRun(s Settings) *Run {
+	if s.Context == nil {
+		s.Context = context.Background()
+	}
+	if s.High == nil {
+		s.High = new(atomic.Int32)
+		s.High.Store(64)
+	}
+	r := &Run{Plain: s.Plain, budget: s.Budget, ctx: s.Context, high: s.High, unfold: s.Unfold, draw: s.Draw, solutions: s.Solutions}
+	r.limit = min(HopEvery, r.budget.Depth)
+	r.check = min(PollEvery, r.budget.Steps)
+	return r
+}
+
+// Budget is what the run may spend.
+func (r *Run) Budget() Budget { return r.budget }
+
+// Abort is what a run panics with to leave; the entry points of the engine
+// recover it. Nothing else of this module panics on purpose.
+type Abort struct{ Err *term.Error }
+
+// Fail leaves the run with an error.
+func (r *Run) Fail(err *term.Error) { panic(&Abort{err}) }
+
+// Unsupported leaves the run with an error of that kind.
+func (r *Run) Unsupported(what string) Value {
+	panic(&Abort{&term.Error{Kind: term.Unsupported, Message: what + " is not supported"}})
+}
+
+// Fault leaves the run with an internal error: an invariant does not hold.
+func (r *Run) Fault(format string, args ...any) {
+	panic(&Abort{&term.Error{Kind: term.Internal, Message: fmt.Sprintf(format, args...)}})
+}
+
+// Step counts one step and, now and then, looks at the budget and the context.
+func (r *Run) Step() {
+	r.Steps++
+	if r.Steps >= r.check {
+		r.poll()
+	}
+}
+
+//go:noinline
+func (r *Run) poll() {
+	if r.Steps >= r.budget.Steps {
+		r.over("steps", r.budget.Steps)
+	}
+	if err := r.ctx.Err(); err != nil {
+		r.Fail(&term.Error{Kind: term.Cancelled, Message: "cancelled", Cause: context.Cause(r.ctx)})
+	}
+	r.check = min(r.Steps+PollEvery, r.budget.Steps)
+}
+
+// Poll looks at the context at once; entry points call it first.
+func (r *Run) Poll() { r.poll() }
+
+func (r *Run) over(what string, limit int64) {
+	r.Fail(&term.Error{Kind: term.OutOfBudget, Message: "out of budget", WantText: fmt.Sprintf("at most %d %s", limit, what), GotText: "more", Detail: r.Stats})
+}
+
+// Charge counts memory at a fixed price.
+func (r *Run) Charge(bytes int64) {
+	r.Memory += bytes
+	if r.Memory > r.budget.Memory {
+		r.over("bytes", r.budget.Memory)
+	}
+}
+
+// Enter counts one level of nesting. Where it returns true the caller must
+// continue inside Hop; either way it calls Leave when it is done.
+func (r *Run) Enter() bool {
+	r.depth++
+	return r.depth >= r.limit
+}
+
+// Leave ends a level of nesting.
+func (r *Run) Leave() { r.depth-- }
+
+// Hop continues on a fresh goroutine, so that no stack grows beyond HopEvery
+// levels, or stops the run where its nesting is used up.
+func (r *Run) Hop(f func()) {
+	if r.depth >= r.budget.Depth {
+		r.over("levels of nesting", r.budget.Depth)
+	}
+	r.Poll()
+	r.Deepest = max(r.Deepest, r.depth)
+	limit := r.limit
+	r.limit = min(r.depth+HopEvery, r.budget.Depth)
+	var thrown any
+	done := make(chan struct{})
+	go func() {
+		defer close(done)
+		defer func() { thrown = recover() }()
+		f()
+	}()
+	<-done
+	r.limit = limit
+	if thrown != nil {
+		panic(thrown)
+	}
+}
+
+// Down runs f one level deeper, wherever that is.
+func (r *Run) Down(f func()) {
+	if r.Enter() {
+		r.Hop(f)
+	} else {
+		f()
+	}
+	r.Leave()
+}
+
+// Fresh is a dimension's name outside avoid: the lowest, so that names stay
+// small and supports stay exact.
+func (r *Run) Fresh(avoid Support) Name {
+	if r.draw != nil {
+		if n := Name(r.draw.IntN(63)); !avoid.Has(n) {
+			return n
+		}
+	}
+	if n, ok := avoid.Lowest(); ok {
+		return n
+	}
+	return Name(r.high.Add(1))
+}
+
+// frameSegment is how many slots of call frames are allocated together.
+const frameSegment = 1024
+
+// Frame returns n slots for a call frame, to be given back with Release in the
+// opposite order. Nothing may keep a frame after its release.
+func (r *Run) Frame(n int) []Value {
+	if len(r.top) < n {
+		r.stack = append(r.stack, r.top)
+		r.top = make([]Value, max(frameSegment, n))
+	}
+	f := r.top[:n:n]
+	r.top = r.top[n:]
+	return f
+}
+
+// FrameMark remembers the state of the frames for Release.
+type FrameMark struct {
+	top      []Value
+	segments int
+}
+
+// Mark returns the present state of the frames.
+func (r *Run) Mark() FrameMark { return FrameMark{r.top, len(r.stack)} }
+
+// Release gives back every frame taken since the mark.
+func (r *Run) Release(m FrameMark) {
+	r.top = m.top
+	r.stack = r.stack[:m.segments]
+}
+
+// Pass refuses a form where the interval's algebra has grown too large.
+func recoverSize(thrown any) (*term.Error, bool) {
+	e, ok := thrown.(*interval.SizeError)
+	if !ok {
+		return nil, false
+	}
+	return &term.Error{Kind: term.OutOfBudget, Message: e.Error(), Cause: e}, true
+}
+
+// ErrorOf turns what a run panicked with into an error value. What is neither
+// an Abort nor a size error of the interval becomes an internal fault.
+func ErrorOf(thrown any) *term.Error {
+	switch t := thrown.(type) {
+	case *Abort:
+		return t.Err
+	case error:
+		if e, ok := recoverSize(t); ok {
+			return e
+		}
+		return &term.Error{Kind: term.Internal, Message: "internal fault", Cause: t}
+	}
+	return &term.Error{Kind: term.Internal, Message: fmt.Sprintf("internal fault: %v", thrown)}
+}
