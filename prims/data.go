@@ -48,6 +48,10 @@ type Constructor struct {
 	reference term.Reference
 }
 
+// Dimensions is the number of the constructor's dimensions, for the writer of
+// its cases, which does not know declarations.
+func (k *Constructor) Dimensions(int) int { return len(k.Dims) }
+
 // Boundary is one wall of a path constructor's boundary: on the cube, over the
 // dimensions numbered from 0, the element over parameters, arguments and dimensions.
 type Boundary struct {
@@ -295,7 +299,7 @@ var (
 	dataSig       = &term.Signature{Name: "data", Slots: []term.CoreSlot{referenceSlot, restSlot}}
 	conSig        = &term.Signature{Name: "con", Slots: []term.CoreSlot{referenceSlot, paramsSlot, restSlot}}
 	elimSig       = &term.Signature{Name: "elim", Word: "elim", Slots: []term.CoreSlot{
-		{Slot: term.Slot{Sort: term.NameSort}, Silent: true}, boundSlot, plainSlot,
+		{Slot: term.Slot{Sort: term.NameSort}, Silent: true}, paramsSlot, boundSlot, plainSlot,
 		{Slot: term.Slot{Rows: []term.Slot{{Sort: term.NameSort}, {Many: true}}}},
 	}}
 )

@@ -113,7 +113,7 @@ func (e *Eliminator) Eliminate(run *value.Run, v value.Value) value.Value {
 	case *Successors:
 		if e.step != nil && e.step.affine && !run.Plain.NoNumerals {
 			run.Step()
-			return successors(e.data, e.step.count.times(v.count), e.Later(run, v.base))
+			return successors(e.data, e.step.count.times(v.count), run.Force(e.Eliminate(run, v.base)))
 		}
 	}
 	c, args, ok := shown(run, v)
@@ -258,7 +258,7 @@ func (f *elimFrame) ReadBack(q value.Quoter, head value.Core, t value.Value) val
 		b.Dimensions = len(con.Dims)
 		rows = append(rows, []term.Arg{con.reference, b})
 	}
-	return op(elimSig, f.data.eliminator, family, head, rows)
+	return op(elimSig, f.data.eliminator, term.Rows{}, family, head, rows)
 }
 
 func (f *elimFrame) Same(c value.Comparer, other value.Frame, t value.Value) bool {
@@ -287,23 +287,23 @@ func (f *elimFrame) Same(c value.Comparer, other value.Frame, t value.Value) boo
 
 type elimOp struct{}
 
-func (elimOp) Principal() int { return 2 }
+func (elimOp) Principal() int { return 3 }
 
 func (elimOp) eliminator(run *value.Run, f eval.Frame, args []eval.Arg) *Eliminator {
 	d := args[0].Payload.(term.Reference).Target.(*Data)
 	cases := make([]value.Case, len(d.Constructors))
-	for _, row := range args[3].Rows {
+	for _, row := range args[4].Rows {
 		cases[row[0].Payload.(term.Reference).Index] = row[1].CloseAll(run, f)
 	}
 	var step *stepRule
-	if len(args) > 4 {
-		step = args[4].Payload.(stepPayload).stepRule
+	if len(args) > 5 {
+		step = args[5].Payload.(stepPayload).stepRule
 	}
-	return newEliminator(d, args[1].Close(run, f), cases, step)
+	return newEliminator(d, args[2].Close(run, f), cases, step)
 }
 
 func (o elimOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
-	v := args[2].Eval(run, f)
+	v := args[3].Eval(run, f)
 	return o.eliminator(run, f, args).Eliminate(run, v)
 }
 

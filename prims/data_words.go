@@ -155,7 +155,7 @@ func inferElim(c value.Checker, w *term.Written) (value.Core, value.Value) {
 		e.support |= body.Support()
 		rows = append(rows, []term.Arg{con.reference, b})
 	}
-	return op(elimSig, d.eliminator, family, scrutinee, rows), e.family.Open(run, c.Value(scrutinee))
+	return op(elimSig, d.eliminator, term.Rows{}, family, scrutinee, rows), e.family.Open(run, c.Value(scrutinee))
 }
 
 // arrangeCases puts the cases into the order of the declaration; each must

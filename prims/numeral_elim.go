@@ -28,7 +28,7 @@ func (elimOp) Prepare(c *term.Op, variables int) (term.Arg, bool) {
 		return nil, false
 	}
 	var step *term.Bound
-	for _, row := range c.Args[3].(term.Rows) {
+	for _, row := range c.Args[4].(term.Rows) {
 		if row[0].(term.Reference).Index == 1 {
 			step = row[1].(*term.Bound)
 		}
@@ -38,7 +38,7 @@ func (elimOp) Prepare(c *term.Op, variables int) (term.Arg, bool) {
 	}
 	h := variables + 1 // the predecessor, then the hypothesis
 	rule := &stepRule{strict: demands(step.Body, h)}
-	if family, ok := c.Args[1].(*term.Bound).Body.(*term.Op); ok && family.Sig == dataSig && family.Args[0].(term.Reference).Target == any(d) {
+	if family, ok := c.Args[2].(*term.Bound).Body.(*term.Op); ok && family.Sig == dataSig && family.Args[0].(term.Reference).Target == any(d) {
 		body := step.Body
 		for {
 			con, ok := body.(*term.Op)
@@ -68,7 +68,7 @@ func demands(c term.Core, level int) bool {
 			case applySig, firstSig, secondSig, atSig:
 				c = x.Args[0].(term.Core)
 			case elimSig:
-				c = x.Args[2].(term.Core)
+				c = x.Args[3].(term.Core)
 			default:
 				return false
 			}
@@ -84,7 +84,8 @@ func (e *Eliminator) numeral(run *value.Run, v *Number) value.Value {
 		run.Step()
 		n := e.step.count.times(v.n)
 		run.Charge(n.price())
-		return successors(e.data, n, e.cases[0].ApplyAll(run, nil))
+		// the base is forced, so that sums of sums are numbers and no chains
+		return successors(e.data, n, run.Force(e.cases[0].ApplyAll(run, nil)))
 	}
 	if v.n.big != nil || v.n.small == 0 {
 		// from a number that large nothing is reached step by step

@@ -191,7 +191,7 @@ func (q *Reader) Walls(t value.Value, s value.System) term.Rows {
 	return q.Rows(cubes, func(k int) []term.Arg {
 		w := walls[k]
 		here := q.run.Restrict(t, w.Cube)
-		return []term.Arg{q.Dimension("i", func(i value.Name) value.Core {
+		return []term.Arg{q.Dimension("j", func(i value.Name) value.Core {
 			return q.Term(here, q.run.At(w.Body, w.I, interval.Var(i)))
 		})}
 	})

@@ -270,3 +270,19 @@ func (k *compiler) abstraction(key term.Arg, body term.Core, binds []term.Sort, 
 	k.seen[seenKey{key, l}] = abs
 	return abs
 }
+
+// CompileCase compiles a body under binders, in a scope of nv variables and nd
+// dimensions, as a case that has captured the values vs of the listed levels:
+// the variables, then the dimensions.
+func CompileCase(run *value.Run, r Resolver, b *term.Bound, sorts []term.Sort, nv, nd int, variables, dimensions []int, vs []value.Value) value.Case {
+	k := &compiler{run: run, r: r}
+	outer := &layout{abs: &Abstraction{}, variables: map[int]int{}, dimensions: map[int]int{}}
+	for s, level := range variables {
+		outer.variables[level] = s
+	}
+	for s, level := range dimensions {
+		outer.dimensions[level] = len(variables) + s
+	}
+	abs := k.abstraction(b, b.Body, sorts, b.Hints, outer, nv, nd)
+	return caseClosure{abs.close(run, vs)}
+}

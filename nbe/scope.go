@@ -1,0 +1,324 @@
+package nbe
+
+import (
+	"context"
+	"strings"
+
+	"example.com/boxwright/nbe/eval"
+	"example.com/boxwright/nbe/term"
+	"example.com/boxwright/prims"
+	"example.com/boxwright/quote"
+	"example.com/boxwright/value"
+	"example.com/boxwright/value/interval"
+)
+
+// Scope is a typing context over an engine: variables, dimensions and face
+// assumptions. It is immutable: adding to it gives a new scope. It owns its
+// variables, and terms and values of one scope are refused by another
+// (WrongScope). Safe for concurrent use.
+type Scope struct {
+	e     *Engine
+	cases []*scopeContext // one for each conjunction of what is assumed
+}
+
+// Scope returns the empty scope of the engine.
+func (e *Engine) Scope() *Scope { return &Scope{e, []*scopeContext{newContext()}} }
+
+func (x *scopeContext) clone() *scopeContext {
+	y := *x
+	y.variables = append([]variable(nil), x.variables...)
+	y.dimensions = append([]dimension(nil), x.dimensions...)
+	y.names = make(map[string][]bound, len(x.names))
+	for name, list := range x.names {
+		y.names[name] = append([]bound(nil), list...)
+	}
+	return &y
+}
+
+// Variable returns the scope with one more variable, of type ty.
+func (s *Scope) Variable(ctx context.Context, name string, ty *term.Written, options ...CallOption) (*Scope, error) {
+	out := &Scope{e: s.e}
+	err := s.e.call(ctx, gather(options), func(run *value.Run) {
+		for _, x := range s.cases {
+			x = x.clone()
+			c := s.e.checker(run, x)
+			c.binder(term.Binder{Name: name})
+			core, _ := c.Type(ty)
+			t := c.Value(core)
+			x.pushVariable(name, t, value.NewVariable(len(x.variables), name, t))
+			out.cases = append(out.cases, x)
+		}
+	})
+	if err != nil {
+		return nil, err
+	}
+	return out, nil
+}
+
+// Dimension returns the scope with one more dimension.
+func (s *Scope) Dimension(name string) (*Scope, error) {
+	if err := s.e.name(name, term.Place{}); err != nil {
+		return nil, err
+	}
+	out := &Scope{e: s.e}
+	for _, x := range s.cases {
+		x = x.clone()
+		x.pushDimension(name, interval.Var(value.Name(len(x.dimensions))))
+		out.cases = append(out.cases, x)
+	}
+	return out, nil
+}
+
+// Assume returns the scope on a face. With several conjunctions, what is
+// checked and compared later must hold under each, and normalising gives one
+// form for each; under bot everything is equal and there are no forms.
+func (s *Scope) Assume(ctx context.Context, face *term.Written, options ...CallOption) (*Scope, error) {
+	out := &Scope{e: s.e}
+	err := s.e.call(ctx, gather(options), func(run *value.Run) {
+		for _, x := range s.cases {
+			c := s.e.checker(run, x.clone())
+			f := c.Face(face)
+			for k := range f.Len() {
+				if cube := f.Cube(k); cube.IsTop() {
+					out.cases = append(out.cases, c.scopeContext)
+				} else {
+					out.cases = append(out.cases, c.restricted(run, cube))
+				}
+			}
+		}
+	})
+	if err != nil {
+		return nil, err
+	}
+	return out, nil
+}
+
+// Term is a term that has been checked in a scope: its core and its type, for
+// each conjunction of what the scope assumes. Immutable, safe for concurrent use.
+type Term struct {
+	scope *Scope
+	cases []termCase
+}
+
+type termCase struct {
+	core term.Core
+	t    value.Value
+	v    value.Value
+}
+
+func (s *Scope) newTerm(run *value.Run, each func(c *checker) (term.Core, value.Value)) *Term {
+	out := &Term{scope: s}
+	for _, x := range s.cases {
+		c := s.e.checker(run, x.clone())
+		core, t := each(c)
+		out.cases = append(out.cases, termCase{core, t, c.Value(core)})
+	}
+	return out
+}
+
+// Check elaborates w at the type ty, which is checked first.
+func (s *Scope) Check(ctx context.Context, w, ty *term.Written, options ...CallOption) (t *Term, err error) {
+	err = s.e.call(ctx, gather(options), func(run *value.Run) {
+		t = s.newTerm(run, func(c *checker) (term.Core, value.Value) {
+			tc, _ := c.Type(ty)
+			tv := c.Value(tc)
+			return c.Check(w, tv), tv
+		})
+	})
+	return t, err
+}
+
+// CheckAt elaborates w at a type that has been checked in the same scope.
+func (s *Scope) CheckAt(ctx context.Context, w *term.Written, ty *Term, options ...CallOption) (t *Term, err error) {
+	if err := s.owns(ty); err != nil {
+		return nil, err
+	}
+	err = s.e.call(ctx, gather(options), func(run *value.Run) {
+		k := 0
+		t = s.newTerm(run, func(c *checker) (term.Core, value.Value) {
+			tv := ty.cases[k].v
+			s.isType(run, ty.cases[k].t)
+			k++
+			return c.Check(w, tv), tv
+		})
+	})
+	return t, err
+}
+
+func (s *Scope) isType(run *value.Run, t value.Value) {
+	if _, ok := run.Force(t).(*prims.Universe); !ok {
+		run.Fail(&term.Error{Kind: term.IllTyped, Message: "this is no type", WantText: "a type"})
+	}
+}
+
+// Infer elaborates w and infers its type.
+func (s *Scope) Infer(ctx context.Context, w *term.Written, options ...CallOption) (t *Term, err error) {
+	err = s.e.call(ctx, gather(options), func(run *value.Run) {
+		t = s.newTerm(run, func(c *checker) (term.Core, value.Value) { return c.Infer(w) })
+	})
+	return t, err
+}
+
+func (s *Scope) owns(ts ...*Term) error {
+	for _, t := range ts {
+		if t == nil || t.scope != s {
+			return &term.Error{Kind: term.WrongScope, Message: "the term belongs to another scope"}
+		}
+	}
+	return nil
+}
+
+// Core is the elaborated core term; under an assumption of several
+// conjunctions that of the first, and nil under bot.
+func (t *Term) Core() term.Core {
+	if len(t.cases) == 0 {
+		return nil
+	}
+	return t.cases[0].core
+}
+
+// Cores are the elaborated core terms, one for each conjunction.
+func (t *Term) Cores() []term.Core {
+	out := make([]term.Core, len(t.cases))
+	for k, c := range t.cases {
+		out[k] = c.core
+	}
+	return out
+}
+
+// Scope is the scope that t belongs to.
+func (t *Term) Scope() *Scope { return t.scope }
+
+// Form is a term that was read back, with its type and the face it is under.
+type Form struct {
+	Face  interval.Face
+	Term  term.Core
+	Type  term.Core
+	names term.Names
+	dims  []string
+}
+
+// Written is the form as a written term.
+func (f *Form) Written() (*term.Written, error) { return term.Write(f.Term, f.names) }
+
+// WrittenType is the form's type as a written term.
+func (f *Form) WrittenType() (*term.Written, error) { return term.Write(f.Type, f.names) }
+
+// String is the form as text, or what keeps it from being written.
+func (f *Form) String() string {
+	w, err := f.Written()
+	if err != nil {
+		return "(" + err.Error() + ")"
+	}
+	return w.String()
+}
+
+func (s *Scope) names(x *scopeContext, limits Limits) term.Names {
+	return term.Names{Variables: x.variableNames(), Dimensions: x.dimensionNames(), Taken: s.e.notation.Taken, Size: int(limits.or(s.e.limits).Text)}
+}
+
+// Write is a core term of this scope as a written one.
+func (s *Scope) Write(c term.Core) (*term.Written, error) {
+	if len(s.cases) == 0 {
+		return term.Write(c, term.Names{Taken: s.e.notation.Taken})
+	}
+	return term.Write(c, s.names(s.cases[0], Limits{}))
+}
+
+func (o *callOptions) fold() quote.Fold {
+	switch {
+	case o.keepAll:
+		return keepAll
+	case len(o.keep) > 0:
+		return func(g value.Global) bool { return o.keep[g.GlobalName()] }
+	}
+	return nil
+}
+
+// Normal is the full η-long normal form of t, one for each conjunction of what
+// the scope assumes. With Folded, AllFolded or Opaque, definitions stay.
+func (s *Scope) Normal(ctx context.Context, t *Term, options ...CallOption) (forms []Form, err error) {
+	return s.forms(ctx, t, gather(options), func(q *quote.Reader, t, v value.Value) term.Core { return q.Term(t, v) })
+}
+
+func (s *Scope) forms(ctx context.Context, t *Term, o *callOptions, read func(q *quote.Reader, t, v value.Value) term.Core) (forms []Form, err error) {
+	if err := s.owns(t); err != nil {
+		return nil, err
+	}
+	err = s.e.call(ctx, o, func(run *value.Run) {
+		for k, x := range s.cases {
+			c := t.cases[k]
+			v := c.v
+			if len(o.opaque) > 0 {
+				v = s.e.evaluate(run, c.core, x)
+			}
+			q := quote.NewReader(run, len(x.variables), len(x.dimensions), o.fold())
+			forms = append(forms, Form{Face: x.face, Term: read(q, c.t, v), Type: q.Type(c.t), names: s.names(x, o.limits), dims: x.dimensionNames()})
+		}
+	})
+	if err != nil {
+		return nil, err
+	}
+	return forms, nil
+}
+
+func (e *Engine) evaluate(run *value.Run, core term.Core, x *scopeContext) value.Value {
+	variables, dimensions, vs := free(core, x.env, len(x.variables), len(x.dimensions))
+	return eval.Compile(run, e, core, len(x.variables), len(x.dimensions), variables, dimensions).Eval(run, vs)
+}
+
+// Head is t reduced to its outermost constructor only, one form for each
+// conjunction: what stands below is left as it was, definitions folded.
+func (s *Scope) Head(ctx context.Context, t *Term, options ...CallOption) ([]Form, error) {
+	return s.forms(ctx, t, gather(options), func(q *quote.Reader, t, v value.Value) term.Core { return q.Head(t, v) })
+}
+
+// faceText is a face with the names of a scope.
+func faceText(f interval.Face, names []string) string {
+	if f.IsTop() {
+		return "top"
+	}
+	var cubes []string
+	for k := range f.Len() {
+		var parts []string
+		for _, a := range f.Cube(k).Assignments() {
+			name := "?"
+			if int(a.Name) < len(names) {
+				name = names[a.Name]
+			}
+			end := " 0)"
+			if a.One {
+				end = " 1)"
+			}
+			parts = append(parts, "(= "+name+end)
+		}
+		if len(parts) == 1 {
+			cubes = append(cubes, parts[0])
+		} else {
+			cubes = append(cubes, "(and "+strings.Join(parts, " ")+")")
+		}
+	}
+	switch len(cubes) {
+	case 0:
+		return "bot"
+	case 1:
+		return cubes[0]
+	}
+	return "(or " + strings.Join(cubes, " ") + ")"
+}
+
+// CheckLike elaborates w at the type of a term of the same scope.
+func (s *Scope) CheckLike(ctx context.Context, w *term.Written, like *Term, options ...CallOption) (t *Term, err error) {
+	if err := s.owns(like); err != nil {
+		return nil, err
+	}
+	err = s.e.call(ctx, gather(options), func(run *value.Run) {
+		k := 0
+		t = s.newTerm(run, func(c *checker) (term.Core, value.Value) {
+			tv := like.cases[k].t
+			k++
+			return c.Check(w, tv), tv
+		})
+	})
+	return t, err
+}

@@ -1,0 +1,280 @@
+// Package script handles scripts in the notation: a list of forms that define,
+// assume, declare, compare, normalise and show. It uses nothing but what any
+// host can: an engine, its empty scope, and the reader.
+package script
+
+import (
+	"context"
+	"errors"
+	"fmt"
+	"os"
+	"path/filepath"
+	"strings"
+	"time"
+
+	"example.com/boxwright/nbe"
+	"example.com/boxwright/nbe/notation"
+	"example.com/boxwright/nbe/term"
+)
+
+// Session is a script under way: an engine, what has been loaded, what has been
+// reported. Not safe for concurrent use.
+type Session struct {
+	Engine *nbe.Engine
+	// Report is called for each reporting form, in order. May be nil.
+	Report func(Result)
+	// Options are given to every call of the engine.
+	Options []nbe.CallOption
+	// ReadFile reads a script's file; os.ReadFile if nil.
+	ReadFile func(name string) ([]byte, error)
+
+	loaded map[string]bool
+}
+
+// Result is the outcome of one form.
+type Result struct {
+	Form    *notation.Form
+	Text    string // what the form reports, empty for those that only add
+	Err     error  // what went wrong, nil if the form did what it should
+	Elapsed time.Duration
+}
+
+// Unreadable is the error of text that cannot be read: the run ends with it.
+type Unreadable struct{ Err error }
+
+// Error is the error of the text.
+func (u *Unreadable) Error() string { return u.Err.Error() }
+
+// Unwrap is the error of the text.
+func (u *Unreadable) Unwrap() error { return u.Err }
+
+// File handles the script in the file name. It is read whole before its first
+// form is handled. The error is an *Unreadable; what forms do wrong, they report.
+func (s *Session) File(ctx context.Context, name string) error {
+	key, err := identity(name)
+	if err == nil && s.loaded[key] {
+		return nil
+	}
+	read := s.ReadFile
+	if read == nil {
+		read = os.ReadFile
+	}
+	src, err := read(name)
+	if err != nil {
+		return &Unreadable{&term.Error{Kind: term.Unreadable, Place: term.Place{File: name}, Message: "the file cannot be read", Cause: withoutPath(err)}}
+	}
+	if s.loaded == nil {
+		s.loaded = map[string]bool{}
+	}
+	s.loaded[key] = true
+	return s.Source(ctx, src, name)
+}
+
+// identity is one name for a file, however its path is spelled.
+func identity(name string) (string, error) {
+	full, err := filepath.Abs(name)
+	if err != nil {
+		return name, err
+	}
+	if real, err := filepath.EvalSymlinks(full); err == nil {
+		full = real
+	}
+	return full, nil
+}
+
+// withoutPath is the cause of a path error: the place says the path.
+func withoutPath(err error) error {
+	var p *os.PathError
+	if errors.As(err, &p) {
+		return p.Err
+	}
+	return err
+}
+
+// Source handles a script's text.
+func (s *Session) Source(ctx context.Context, src []byte, name string) error {
+	forms, err := notation.ReadScript(src, name, s.Engine.Words())
+	if err != nil {
+		return &Unreadable{err}
+	}
+	for k := range forms {
+		f := &forms[k]
+		if f.Kind == notation.Load {
+			if err := s.load(ctx, f, name); err != nil {
+				return err
+			}
+			continue
+		}
+		begin := time.Now()
+		text, err := s.handle(ctx, s.Engine, f)
+		if s.Report != nil {
+			s.Report(Result{f, text, err, time.Since(begin)})
+		}
+		if term.KindOf(err) == term.Cancelled {
+			return nil
+		}
+	}
+	return nil
+}
+
+func (s *Session) load(ctx context.Context, f *notation.Form, from string) error {
+	path := f.File
+	if !filepath.IsAbs(path) {
+		path = filepath.Join(filepath.Dir(from), path)
+	}
+	err := s.File(ctx, path)
+	var e *term.Error
+	if errors.As(err, &e) && e.Kind == term.Unreadable && e.Place.Line == 0 {
+		e.Place, e.GotText = f.FilePlace, fmt.Sprintf("%q", f.File)
+	}
+	return err
+}
+
+// handle does what a form says on an engine.
+func (s *Session) handle(ctx context.Context, e *nbe.Engine, f *notation.Form) (string, error) {
+	scope := e.Scope()
+	switch f.Kind {
+	case notation.Define:
+		return "", at(f.NamePlace, e.Define(ctx, f.Name, f.Type, f.Term, s.Options...))
+	case notation.Assume:
+		return "", at(f.NamePlace, e.Assume(ctx, f.Name, f.Type, s.Options...))
+	case notation.Declare:
+		return "", e.Declare(ctx, f.Declaration, s.Options...)
+	case notation.Equal, notation.Differ:
+		c, err := scope.CompareAt(ctx, f.Type, f.Term, f.Other, s.Options...)
+		if err != nil {
+			return "", err
+		}
+		if equal := c.Verdict == nbe.Equal; equal != (f.Kind == notation.Equal) {
+			return "", unequal(f, c)
+		}
+		if f.Kind == notation.Equal {
+			return "equal", nil
+		}
+		return "different: " + c.Difference.String(), nil
+	case notation.Normal:
+		return s.normal(ctx, scope, f)
+	case notation.Show:
+		return s.show(ctx, e, scope, f)
+	case notation.Blocked:
+		t, err := scope.Infer(ctx, f.Term, s.Options...)
+		if err != nil {
+			return "", err
+		}
+		report, err := scope.Blocked(ctx, t, s.Options...)
+		if err != nil {
+			return "", err
+		}
+		return report.String(), nil
+	case notation.Reject:
+		return s.reject(ctx, e, f)
+	}
+	return "", &term.Error{Kind: term.Malformed, Place: f.Place, Message: "no such form"}
+}
+
+// at gives an error the place p if it has none.
+func at(p term.Place, err error) error {
+	var e *term.Error
+	if errors.As(err, &e) && (!e.Place.Known() || e.Kind == term.Duplicate) {
+		c := *e
+		c.Place = p
+		return &c
+	}
+	return err
+}
+
+func unequal(f *notation.Form, c nbe.Comparison) error {
+	err := &term.Error{Kind: term.Unequal, Place: f.Place, Want: f.Term, Got: f.Other}
+	switch {
+	case c.Verdict == nbe.Undecided:
+		err.Message = "it depends on " + c.Hole
+	case f.Kind == notation.Differ:
+		err.Message = "the two are equal by definition"
+	default:
+		err.Message = "not equal by definition, " + c.Difference.String()
+	}
+	err.Detail = c.Difference
+	return err
+}
+
+func (s *Session) normal(ctx context.Context, scope *nbe.Scope, f *notation.Form) (string, error) {
+	t, err := scope.Infer(ctx, f.Term, s.Options...)
+	if err != nil {
+		return "", err
+	}
+	n, err := scope.CheckLike(ctx, f.Other, t, s.Options...)
+	if err != nil {
+		return "", err
+	}
+	forms, err := scope.Normal(ctx, t, s.Options...)
+	if err != nil {
+		return "", err
+	}
+	if !term.Same(forms[0].Term, n.Core()) {
+		got, err := forms[0].Written()
+		if err != nil {
+			return "", err
+		}
+		return "", &term.Error{Kind: term.Unequal, Place: f.Place, Message: "the normal form is another", Want: f.Other, Got: got}
+	}
+	return forms[0].String(), nil
+}
+
+func (s *Session) show(ctx context.Context, e *nbe.Engine, scope *nbe.Scope, f *notation.Form) (string, error) {
+	if f.Term.Kind == term.NameKind {
+		if account, ok := e.Account(f.Term.Word); ok {
+			return account.String(), nil
+		}
+	}
+	t, err := scope.Infer(ctx, f.Term, s.Options...)
+	if err != nil {
+		return "", err
+	}
+	forms, err := scope.Normal(ctx, t, s.Options...)
+	if err != nil {
+		return "", err
+	}
+	w, err := forms[0].Written()
+	if err != nil {
+		return "", err
+	}
+	ty, err := forms[0].WrittenType()
+	if err != nil {
+		return "", err
+	}
+	return fmt.Sprintf("%s : %s", notation.Format(w, 96), notation.Format(ty, 96)), nil
+}
+
+// refusals are the kinds of error that count as a refusal.
+func refusal(err error) bool {
+	switch term.KindOf(err) {
+	case term.NotFound, term.Duplicate, term.IllTyped, term.Disagreement, term.BadDeclaration, term.Unequal, term.Malformed:
+		return true
+	}
+	return false
+}
+
+func (s *Session) reject(ctx context.Context, e *nbe.Engine, f *notation.Form) (string, error) {
+	text, err := s.handle(ctx, e.Fork(), f.Inner)
+	switch {
+	case err == nil:
+		got := "it was accepted"
+		if text != "" {
+			got += ": " + text
+		}
+		return "", &term.Error{Kind: term.Unequal, Place: f.Place, Message: "the form was to be refused", GotText: got}
+	case !refusal(err):
+		return "", err
+	}
+	return "refused: " + strings.TrimSpace(withoutPlace(err)), nil
+}
+
+func withoutPlace(err error) string {
+	var e *term.Error
+	if errors.As(err, &e) {
+		c := *e
+		c.Place = term.Place{}
+		return c.Error()
+	}
+	return err.Error()
+}
