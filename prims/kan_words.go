@@ -50,24 +50,27 @@ type coreWall struct {
 
 // elaborateWalls checks walls over base: each at the type on its own face,
 // standing on the base, and agreeing with the others wherever their faces meet.
-// typeAt is the type at a dimension, in whatever scope it is called.
+// typeAt is the type at a dimension, on whatever face it is called; it speaks
+// of core terms of the present levels and is not called under more binders.
 func elaborateWalls(c value.Checker, rows [][]term.Part, base value.Core, typeAt func(*value.Dimension) value.Value) []coreWall {
 	run := c.Run()
 	var walls []coreWall
 	for _, row := range rows {
 		at := row[1].Body
 		c.Under(c.Face(row[0].Body), row[1:], func(cube interval.Cube) {
-			body := c.Dimensioned(row[1].Binders[0], func(i value.Name) value.Core {
-				return c.Check(at, typeAt(value.DimensionName(i)))
+			here := typeAt(next(c))
+			body := c.Dimensioned(row[1].Binders[0], func(value.Name) value.Core {
+				return c.Check(at, here)
 			})
 			u := c.Case(body, dimensions)
 			c.Same(typeAt(value.Zero()), c.Value(base), u.OpenAll(run, []value.Value{value.Zero()}),
 				&term.Error{Kind: term.Disagreement, Place: at.Place, Message: "the wall does not stand on the base"})
 			for _, other := range walls {
 				c.Under(other.cube.Face(), nil, func(interval.Cube) {
-					c.Dimensioned(row[1].Binders[0], func(i value.Name) value.Core {
-						d := value.DimensionName(i)
-						c.Same(typeAt(d), c.Case(other.body, dimensions).OpenAll(run, []value.Value{d}), c.Case(body, dimensions).OpenAll(run, []value.Value{d}),
+					d := next(c)
+					t, a, b := typeAt(d), c.Case(other.body, dimensions).OpenAll(run, []value.Value{d}), c.Case(body, dimensions).OpenAll(run, []value.Value{d})
+					c.Dimensioned(row[1].Binders[0], func(value.Name) value.Core {
+						c.Same(t, a, b,
 							&term.Error{Kind: term.Disagreement, Place: at.Place, Message: "two walls disagree where their faces meet"})
 						return nil
 					})
@@ -111,6 +114,14 @@ next:
 		out[at] = i
 	}
 	return out
+}
+
+// next is the dimension that the next binder will bind, for values that are
+// made outside it: a core term with binders has the levels of the scope it was
+// elaborated in, and is not evaluated under more.
+func next(c value.Checker) *value.Dimension {
+	_, d := c.Scope()
+	return value.DimensionName(value.Name(d))
 }
 
 func inferHcomp(c value.Checker, w *term.Written) (value.Core, value.Value) {
@@ -173,8 +184,9 @@ func elaborateTransp(c value.Checker, w *term.Written) (*term.Bound, func(*value
 	line, typeAt := elaborateLine(c, w.Parts[0])
 	phi := c.Face(part(w, 1))
 	c.Under(phi, nil, func(interval.Cube) {
-		c.Dimensioned(w.Parts[0].Binders[0], func(i value.Name) value.Core {
-			c.SameType(typeAt(value.Zero()), typeAt(value.DimensionName(i)),
+		a0, a := typeAt(value.Zero()), typeAt(next(c))
+		c.Dimensioned(w.Parts[0].Binders[0], func(value.Name) value.Core {
+			c.SameType(a0, a,
 				&term.Error{Kind: term.Disagreement, Place: part(w, 0).Place, Message: "the line of types is not constant where the transport is the identity"})
 			return nil
 		})
