@@ -306,7 +306,7 @@ var (
 
 type dataOp struct{}
 
-func (dataOp) Canonical() {}
+func (dataOp) Canonical([]eval.Arg) bool { return true }
 func (dataOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 	d := args[0].Payload.(term.Reference).Target.(*Data)
 	params := make([]value.Value, len(args)-1)
@@ -318,11 +318,29 @@ func (dataOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 
 type conOp struct{}
 
-func (conOp) Canonical() {}
+func (conOp) Canonical(args []eval.Arg) bool { return !stored(args) }
+
+// stored reports whether the constructor makes a number out of its argument,
+// which is then evaluated with it: numbers are to be numbers, not chains.
+func stored(args []eval.Arg) bool {
+	c := args[0].Payload.(term.Reference).Target.(*Constructor)
+	return c.Data.Numerals && c.constant == nil
+}
+
+// Demands is the argument of a successor.
+func (conOp) Demands(args []eval.Arg) []*eval.Arg {
+	if stored(args) {
+		return []*eval.Arg{&args[2]}
+	}
+	return nil
+}
 func (conOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 	c := args[0].Payload.(term.Reference).Target.(*Constructor)
 	if c.constant != nil {
 		return c.constant
+	}
+	if c.Data.Numerals {
+		return successors(c.Data, natural{small: 1}, run.Force(args[2].Eval(run, f)))
 	}
 	vs := make([]value.Value, len(c.Args))
 	for k := range vs {

@@ -107,8 +107,8 @@ func (e *Eliminator) Eliminate(run *value.Run, v value.Value) value.Value {
 	case *Formal:
 		return e.composite(run, v)
 	case *Number:
-		if e.step != nil && !run.Plain.NoNumerals {
-			return e.numeral(run, v)
+		if w, ok := e.numeral(run, v); ok {
+			return w
 		}
 	case *Successors:
 		if e.step != nil && e.step.affine && !run.Plain.NoNumerals {

@@ -281,7 +281,7 @@ var (
 
 type glueTypeOp struct{}
 
-func (glueTypeOp) Canonical() {}
+func (glueTypeOp) Canonical([]eval.Arg) bool { return true }
 func (glueTypeOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 	var parts []GluePart
 	for _, row := range args[1].Rows {
@@ -294,7 +294,7 @@ func (glueTypeOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Valu
 
 type glueOp struct{}
 
-func (glueOp) Canonical() {}
+func (glueOp) Canonical([]eval.Arg) bool { return true }
 func (glueOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 	var parts []GlueValue
 	for _, row := range args[1].Rows {

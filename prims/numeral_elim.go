@@ -1,6 +1,7 @@
 package prims
 
 import (
+	"example.com/boxwright/nbe/eval"
 	"example.com/boxwright/nbe/term"
 	"example.com/boxwright/value"
 )
@@ -13,7 +14,6 @@ import (
 type stepRule struct {
 	affine bool    // the family is constantly the naturals and the step is suc^count h
 	count  natural // of an affine step
-	strict bool    // the step demands the hypothesis before anything else
 }
 
 type stepPayload struct {
@@ -37,7 +37,7 @@ func (elimOp) Prepare(c *term.Op, variables int) (term.Arg, bool) {
 		return nil, false
 	}
 	h := variables + 1 // the predecessor, then the hypothesis
-	rule := &stepRule{strict: demands(step.Body, h)}
+	rule := &stepRule{}
 	if family, ok := c.Args[2].(*term.Bound).Body.(*term.Op); ok && family.Sig == dataSig && family.Args[0].(term.Reference).Target == any(d) {
 		body := step.Body
 		for {
@@ -51,51 +51,48 @@ func (elimOp) Prepare(c *term.Op, variables int) (term.Arg, bool) {
 		v, ok := body.(*term.Variable)
 		rule.affine = ok && v.Level == h
 	}
-	if !rule.affine && !rule.strict {
+	if !rule.affine {
 		return nil, false
 	}
 	return stepPayload{0, rule}, true
 }
 
-// demands reports whether evaluating c forces the variable first.
-func demands(c term.Core, level int) bool {
-	for {
-		switch x := c.(type) {
-		case *term.Variable:
-			return x.Level == level
-		case *term.Op:
-			switch x.Sig {
-			case applySig, firstSig, secondSig, atSig:
-				c = x.Args[0].(term.Core)
-			case elimSig:
-				c = x.Args[3].(term.Core)
-			default:
-				return false
+// Demands are what an elimination by an affine step evaluates besides what it
+// eliminates: the case of zero.
+func (elimOp) Demands(args []eval.Arg) []*eval.Arg {
+	if len(args) > 5 && args[5].Payload.(stepPayload).affine {
+		for _, row := range args[4].Rows {
+			if row[0].Payload.(term.Reference).Index == 0 {
+				return []*eval.Arg{&row[1]}
 			}
-		default:
-			return false
 		}
 	}
+	return nil
 }
 
-// numeral eliminates a number by the rule that compiling found.
-func (e *Eliminator) numeral(run *value.Run, v *Number) value.Value {
-	if e.step.affine {
+// numeral eliminates a number; ok is false where the step does not demand its
+// hypothesis and the number is to be taken apart by one.
+func (e *Eliminator) numeral(run *value.Run, v *Number) (value.Value, bool) {
+	if e.step != nil && e.step.affine && !run.Plain.NoNumerals {
 		run.Step()
 		n := e.step.count.times(v.n)
 		run.Charge(n.price())
 		// the base is forced, so that sums of sums are numbers and no chains
-		return successors(e.data, n, run.Force(e.cases[0].ApplyAll(run, nil)))
+		return successors(e.data, n, run.Force(e.cases[0].ApplyAll(run, nil))), true
 	}
-	if v.n.big != nil || v.n.small == 0 {
-		// from a number that large nothing is reached step by step
-		c, args, _ := shown(run, v)
-		return e.onCase(run, c, args, nil)
+	if v.n.big != nil || v.n.small < 2 || run.Plain.NoNumerals {
+		return nil, false
+	}
+	step, ok := e.cases[1].(value.Strict)
+	if !ok || !step.StrictIn(run, 1) {
+		return nil, false
 	}
 	h := run.Force(e.cases[0].ApplyAll(run, nil))
+	args := [2]value.Value{}
 	for k := range v.n.small {
 		run.Step()
-		h = run.Force(e.cases[1].ApplyAll(run, []value.Value{&Number{e.data, natural{small: k}}, h}))
+		args[0], args[1] = &Number{e.data, natural{small: k}}, h
+		h = run.Force(e.cases[1].ApplyAll(run, args[:]))
 	}
-	return h
+	return h, true
 }

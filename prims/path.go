@@ -176,14 +176,14 @@ var (
 
 type pathOp struct{}
 
-func (pathOp) Canonical() {}
+func (pathOp) Canonical([]eval.Arg) bool { return true }
 func (pathOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 	return &Path{args[0].Close(run, f), args[1].Delay(run, f), args[2].Delay(run, f)}
 }
 
 type pathLamOp struct{}
 
-func (pathLamOp) Canonical() {}
+func (pathLamOp) Canonical([]eval.Arg) bool { return true }
 func (pathLamOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 	return &PathLam{args[0].Close(run, f)}
 }

@@ -38,6 +38,12 @@ func (l *Lam) Substitute(run *value.Run, s *value.Subst) value.Value {
 	return &Lam{l.Body.Substitute(run, s)}
 }
 
+// Strict reports whether the function evaluates its argument in any case.
+func (l *Lam) Strict(run *value.Run) bool {
+	s, ok := l.Body.(value.Strict)
+	return ok && s.StrictIn(run, 0)
+}
+
 // Hcomp is a function that composes pointwise.
 func (p *Pi) Hcomp(run *value.Run, f value.Value, walls value.System) value.Value {
 	return &Lam{value.NewCaptured(run, value.Captured{Rule: hcompPi, Values: []value.Value{p, f}, Walls: walls})}
@@ -184,23 +190,33 @@ var (
 
 type piOp struct{}
 
-func (piOp) Canonical() {}
+func (piOp) Canonical([]eval.Arg) bool { return true }
 func (piOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 	return &Pi{args[0].Delay(run, f), args[1].Close(run, f)}
 }
 
 type lamOp struct{}
 
-func (lamOp) Canonical() {}
+func (lamOp) Canonical([]eval.Arg) bool { return true }
 func (lamOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 	return &Lam{args[0].Close(run, f)}
 }
 
 type applyOp struct{}
 
-func (applyOp) Principal() int { return 0 }
+func (applyOp) Principal() int                   { return 0 }
+func (applyOp) Called() (function, argument int) { return 0, 1 }
+
+// Eval evaluates the argument where the function will do so anyway.
 func (applyOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
-	fn := args[0].Eval(run, f)
+	fn := run.Force(args[0].Eval(run, f))
+	if l, ok := fn.(*Lam); ok {
+		run.Step()
+		if l.Strict(run) {
+			return l.Body.Apply(run, run.Force(args[1].Eval(run, f)))
+		}
+		return l.Body.Apply(run, args[1].Delay(run, f))
+	}
 	return Apply(run, fn, args[1].Delay(run, f))
 }
 func (applyOp) Frame(run *value.Run, f eval.Frame, args []eval.Arg) value.Frame {

@@ -92,7 +92,7 @@ var (
 
 type piDimensionOp struct{}
 
-func (piDimensionOp) Canonical() {}
+func (piDimensionOp) Canonical([]eval.Arg) bool { return true }
 func (piDimensionOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 	return &PiDimension{args[0].Close(run, f)}
 }

@@ -175,14 +175,14 @@ var (
 
 type sigmaOp struct{}
 
-func (sigmaOp) Canonical() {}
+func (sigmaOp) Canonical([]eval.Arg) bool { return true }
 func (sigmaOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 	return &Sigma{args[0].Delay(run, f), args[1].Close(run, f)}
 }
 
 type pairOp struct{}
 
-func (pairOp) Canonical() {}
+func (pairOp) Canonical([]eval.Arg) bool { return true }
 func (pairOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 	a := args[0].Delay(run, f)
 	if args[0].Shares(&args[1]) {

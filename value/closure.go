@@ -19,6 +19,19 @@ type Case interface {
 	AsClosure() Closure
 }
 
+// Strict is implemented by closures and cases that know which of their
+// arguments they evaluate in any case. Asking may evaluate captured functions.
+type Strict interface {
+	StrictIn(run *Run, k int) bool
+}
+
+// Function is implemented by values of functions that know whether they
+// evaluate their argument in any case.
+type Function interface {
+	Value
+	Strict(run *Run) bool
+}
+
 // Line is a closure over a dimension that is a value under a bound name: what
 // the Kan rules make. The body is evaluated once, at the name, and substituted.
 type Line struct {

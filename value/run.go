@@ -81,8 +81,8 @@ type Run struct {
 	// since values were made that are stuck on them
 	solutions map[Global]Global
 	refreshed map[*Neutral]Value
-	stack  [][]Value // segments of call frames
-	top    []Value   // what is left of the current segment
+	stack     [][]Value // segments of call frames
+	top       []Value   // what is left of the current segment
 }
 
 // Settings are what a run is made with.

@@ -9,6 +9,7 @@ type Abstraction struct {
 	arity    int
 	hints    []string
 	body     Code
+	demands  []*demand // by argument
 }
 
 func (a *Abstraction) capture(to, from Frame) {
@@ -29,6 +30,7 @@ type closure struct {
 	abs     *Abstraction
 	env     []value.Value
 	support value.Support
+	strict  strictness
 }
 
 func (a *Abstraction) close(run *value.Run, f Frame) *closure {

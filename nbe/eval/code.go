@@ -27,11 +27,11 @@ type Operation interface {
 	Eval(run *value.Run, f Frame, args []Arg) value.Value
 }
 
-// Canonical is an Operation whose Eval does no work beyond building a value:
-// delaying it would cost more than doing it.
+// Canonical is an Operation whose Eval, with these arguments, does no work
+// beyond building a value: delaying it would cost more than doing it.
 type Canonical interface {
 	Operation
-	Canonical()
+	Canonical(args []Arg) bool
 }
 
 // Eliminator is an Operation that waits for one of its arguments.

@@ -156,7 +156,7 @@ func (k *compiler) op(c *term.Op, l *layout, nv, nd int) Code {
 			cheap = o.cheap + 1
 		}
 	}
-	if _, ok := op.(Canonical); ok && cheap <= cheapest {
+	if o, ok := op.(Canonical); ok && cheap <= cheapest && o.Canonical(out.args) {
 		out.cheap = cheap
 	}
 	if p, ok := op.(Preparer); ok {
@@ -264,6 +264,15 @@ func (k *compiler) abstraction(key term.Arg, body term.Core, binds []term.Sort, 
 		}
 	}
 	abs.body = k.term(body, inner, nv, nd)
+	for s := range abs.arity {
+		d := demandOf(abs.body, s)
+		if d != nil && abs.demands == nil {
+			abs.demands = make([]*demand, abs.arity)
+		}
+		if d != nil {
+			abs.demands[s] = d
+		}
+	}
 	if k.seen == nil {
 		k.seen = map[seenKey]*Abstraction{}
 	}
