@@ -17,12 +17,14 @@ import (
 // variables, and terms and values of one scope are refused by another
 // (WrongScope). Safe for concurrent use.
 type Scope struct {
-	e     *Engine
-	cases []*scopeContext // one for each conjunction of what is assumed
+	e      *Engine
+	cases  []*scopeContext // one for each conjunction of what is assumed
+	parent *Scope
+	from   []origin // of each case in parent
 }
 
 // Scope returns the empty scope of the engine.
-func (e *Engine) Scope() *Scope { return &Scope{e, []*scopeContext{newContext()}} }
+func (e *Engine) Scope() *Scope { return &Scope{e: e, cases: []*scopeContext{newContext()}} }
 
 func (x *scopeContext) clone() *scopeContext {
 	y := *x
@@ -35,9 +37,15 @@ func (x *scopeContext) clone() *scopeContext {
 	return &y
 }
 
+// keep adds the case that comes from the parent's case of the same index.
+func (s *Scope) keep(x *scopeContext) {
+	s.from = append(s.from, origin{index: len(s.cases)})
+	s.cases = append(s.cases, x)
+}
+
 // Variable returns the scope with one more variable, of type ty.
 func (s *Scope) Variable(ctx context.Context, name string, ty *term.Written, options ...CallOption) (*Scope, error) {
-	out := &Scope{e: s.e}
+	out := &Scope{e: s.e, parent: s}
 	err := s.e.call(ctx, gather(options), func(run *value.Run) {
 		for _, x := range s.cases {
 			x = x.clone()
@@ -46,7 +54,7 @@ func (s *Scope) Variable(ctx context.Context, name string, ty *term.Written, opt
 			core, _ := c.Type(ty)
 			t := c.Value(core)
 			x.pushVariable(name, t, value.NewVariable(len(x.variables), name, t))
-			out.cases = append(out.cases, x)
+			out.keep(x)
 		}
 	})
 	if err != nil {
@@ -60,11 +68,11 @@ func (s *Scope) Dimension(name string) (*Scope, error) {
 	if err := s.e.name(name, term.Place{}); err != nil {
 		return nil, err
 	}
-	out := &Scope{e: s.e}
+	out := &Scope{e: s.e, parent: s}
 	for _, x := range s.cases {
 		x = x.clone()
 		x.pushDimension(name, interval.Var(value.Name(len(x.dimensions))))
-		out.cases = append(out.cases, x)
+		out.keep(x)
 	}
 	return out, nil
 }
@@ -73,17 +81,19 @@ func (s *Scope) Dimension(name string) (*Scope, error) {
 // checked and compared later must hold under each, and normalising gives one
 // form for each; under bot everything is equal and there are no forms.
 func (s *Scope) Assume(ctx context.Context, face *term.Written, options ...CallOption) (*Scope, error) {
-	out := &Scope{e: s.e}
+	out := &Scope{e: s.e, parent: s}
 	err := s.e.call(ctx, gather(options), func(run *value.Run) {
-		for _, x := range s.cases {
+		for index, x := range s.cases {
 			c := s.e.checker(run, x.clone())
 			f := c.Face(face)
 			for k := range f.Len() {
-				if cube := f.Cube(k); cube.IsTop() {
+				cube := f.Cube(k)
+				if cube.IsTop() {
 					out.cases = append(out.cases, c.scopeContext)
 				} else {
 					out.cases = append(out.cases, c.restricted(run, cube))
 				}
+				out.from = append(out.from, origin{index, cube})
 			}
 		}
 	})
