@@ -1,0 +1,64 @@
+; Propositions, sets and groupoids (HoTT Book 3.1, 3.3, 7.1), and what is a
+; proposition: contractibility, being an equivalence.
+(load "equivalences.sexp")
+
+(def proposition (-> (U 2) (U 2)) (lam (A) (Pi ((a A) (b A)) (Path A a b))))
+(def set (-> (U 2) (U 2)) (lam (A) (Pi ((a A) (b A)) (proposition (Path A a b)))))
+(def groupoid (-> (U 2) (U 2)) (lam (A) (Pi ((a A) (b A)) (set (Path A a b)))))
+
+(def contractible-proposition (Pi ((A (U 2)) (c (contractible A))) (proposition A))
+  (lam (A c a b)
+    (line (i) (hcomp A (fst c) ((= i 0) (k) (at ((snd c) a) k)) ((= i 1) (k) (at ((snd c) b) k))))))
+
+; A proposition is a set (Book 3.3.4).
+(def proposition-set (Pi ((A (U 2)) (h (proposition A))) (set A))
+  (lam (A h a b p q)
+    (line (i j)
+      (hcomp A a
+        ((= i 0) (k) (at (h a (at p j)) k))
+        ((= i 1) (k) (at (h a (at q j)) k))
+        ((= j 0) (k) (at (h a a) k))
+        ((= j 1) (k) (at (h a b) k))))))
+
+(def set-groupoid (Pi ((A (U 2)) (h (set A))) (groupoid A))
+  (lam (A h a b) (proposition-set (Path A a b) (h a b))))
+
+; Over a line of propositions any two ends are joined.
+(def proposition-over
+  (Pi ((A (U 2)) (B (-> A (U 2))) (h (Pi ((x A)) (proposition (B x))))
+      (a A) (b A) (p (Path A a b)) (u (B a)) (v (B b)))
+    (PathOver (i (B (at p i))) u v))
+  (lam (A B h a b p u v)
+    (path-over (lam (i) (B (at p i))) u v
+      (h b (transp (i (B (at p i))) bot u) v))))
+
+(def proposition-contractible (Pi ((A (U 2))) (proposition (contractible A)))
+  (lam (A c d)
+    (line (i)
+      (pair (at ((snd c) (fst d)) i)
+        (lam (y)
+          (line (j)
+            (hcomp A (fst c)
+              ((= i 0) (k) (at ((snd c) (at ((snd c) y) j)) k))
+              ((= i 1) (k) (at ((snd c) (at ((snd d) y) j)) k))
+              ((= j 0) (k) (at ((snd c) (at ((snd c) (fst d)) i)) k))
+              ((= j 1) (k) (at ((snd c) y) k)))))))))
+
+(def proposition-product
+  (Pi ((A (U 2)) (B (-> A (U 2))) (h (Pi ((x A)) (proposition (B x))))) (proposition (Pi ((x A)) (B x))))
+  (lam (A B h f g) (line (i) (lam (x) (at (h x (f x) (g x)) i)))))
+
+(def proposition-is-equivalence (Pi ((A (U 2)) (B (U 2)) (f (-> A B))) (proposition (is-equivalence A B f)))
+  (lam (A B f)
+    (proposition-product B (lam (y) (contractible (fiber A B f y)))
+      (lam (y) (proposition-contractible (fiber A B f y))))))
+
+; Equivalences with equal maps are equal.
+(def equal-equivalences
+  (Pi ((A (U 2)) (B (U 2)) (e (Equiv A B)) (d (Equiv A B)) (p (Path (-> A B) (fst e) (fst d))))
+    (Path (Equiv A B) e d))
+  (lam (A B e d p)
+    (line (i)
+      (pair (at p i)
+        (at (proposition-over (-> A B) (is-equivalence A B) (proposition-is-equivalence A B)
+              (fst e) (fst d) p (snd e) (snd d)) i)))))
