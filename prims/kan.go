@@ -116,7 +116,7 @@ func compParts(run *value.Run, i value.Name, a, base value.Value, walls value.Sy
 	i, a = FreshLine(run, i, a, base.Support()|walls.Support())
 	a1 = run.At(a, i, interval.One())
 	u0 = LaterTransp(run, i, a, interval.Bot(), base)
-	us = walls.Map(run, a.Support().Without(i), interval.Single(i), func(run *value.Run, k value.Name, u value.Value, cut *value.Subst) value.Value {
+	us = walls.MapLines(run, a.Support().Without(i), interval.Single(i), func(run *value.Run, k value.Name, u value.Value, cut *value.Subst) value.Value {
 		line := run.Substitute(a, cut)
 		j := run.Fresh(line.Support() | u.Support() | interval.Single(k))
 		at := run.At(line, i, interval.Var(k).Max(interval.Var(j)))

@@ -81,15 +81,28 @@ func (s System) Top() (Wall, bool) {
 // Map builds from each wall u the wall f(i, u) on the same face, lazily. cut
 // is the restriction to that face, for f to put into every other value it
 // uses (Run.Substitute). free is the support of those values; bound are names
-// that f binds itself and that must not be a wall's own.
+// that f binds itself and that must not be a wall's own. f brings the wall's
+// own dimension in only through u.
 func (s System) Map(run *Run, free, bound Support, f func(run *Run, i Name, body Value, cut *Subst) Value) System {
+	return s.mapped(run, free, bound, false, f)
+}
+
+// MapLines is Map for an f that uses the wall's own dimension also where u
+// does not mention it.
+func (s System) MapLines(run *Run, free, bound Support, f func(run *Run, i Name, body Value, cut *Subst) Value) System {
+	return s.mapped(run, free, bound, true, f)
+}
+
+func (s System) mapped(run *Run, free, bound Support, own bool, f func(run *Run, i Name, body Value, cut *Subst) Value) System {
 	out := make(System, len(s), len(s)+2)
 	for k, w := range s {
 		w = w.Avoiding(run, free|bound)
 		cut := w.Cube.Restriction()
-		out[k] = Wall{w.Cube, w.I, run.Later(w.Body.Support()|SubstSupport(free, cut), func(run *Run) Value {
-			return f(run, w.I, w.Body, cut)
-		})}
+		support := w.Body.Support() | SubstSupport(free, cut)
+		if own {
+			support |= interval.Single(w.I)
+		}
+		out[k] = Wall{w.Cube, w.I, run.Later(support, func(run *Run) Value { return f(run, w.I, w.Body, cut) })}
 	}
 	return out
 }
