@@ -2,6 +2,7 @@ package notation_test
 
 import (
 	"errors"
+	"runtime/debug"
 	"strings"
 	"testing"
 
@@ -309,7 +310,10 @@ func TestLimitsOfTexts(t *testing.T) {
 }
 
 func TestDeepAndWideTexts(t *testing.T) {
-	const n = 200_000
+	// A stack of more than a megabyte is fatal here, so nesting must not cost any.
+	old := debug.SetMaxStack(1 << 20)
+	defer debug.SetMaxStack(old)
+	const n = 20_000
 	for name, text := range map[string]string{
 		"arguments":    strings.Repeat("(f ", n) + "x" + strings.Repeat(")", n),
 		"heads":        strings.Repeat("(", n) + "f" + strings.Repeat(" x)", n),
@@ -328,7 +332,7 @@ func TestDeepAndWideTexts(t *testing.T) {
 			w, err := notation.ReadTerm(text, "", nil)
 			require.NoError(t, err)
 			if name != "long comment" && name != "many names" {
-				require.True(t, w.String() == strings.Replace(text, "x x) x", "x x) x", 1))
+				require.True(t, w.String() == text)
 			}
 			back, err := notation.ReadTerm(notation.Format(w, 60), "", nil)
 			require.NoError(t, err)

@@ -168,7 +168,8 @@ func TestSizeStopsCountingWhereNumbersGrowLarge(t *testing.T) {
 }
 
 func TestDeepTermsAreComparedAndMeasured(t *testing.T) {
-	const n = 300_000
+	smallStack(t)
+	const n = 100_000
 	layer := func(_ int, c term.Core) term.Core { return lam("x", pair(c, global("b"))) }
 	a, b := deep(n, layer), deep(n, layer)
 	assert.True(t, term.Same(a, b))
