@@ -1,219 +1,234 @@
+// Benchmarks. Each operation is timed next to a baseline in the same run: one
+// call that joins two sets of literals held as two words each, the least that
+// a meet of conjunctions can cost. The metric x/base is the ratio of the two.
+
 package interval
 
-import "testing"
+import (
+	"testing"
+	"time"
+)
 
-const tableSize = 256
-
+// Results go here, so that no call is optimised away.
 var (
-	sinkWord uint64
+	sinkPair pair
 	sinkBool bool
 	sinkDim  Dim
 	sinkFace Face
 	sinkSup  Support
 )
 
+// pair is a set of literals: a word of names and a word of reversed names.
+type pair struct{ plain, reversed uint64 }
+
 //go:noinline
-func orWords(a, b uint64) uint64 { return a | b }
+func (p pair) join(q pair) pair { return pair{p.plain | q.plain, p.reversed | q.reversed} }
 
-func BenchmarkBaseInline(b *testing.B) {
-	var xs, ys [tableSize]uint64
-	for k := range xs {
-		xs[k], ys[k] = 1<<uint(k%64), 1<<uint(k*7%64)
-	}
-	b.ResetTimer()
-	for k := 0; k < b.N; k++ {
-		sinkWord = xs[k%tableSize] | ys[k%tableSize]
-	}
-}
-func BenchmarkBaseCall(b *testing.B) {
-	var xs, ys [tableSize]uint64
-	for k := range xs {
-		xs[k], ys[k] = 1<<uint(k%64), 1<<uint(k*7%64)
-	}
-	b.ResetTimer()
-	for k := 0; k < b.N; k++ {
-		sinkWord = orWords(xs[k%tableSize], ys[k%tableSize])
-	}
-}
+const tableSize = 64
 
-func dims1() (out [tableSize]Dim) {
-	for k := range out {
-		out[k] = Lit(Name(k*5%8), k%3 == 0)
+var pairs = func() (table [tableSize]pair) {
+	for k := range table {
+		table[k] = pair{1 << k, 1 << (k * 7 % 64)}
 	}
-	return
-}
-func dims2() (out [tableSize]Dim) {
-	for k := range out {
-		out[k] = Lit(Name(k*5%8), k%3 == 0).Min(Lit(Name(k*7%8), k%5 == 0)).Max(Var(Name(k % 7)))
-	}
-	return
-}
-func faces1() (out [tableSize]Face) {
-	for k := range out {
-		out[k] = Eq0(Name(k * 5 % 8))
-		if k%3 == 0 {
-			out[k] = Eq1(Name(k * 5 % 8))
+	return table
+}()
+
+// baseline returns the time that n two-word operations take, the best of three.
+func baseline(n int) time.Duration {
+	best := time.Duration(1 << 62)
+	for range 3 {
+		start := time.Now()
+		for k := range n {
+			sinkPair = pairs[k%tableSize].join(pairs[(k+11)%tableSize])
 		}
+		best = min(best, time.Since(start))
 	}
-	return
-}
-func faces2() (out [tableSize]Face) {
-	f := faces1()
-	for k := range out {
-		out[k] = f[k].And(f[(k*3+1)%tableSize]).Or(f[(k*7+3)%tableSize])
-	}
-	return
+	return best
 }
 
-func BenchmarkOps(b *testing.B) {
-	d1, d2, f1, f2 := dims1(), dims2(), faces1(), faces2()
-	e1 := d1
-	for k := range e1 {
-		e1[k] = d1[(k*11+5)%tableSize]
+// operands are pairwise different elements of one shape.
+type operands struct {
+	dims  [tableSize]Dim
+	faces [tableSize]Face
+}
+
+// literalOperands are single literals on the first eight names.
+func literalOperands() (out operands) {
+	for k := range tableSize {
+		out.dims[k] = Lit(Name(k*5%8), k%3 == 0)
+		out.faces[k] = out.dims[k].Is1()
 	}
-	e2 := d2
-	for k := range e1 {
-		e2[k] = d2[(k*11+5)%tableSize]
+	return out
+}
+
+// twoOperands have two conjunctions of two literals.
+func twoOperands() (out operands) {
+	for k := range tableSize {
+		a, b, c := Name(k%4), Name(4+k*3%4), Name(8+k*5%8)
+		out.dims[k] = Var(a).Min(Lit(b, k%3 == 0)).Max(Lit(b, k%2 == 0).Min(Var(c)))
+		out.faces[k] = out.dims[k].Is1()
 	}
-	g1, g2 := f1, f2
-	for k := range g1 {
-		g1[k], g2[k] = f1[(k*11+5)%tableSize], f2[(k*11+5)%tableSize]
+	return out
+}
+
+func BenchmarkInterval(b *testing.B) {
+	one, two := literalOperands(), twoOperands()
+	zero, rename := Assign(3, Zero()), Rename(3, 6)
+	connect := Assign(3, Var(3).Min(Var(9)))
+	missed := Assign(20, Zero())
+	for _, bench := range []struct {
+		name string
+		run  func(in *operands, n int)
+	}{
+		{"Min", func(in *operands, n int) {
+			for k := range n {
+				sinkDim = in.dims[k%tableSize].Min(in.dims[(k+11)%tableSize])
+			}
+		}},
+		{"Max", func(in *operands, n int) {
+			for k := range n {
+				sinkDim = in.dims[k%tableSize].Max(in.dims[(k+11)%tableSize])
+			}
+		}},
+		{"Rev", func(in *operands, n int) {
+			for k := range n {
+				sinkDim = in.dims[k%tableSize].Rev()
+			}
+		}},
+		{"Equal", func(in *operands, n int) {
+			for k := range n {
+				sinkBool = in.dims[k%tableSize].Equal(in.dims[(k+11)%tableSize])
+			}
+		}},
+		{"AtMost", func(in *operands, n int) {
+			for k := range n {
+				sinkBool = in.dims[k%tableSize].AtMost(in.dims[(k+11)%tableSize])
+			}
+		}},
+		{"Support", func(in *operands, n int) {
+			for k := range n {
+				sinkSup = in.dims[k%tableSize].Support()
+			}
+		}},
+		{"IsEnd", func(in *operands, n int) {
+			for k := range n {
+				sinkBool = in.dims[k%tableSize].IsEnd()
+			}
+		}},
+		{"Is0", func(in *operands, n int) {
+			for k := range n {
+				sinkFace = in.dims[k%tableSize].Is0()
+			}
+		}},
+		{"SubstEnd", func(in *operands, n int) {
+			for k := range n {
+				sinkDim = in.dims[k%tableSize].Subst(zero)
+			}
+		}},
+		{"SubstMissed", func(in *operands, n int) {
+			for k := range n {
+				sinkDim = in.dims[k%tableSize].Subst(missed)
+			}
+		}},
+		{"SubstRename", func(in *operands, n int) {
+			for k := range n {
+				sinkDim = in.dims[k%tableSize].Subst(rename)
+			}
+		}},
+		{"SubstConnect", func(in *operands, n int) {
+			for k := range n {
+				sinkDim = in.dims[k%tableSize].Subst(connect)
+			}
+		}},
+		{"And", func(in *operands, n int) {
+			for k := range n {
+				sinkFace = in.faces[k%tableSize].And(in.faces[(k+11)%tableSize])
+			}
+		}},
+		{"Or", func(in *operands, n int) {
+			for k := range n {
+				sinkFace = in.faces[k%tableSize].Or(in.faces[(k+11)%tableSize])
+			}
+		}},
+		{"Entails", func(in *operands, n int) {
+			for k := range n {
+				sinkBool = in.faces[k%tableSize].Entails(in.faces[(k+11)%tableSize])
+			}
+		}},
+		{"Forall", func(in *operands, n int) {
+			for k := range n {
+				sinkFace = in.faces[k%tableSize].Forall(Name(k % 8))
+			}
+		}},
+		{"FaceSubstEnd", func(in *operands, n int) {
+			for k := range n {
+				sinkFace = in.faces[k%tableSize].Subst(zero)
+			}
+		}},
+	} {
+		for _, shape := range []struct {
+			name string
+			in   *operands
+		}{{"Literal", &one}, {"Two", &two}} {
+			b.Run(bench.name+"/"+shape.name, func(b *testing.B) {
+				base := baseline(b.N)
+				b.ReportAllocs()
+				b.ResetTimer()
+				bench.run(shape.in, b.N)
+				b.StopTimer()
+				b.ReportMetric(float64(b.Elapsed())/float64(max(base, 1)), "x/base")
+			})
+		}
 	}
-	s := Assign(3, Zero())
-	r := Rename(3, 6)
-	miss := Assign(20, Zero())
-	run := func(name string, f func(k int)) {
-		_ = f
-	}
-	_ = run
-	b.Run("Min1", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkDim = d1[k%tableSize].Min(e1[k%tableSize])
+}
+
+// Making a substitution and asking it what it may skip.
+func BenchmarkSubst(b *testing.B) {
+	rename := NewSubst([]Name{1, 2}, []Dim{Var(7), Lit(8, true)})
+	b.Run("AssignEnd", func(b *testing.B) {
+		b.ReportAllocs()
+		for k := range b.N {
+			sinkBool = Assign(Name(k%8), One()).IsEnds()
 		}
 	})
-	b.Run("Max1", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkDim = d1[k%tableSize].Max(e1[k%tableSize])
+	b.Run("Skippable", func(b *testing.B) {
+		b.ReportAllocs()
+		for range b.N {
+			sinkBool = rename.Skippable(3, 6, 63)
 		}
 	})
-	b.Run("Rev1", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkDim = d1[k%tableSize].Rev()
+	b.Run("Compose", func(b *testing.B) {
+		b.ReportAllocs()
+		end := Assign(7, Zero())
+		for range b.N {
+			sinkBool = rename.Compose(end) == nil
 		}
 	})
-	b.Run("And1", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkFace = f1[k%tableSize].And(g1[k%tableSize])
+	b.Run("Extend", func(b *testing.B) {
+		b.ReportAllocs()
+		for range b.N {
+			sinkBool = rename.Extend(3, One()) == nil
 		}
 	})
-	b.Run("Or1", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkFace = f1[k%tableSize].Or(g1[k%tableSize])
+}
+
+// Large normal forms: 4096 conjunctions from twelve joins, and their reversal.
+func BenchmarkLarge(b *testing.B) {
+	large := clauses(12, 0)
+	b.Run("Min", func(b *testing.B) {
+		for range b.N {
+			sinkDim = clauses(12, 0)
 		}
 	})
-	b.Run("Ent1", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkBool = f1[k%tableSize].Entails(g1[k%tableSize])
+	b.Run("Rev", func(b *testing.B) {
+		for range b.N {
+			sinkDim = large.Rev()
 		}
 	})
-	b.Run("Eq1", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkBool = d1[k%tableSize].Equal(e1[k%tableSize])
-		}
-	})
-	b.Run("Sup1", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkSup = d1[k%tableSize].Support()
-		}
-	})
-	b.Run("Sup2", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkSup = d2[k%tableSize].Support()
-		}
-	})
-	b.Run("SubstEnd1", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkDim = d1[k%tableSize].Subst(s)
-		}
-	})
-	b.Run("SubstMiss1", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkDim = d1[k%tableSize].Subst(miss)
-		}
-	})
-	b.Run("SubstRen1", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkDim = d1[k%tableSize].Subst(r)
-		}
-	})
-	b.Run("FSubstEnd1", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkFace = f1[k%tableSize].Subst(s)
-		}
-	})
-	b.Run("IsEnd", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkBool = d1[k%tableSize].IsEnd()
-		}
-	})
-	b.Run("Is0", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkFace = d1[k%tableSize].Is0()
-		}
-	})
-	b.Run("Copy", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkDim = d1[k%tableSize]
-		}
-	})
-	b.Run("Min2", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkDim = d2[k%tableSize].Min(e2[k%tableSize])
-		}
-	})
-	b.Run("Max2", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkDim = d2[k%tableSize].Max(e2[k%tableSize])
-		}
-	})
-	b.Run("Rev2", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkDim = d2[k%tableSize].Rev()
-		}
-	})
-	b.Run("And2", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkFace = f2[k%tableSize].And(g2[k%tableSize])
-		}
-	})
-	b.Run("Or2", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkFace = f2[k%tableSize].Or(g2[k%tableSize])
-		}
-	})
-	b.Run("Ent2", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkBool = f2[k%tableSize].Entails(g2[k%tableSize])
-		}
-	})
-	b.Run("SubstEnd2", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkDim = d2[k%tableSize].Subst(s)
-		}
-	})
-	b.Run("SubstRen2", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkDim = d2[k%tableSize].Subst(r)
-		}
-	})
-	b.Run("FSubstEnd2", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkFace = f2[k%tableSize].Subst(s)
-		}
-	})
-	b.Run("Is0-2", func(b *testing.B) {
-		for k := 0; k < b.N; k++ {
-			sinkFace = d2[k%tableSize].Is0()
+	b.Run("SubstEnd", func(b *testing.B) {
+		end := Assign(3, One())
+		for range b.N {
+			sinkDim = large.Subst(end)
 		}
 	})
 }

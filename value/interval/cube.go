@@ -98,9 +98,9 @@ func (c Cube) Restriction() *Subst {
 			return &endTable[leadingZeros(w)]
 		}
 	}
-	entries := make([]entry, 0, c.Len())
-	c.conj.literals(func(n Name, second bool) { entries = append(entries, newEntry(n, end(second))) })
-	return substOf(entries)
+	s := newSubst(c.Len())
+	c.conj.literals(func(n Name, second bool) { s.push(newEntry(n, end(second))) })
+	return s.done()
 }
 
 // end returns the end 1 or 0.

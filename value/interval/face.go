@@ -74,19 +74,18 @@ func (f Face) Entails(g Face) bool { return f.form.entails(&g.form) }
 
 // Forall returns the largest face without n that entails f; it is f without
 // the cubes that mention n (CCHM 4.1).
-func (f Face) Forall(n Name) Face {
+func (f Face) Forall(n Name) (r Face) {
 	if !f.Mentions(n) {
 		return f
 	}
-	if ws, ok := f.form.words(); ok {
-		var buf [4]uint64
-		out := buf[:0]
-		for _, w := range ws {
-			if w&nameMask(n) == 0 {
-				out = append(out, w)
+	if f.form.wide == nil {
+		for i := range f.form.n {
+			if w := f.form.w[i&3]; w&nameMask(n) == 0 {
+				r.form.w[r.form.n&3] = w
+				r.form.n++
 			}
 		}
-		return Face{formOfWords(out)}
+		return r
 	}
 	var out []conj
 	for _, c := range f.form.conjs() {
@@ -94,7 +93,8 @@ func (f Face) Forall(n Name) Face {
 			out = append(out, c)
 		}
 	}
-	return Face{formOfConjs(out)}
+	r.form = formOfConjs(out)
+	return r
 }
 
 // Subst returns f with the substitution put in. Panics with a *SizeError when

@@ -184,6 +184,17 @@ func (f *form) isZero() bool { return f.n == 0 && f.wide == nil }
 // isOne reports whether f has the conjunction without literals.
 func (f *form) isOne() bool { return f.n == 1 && f.w[0] == 0 }
 
+// absorbs reports whether an inline f has a word that absorbs w, other than w
+// itself when strict is set.
+func (f *form) absorbs(w uint64, strict bool) bool {
+	for i := range f.n {
+		if v := f.w[i&3]; v&^w == 0 && (v != w || !strict) {
+			return true
+		}
+	}
+	return false
+}
+
 // join returns the disjunction of two normal forms.
 func (f *form) join(g *form) form {
 	if g.isZero() || f.isOne() {
@@ -192,12 +203,16 @@ func (f *form) join(g *form) form {
 	if f.isZero() || g.isOne() {
 		return *g
 	}
+	if f.wide == nil && g.wide == nil {
+		var b block
+		b.join(f, g)
+		return b.form()
+	}
 	var k work
 	a, low := f.words()
 	b, ok := g.words()
 	if low && ok {
-		var buf [8]uint64
-		out := append(buf[:0], a...)
+		out := slices.Clone(a)
 		k.add(smallCost*len(b), len(a))
 		for _, w := range b {
 			out = addWord(out, w, &k)
@@ -220,12 +235,16 @@ func (f *form) meet(g *form, faces bool) form {
 	if f.isOne() || g.isZero() {
 		return *g
 	}
+	if f.wide == nil && g.wide == nil {
+		var b block
+		b.meet(f, g, faces)
+		return b.form()
+	}
 	var k work
 	a, low := f.words()
 	b, ok := g.words()
 	if low && ok {
-		var buf [16]uint64
-		return formOfWords(meetWords(buf[:0], a, b, faces, &k))
+		return formOfWords(meetWords(nil, a, b, faces, &k))
 	}
 	return formOfConjs(meetConjs(f.conjs(), g.conjs(), faces, &k))
 }
@@ -233,9 +252,14 @@ func (f *form) meet(g *form, faces bool) form {
 // transversal returns the meet, over the conjunctions of f, of the disjunctions
 // of their literals.
 func (f *form) transversal(faces bool, k *work) form {
+	if f.wide == nil {
+		var b block
+		if b.transversal(f, faces) {
+			return b.form()
+		}
+	}
 	if ws, ok := f.words(); ok {
-		var buf [16]uint64
-		return formOfWords(transversalWords(buf[:0], ws, faces, k))
+		return formOfWords(transversalWords(nil, ws, faces, k))
 	}
 	return formOfConjs(transversalConjs(f.conjs(), faces, k))
 }
@@ -243,12 +267,11 @@ func (f *form) transversal(faces bool, k *work) form {
 // reverse returns the reversal of f, which is the form of a Dim.
 func (f *form) reverse(k *work) form {
 	if f.wide == nil {
-		var out [16]uint64
-		swapped := f.w
-		for i := range swapped {
-			swapped[i] = swapWord(swapped[i])
+		swapped := *f
+		for i := range f.n {
+			swapped.w[i&3] = swapWord(f.w[i&3])
 		}
-		return formOfWords(transversalWords(out[:0], swapped[:f.n], false, k))
+		return swapped.transversal(false, k)
 	}
 	dual := f.transversal(false, k)
 	return dual.swap(false)

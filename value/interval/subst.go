@@ -40,27 +40,41 @@ type entry struct {
 // going to 0 at 2k and to 1 at 2k+1. It is never written after initialisation.
 var endTable = func() (table [126]Subst) {
 	for k := range table {
-		table[k] = *substOf([]entry{newEntry(Name(k/2), end(k%2 == 1))})
+		s := newSubst(1)
+		s.push(newEntry(Name(k/2), end(k%2 == 1)))
+		table[k] = *s.done()
 	}
 	return table
 }()
 
 func newEntry(n Name, d Dim) entry { return entry{n, d, d.Support()} }
 
-// sortEntries puts entries in the order of their names, keeping the order of
-// those with the same name.
-func sortEntries(entries []entry) {
-	slices.SortStableFunc(entries, func(a, b entry) int { return cmp.Compare(a.name, b.name) })
+// newSubst returns a substitution to push up to size entries on.
+func newSubst(size int) *Subst {
+	s := &Subst{first: entry{name: -1}}
+	if size > 1 {
+		s.rest = make([]entry, 0, size-1)
+	}
+	return s
 }
 
-// substOf returns the substitution of sorted entries, dropping identities. It
-// keeps the slice.
-func substOf(entries []entry) *Subst {
-	entries = slices.DeleteFunc(entries, entry.isIdentity)
-	if len(entries) == 0 {
+// push adds an entry whose name is above those before, unless it is the
+// identity.
+func (s *Subst) push(e entry) {
+	switch {
+	case e.isIdentity():
+	case s.first.name < 0:
+		s.first = e
+	default:
+		s.rest = append(s.rest, e)
+	}
+}
+
+// done returns the substitution of the entries pushed, and nil for none.
+func (s *Subst) done() *Subst {
+	if s.first.name < 0 {
 		return nil
 	}
-	s := &Subst{first: entries[0], rest: entries[1:]}
 	s.summarise()
 	return s
 }
@@ -110,26 +124,20 @@ func (s *Subst) entry(k int) *entry {
 	return &s.rest[k-1]
 }
 
-// entries returns a copy of the entries.
-func (s *Subst) entries() []entry {
-	out := make([]entry, 0, s.Len())
-	out = append(out, s.first)
-	return append(out, s.rest...)
-}
-
 // Assign returns [n:=d], which is nil when d is n itself. For an end d and n
 // below 63 it does not allocate.
 func Assign(n Name, d Dim) *Subst {
 	if d.IsEnd() && uint32(n) < 63 {
 		return &endTable[2*int(n)+d.form.n]
 	}
-	e := newEntry(n, d)
-	if e.isIdentity() {
-		return nil
-	}
-	s := &Subst{first: e}
-	s.summarise()
-	return s
+	return assign(n, &d)
+}
+
+// assign is Assign for what is not in the table.
+func assign(n Name, d *Dim) *Subst {
+	s := newSubst(1)
+	s.push(newEntry(n, *d))
+	return s.done()
 }
 
 // Rename returns [n:=m], which is nil when the names are the same.
@@ -140,13 +148,18 @@ func Rename(n, m Name) *Subst { return Assign(n, Var(m)) }
 // longer slice is ignored. It keeps neither slice.
 func NewSubst(names []Name, dims []Dim) *Subst {
 	count := min(len(names), len(dims))
-	entries := make([]entry, 0, count)
-	for k := count - 1; k >= 0; k-- {
-		entries = append(entries, newEntry(names[k], dims[k]))
+	order := make([]int, count)
+	for k := range order {
+		order[k] = k
 	}
-	sortEntries(entries)
-	entries = slices.CompactFunc(entries, func(a, b entry) bool { return a.name == b.name })
-	return substOf(entries)
+	slices.SortStableFunc(order, func(a, b int) int { return cmp.Compare(names[a], names[b]) })
+	s := newSubst(count)
+	for j, k := range order {
+		if j+1 == count || names[order[j+1]] != names[k] {
+			s.push(newEntry(names[k], dims[k]))
+		}
+	}
+	return s.done()
 }
 
 // Lookup returns the image of n; ok is false when that is n itself.
@@ -204,19 +217,19 @@ func (s *Subst) Extend(n Name, d Dim) *Subst {
 	if s == nil {
 		return Assign(n, d)
 	}
-	entries := make([]entry, 0, s.Len()+1)
+	out := newSubst(s.Len() + 1)
 	k := 0
 	for ; k < s.Len() && s.entry(k).name < n; k++ {
-		entries = append(entries, *s.entry(k))
+		out.push(*s.entry(k))
 	}
-	entries = append(entries, newEntry(n, d))
+	out.push(newEntry(n, d))
 	if k < s.Len() && s.entry(k).name == n {
 		k++
 	}
 	for ; k < s.Len(); k++ {
-		entries = append(entries, *s.entry(k))
+		out.push(*s.entry(k))
 	}
-	return substOf(entries)
+	return out.done()
 }
 
 // Without returns s with n sent to itself. It is s when s does not change n.
@@ -224,7 +237,13 @@ func (s *Subst) Without(n Name) *Subst {
 	if _, ok := s.Lookup(n); !ok {
 		return s
 	}
-	return substOf(slices.DeleteFunc(s.entries(), func(e entry) bool { return e.name == n }))
+	out := newSubst(s.Len())
+	for k := range s.Len() {
+		if e := s.entry(k); e.name != n {
+			out.push(*e)
+		}
+	}
+	return out.done()
 }
 
 // RestrictTo returns s without the names that are not in sup: s itself when it
@@ -237,7 +256,13 @@ func (s *Subst) RestrictTo(sup Support) *Subst {
 	if s.dom&sup == 0 {
 		return nil
 	}
-	return substOf(slices.DeleteFunc(s.entries(), func(e entry) bool { return !sup.Has(e.name) }))
+	out := newSubst(s.Len())
+	for k := range s.Len() {
+		if e := s.entry(k); sup.Has(e.name) {
+			out.push(*e)
+		}
+	}
+	return out.done()
 }
 
 // Compose returns the substitution that does s first and t on the result.
@@ -248,23 +273,25 @@ func (s *Subst) Compose(t *Subst) *Subst {
 	if t == nil {
 		return s
 	}
-	entries := make([]entry, 0, s.Len()+t.Len())
-	for k := range s.Len() {
-		e := s.entry(k)
+	out := newSubst(s.Len() + t.Len())
+	for i, j := 0, 0; i < s.Len() || j < t.Len(); {
+		if i == s.Len() || j < t.Len() && t.entry(j).name < s.entry(i).name {
+			out.push(*t.entry(j))
+			j++
+			continue
+		}
+		e := s.entry(i)
+		i++
+		if j < t.Len() && t.entry(j).name == e.name {
+			j++
+		}
 		if e.sup&t.dom == 0 {
-			entries = append(entries, *e)
+			out.push(*e)
 		} else {
-			entries = append(entries, newEntry(e.name, e.dim.Subst(t)))
+			out.push(newEntry(e.name, e.dim.Subst(t)))
 		}
 	}
-	for k := range t.Len() {
-		e := t.entry(k)
-		if _, ok := s.Lookup(e.name); !ok {
-			entries = append(entries, *e)
-		}
-	}
-	sortEntries(entries)
-	return substOf(entries)
+	return out.done()
 }
 
 // Skippable reports whether substituting by s may merely relabel a value with
@@ -287,6 +314,9 @@ func (s *Subst) Skippable(frontier, faces, sup Support) bool {
 		return true
 	}
 	sup |= frontier | faces
+	if s.dom&sup == 0 {
+		return true
+	}
 	// The untouched names of the support; from 63 up there may always be some.
 	once := sup &^ (s.dom &^ distantBit)
 	twice := Support(0)

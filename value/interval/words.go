@@ -182,17 +182,117 @@ func transversalWords(dst, ws []uint64, faces bool, k *work) []uint64 {
 	return append(dst[:0], done...)
 }
 
+// block is room on the stack for what up to four words by four words make.
+// Indices are masked to spare the checks of their bounds.
+type block struct {
+	words [16]uint64
+	n     int
+}
+
+// add joins w to the antichain in the block, which must have room.
+func (b *block) add(w uint64) {
+	kept := 0
+	for k := 0; k < b.n; k++ {
+		v := b.words[k&15]
+		if v&^w == 0 {
+			// Nothing was dropped: w absorbs no word when a word absorbs w.
+			return
+		}
+		if w&^v != 0 {
+			b.words[kept&15] = v
+			kept++
+		}
+	}
+	b.words[kept&15] = w
+	b.n = kept + 1
+}
+
+// meet fills the empty block with the meet of two inline antichains.
+func (b *block) meet(f, g *form, faces bool) {
+	for i := range f.n {
+		v := f.w[i&3]
+		for j := range g.n {
+			if u := v | g.w[j&3]; !faces || consistentWord(u) {
+				b.add(u)
+			}
+		}
+	}
+}
+
+// join fills the empty block with the join of two inline antichains, in order.
+func (b *block) join(f, g *form) {
+	for i, j := 0, 0; i < f.n || j < g.n; {
+		if j == g.n || i < f.n && f.w[i&3] >= g.w[j&3] {
+			w := f.w[i&3]
+			i++
+			if !g.absorbs(w, true) {
+				b.words[b.n&15] = w
+				b.n++
+			}
+		} else {
+			w := g.w[j&3]
+			j++
+			if !f.absorbs(w, false) {
+				b.words[b.n&15] = w
+				b.n++
+			}
+		}
+	}
+}
+
+// transversal fills the empty block with transversalWords of an inline
+// antichain; ok is false when it runs out of room.
+func (b *block) transversal(f *form, faces bool) (ok bool) {
+	b.add(0)
+	for i := range f.n {
+		old := *b
+		b.n = 0
+		for k := range old.n {
+			v := old.words[k&15]
+			for w := f.w[i&3]; w != 0; w &= w - 1 {
+				if b.n == len(b.words) {
+					return false
+				}
+				if u := v | w&-w; !faces || consistentWord(u) {
+					b.add(u)
+				}
+			}
+		}
+	}
+	return true
+}
+
+// form returns the normal form of the block, which it sorts.
+func (b *block) form() (f form) {
+	ws := b.words[:b.n&31]
+	sortFew(ws)
+	if len(ws) > len(f.w) {
+		f.wide = wideOfWords(ws)
+		return f
+	}
+	f.n = len(ws)
+	for k, w := range ws {
+		f.w[k&3] = w
+	}
+	return f
+}
+
 // sortWords puts an antichain into the canonical order.
 func sortWords(ws []uint64) {
-	if len(ws) > smallChain {
-		slices.SortFunc(ws, func(a, b uint64) int {
-			if a > b {
-				return -1
-			}
-			return 1
-		})
+	if len(ws) <= smallChain {
+		sortFew(ws)
 		return
 	}
+	slices.SortFunc(ws, func(a, b uint64) int {
+		if a > b {
+			return -1
+		}
+		return 1
+	})
+}
+
+// sortFew is sortWords for a few words.
+func sortFew(ws []uint64) {
 	for i := 1; i < len(ws); i++ {
 		w := ws[i]
 		j := i
