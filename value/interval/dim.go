@@ -113,7 +113,8 @@ func (d Dim) Equal(e Dim) bool { return d.form.equal(&e.form) }
 // the names. Conjunctions are compared in turn, each literal by literal.
 func (d Dim) Compare(e Dim) int { return d.form.compare(&e.form) }
 
-// AtMost reports whether d <= e in the lattice order.
+// AtMost reports whether d <= e in the lattice order. It makes at most
+// d.Len()*e.Len() comparisons of conjunctions.
 func (d Dim) AtMost(e Dim) bool { return d.form.entails(&e.form) }
 
 // Support returns the names in d; it is exact below 63.

@@ -69,7 +69,8 @@ func (f Face) Equal(g Face) bool { return f.form.equal(&g.form) }
 // the names. Cubes are compared in turn.
 func (f Face) Compare(g Face) int { return f.form.compare(&g.form) }
 
-// Entails reports whether f <= g: whenever f holds, so does g.
+// Entails reports whether f <= g: whenever f holds, so does g. It makes at most
+// f.Len()*g.Len() comparisons of cubes.
 func (f Face) Entails(g Face) bool { return f.form.entails(&g.form) }
 
 // Forall returns the largest face without n that entails f; it is f without
