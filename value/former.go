@@ -122,7 +122,7 @@ type Checker interface {
 	// variables and dimensions, by level; it must mention no others.
 	Compile(core Core, variables, dimensions []int) Case
 	// Declare makes name stand for n until the declaration that is being
-	// checked has ended.
+	// checked has ended, or for nothing again if n is nil.
 	Declare(name string, n Named)
 }
 

@@ -88,12 +88,18 @@ func Peek(v Value) Value {
 	return v
 }
 
-func (r *Run) force(l *Lazy) (v Value) {
+func (r *Run) force(l *Lazy) Value {
 	if r.Enter() {
-		r.Hop(func() { v = r.forceChain(l) })
-	} else {
-		v = r.forceChain(l)
+		return r.forceHop(l)
 	}
+	v := r.forceChain(l)
+	r.Leave()
+	return v
+}
+
+//go:noinline
+func (r *Run) forceHop(l *Lazy) (v Value) {
+	r.Hop(func() { v = r.forceChain(l) })
 	r.Leave()
 	return v
 }

@@ -83,6 +83,7 @@ type Run struct {
 	refreshed map[*Neutral]Value
 	stack     [][]Value // segments of call frames
 	top       []Value   // what is left of the current segment
+	spare     []Value   // a segment that is not in use
 }
 
 // Settings are what a run is made with.
@@ -225,19 +226,36 @@ func (r *Run) Fresh(avoid Support) Name {
 	return Name(r.high.Add(1))
 }
 
-// frameSegment is how many slots of call frames are allocated together.
-const frameSegment = 1024
+// frameSegment is how many slots of call frames are allocated together; the
+// first segment of a run is small, since most runs are.
+const (
+	firstSegment = 64
+	frameSegment = 1024
+)
 
 // Frame returns n slots for a call frame, to be given back with Release in the
 // opposite order. Nothing may keep a frame after its release.
 func (r *Run) Frame(n int) []Value {
 	if len(r.top) < n {
-		r.stack = append(r.stack, r.top)
-		r.top = make([]Value, max(frameSegment, n))
+		r.segment(n)
 	}
 	f := r.top[:n:n]
 	r.top = r.top[n:]
 	return f
+}
+
+//go:noinline
+func (r *Run) segment(n int) {
+	size := frameSegment
+	if r.stack == nil {
+		size = firstSegment
+	}
+	r.stack = append(r.stack, r.top)
+	if len(r.spare) >= n {
+		r.top, r.spare = r.spare, nil
+		return
+	}
+	r.top = make([]Value, max(size, n))
 }
 
 // FrameMark remembers the state of the frames for Release.
@@ -251,11 +269,25 @@ func (r *Run) Mark() FrameMark { return FrameMark{r.top, len(r.stack)} }
 
 // Release gives back every frame taken since the mark.
 func (r *Run) Release(m FrameMark) {
+	if len(r.stack) > m.segments {
+		r.shrink(m.segments)
+	}
 	r.top = m.top
-	r.stack = r.stack[:m.segments]
 }
 
-// Pass refuses a form where the interval's algebra has grown too large.
+// shrink drops segments, but keeps one so that work at the edge of a segment
+// does not allocate one each time.
+//
+//go:noinline
+func (r *Run) shrink(segments int) {
+	if r.spare == nil && len(r.stack) == segments+1 {
+		if full := r.top[:cap(r.top)]; len(full) >= frameSegment/2 {
+			r.spare = full
+		}
+	}
+	r.stack = r.stack[:segments]
+}
+
 func recoverSize(thrown any) (*term.Error, bool) {
 	e, ok := thrown.(*interval.SizeError)
 	if !ok {
