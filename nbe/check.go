@@ -437,8 +437,15 @@ func (c *checker) Compile(core term.Core, variables, dimensions []int) value.Cas
 	return eval.Compile(c.run, c.e, core, len(c.variables), len(c.dimensions), variables, dimensions).Case(c.run)
 }
 
-// Declare makes name stand for n until the declaration has ended.
-func (c *checker) Declare(name string, n value.Named) { c.declared[name] = n }
+// Declare makes name stand for n until the declaration has ended, or for
+// nothing again if n is nil.
+func (c *checker) Declare(name string, n value.Named) {
+	if n == nil {
+		delete(c.declared, name)
+		return
+	}
+	c.declared[name] = n
+}
 
 // inside runs body and restores the scope.
 func (c *checker) inside(body func()) {

@@ -33,6 +33,7 @@ type Argument struct {
 	Used      []int      // the levels of parameters and earlier arguments it mentions
 	Dependent bool       // it mentions an earlier argument of the constructor
 	Recursive *Recursion // how the data type occurs in it, nil if it does not
+	steady    bool       // transport along a constant line of it is the identity
 }
 
 // Constructor is a point or path constructor of a declaration.
@@ -44,6 +45,7 @@ type Constructor struct {
 	Dims      []string // the names of its dimensions
 	Boundary  []Boundary
 	Commutes  bool // it commutes with transport; otherwise a composite corrects it
+	ends      bool // a recursive argument is a path
 	constant  value.Value
 	reference term.Reference
 }

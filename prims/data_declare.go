@@ -11,10 +11,14 @@ import (
 // Declare checks a data declaration in an empty scope. Decisions about it
 // ("mentions", "built from", "free of") are taken on normal forms, where the
 // η-expansion of a variable counts as that variable.
+//
+// The level of a data type is the largest of its arguments' types, itself
+// counting 0, which is known only at the end. Where it is above 0 everything is
+// checked once more with the type at its level, since a type at 0 would pass
+// for an element of a universe that it is too large for.
 func Declare(c value.Checker, w *term.Declaration) *Data {
-	at := &term.Written{Kind: term.NameKind, Word: w.Name, Place: w.Place}
-	d := &Data{Name: w.Name, Formal: treatment(c, at, w)}
-	d.eliminator = term.Reference{Name: d.Name, Index: -1, Target: d}
+	at := written(w.Name, w.Place)
+	formal := treatment(c, at, w)
 	names := map[string]bool{w.Name: true}
 	for _, k := range w.Constructors {
 		if names[k.Name] {
@@ -22,6 +26,21 @@ func Declare(c value.Checker, w *term.Declaration) *Data {
 		}
 		names[k.Name] = true
 	}
+	d := declare(c, w, formal, 0)
+	if d.raised > d.Level {
+		for _, k := range w.Constructors {
+			c.Declare(k.Name, nil)
+		}
+		d = declare(c, w, formal, d.raised)
+	}
+	d.declared = true
+	return d
+}
+
+// declare checks the declaration with its data type at the given level.
+func declare(c value.Checker, w *term.Declaration, formal bool, level int) *Data {
+	d := &Data{Name: w.Name, Formal: formal, Level: level}
+	d.eliminator = term.Reference{Name: d.Name, Index: -1, Target: d}
 	c.Declare(d.Name, d)
 	c.Binders(func(b value.CheckerBinding) value.Core {
 		x := &declaring{c: c, run: c.Run(), d: d}
@@ -42,7 +61,6 @@ func Declare(c value.Checker, w *term.Declaration) *Data {
 		}
 		return nil
 	})
-	d.Level, d.declared = d.raised, true
 	return d
 }
 
@@ -89,6 +107,16 @@ func (x *declaring) argument(name string, core term.Core) Argument {
 	return Argument{Name: name, Core: core, Used: used, Type: x.c.Compile(core, used, nil)}
 }
 
+// mentions reports whether a normal form mentions the data type or its constructors.
+func (x *declaring) mentions(c term.Core) bool {
+	return term.References(c, func(r term.Reference) bool {
+		if k, ok := r.Target.(*Constructor); ok {
+			return k.Data == x.d
+		}
+		return r.Target == any(x.d)
+	})
+}
+
 func (x *declaring) constructor(w *term.Constructor) *Constructor {
 	k := &Constructor{Data: x.d, Name: w.Name, Commutes: true}
 	if w.Path && len(w.Dims) == 0 {
@@ -96,25 +124,30 @@ func (x *declaring) constructor(w *term.Constructor) *Constructor {
 	}
 	x.c.Binders(func(b value.CheckerBinding) value.Core {
 		c := x.c
+		var arguments []variable
 		for _, p := range w.Args {
 			core, level := c.Type(p.Type)
 			x.d.raise(level)
 			a := x.argument(p.Name, core)
 			t := c.Value(core)
 			nf := c.Normal(t)
-			a.Recursive = x.recursion(p.Type, nf, x.depth())
+			if x.mentions(nf) {
+				a.Recursive = x.recursion(p.Type, nf, t)
+				k.ends = k.ends || a.Recursive.hasPath()
+			}
+			a.steady = x.steady(nf)
 			n, _ := c.Scope()
 			for _, used := range term.FreeVariables(nf, n) {
 				a.Dependent = a.Dependent || used >= len(x.params)
 			}
-			b.Variable(term.Binder{Name: p.Name, Place: p.Place}, t)
+			arguments = append(arguments, variable{t, b.Variable(term.Binder{Name: p.Name, Place: p.Place}, t), nil})
 			k.Args = append(k.Args, a)
 		}
 		for _, i := range w.Dims {
 			b.Dimension(i)
 			k.Dims = append(k.Dims, i.Name)
 		}
-		x.boundary(k, w)
+		x.boundary(k, w, arguments)
 		return nil
 	})
 	return k
@@ -128,7 +161,7 @@ func (d *Data) raise(level int) {
 // boundary checks the walls of a path constructor's boundary and that they
 // agree where their faces meet, and decides whether the constructor commutes
 // with transport.
-func (x *declaring) boundary(k *Constructor, w *term.Constructor) {
+func (x *declaring) boundary(k *Constructor, w *term.Constructor, arguments []variable) {
 	c, run := x.c, x.run
 	t := NewDataType(x.d, x.params)
 	variables, dims := c.Scope()
@@ -144,7 +177,7 @@ func (x *declaring) boundary(k *Constructor, w *term.Constructor) {
 						&term.Error{Kind: term.Disagreement, Place: wall.Element.Place, Message: "the boundary of " + k.Name + " disagrees where its faces meet"})
 				})
 			}
-			if !x.commutes(c.NormalAt(here, c.Value(core)), x.depth()) {
+			if k.Commutes && !x.commutes(c.NormalAt(here, c.Value(core)), arguments) {
 				k.Commutes = false
 			}
 			k.Boundary = append(k.Boundary, Boundary{cube, core, c.Compile(core, levels(variables), levels(dims))})
@@ -173,151 +206,141 @@ func irredundantBoundary(walls []Boundary) []Boundary {
 	return out
 }
 
-// depth is a number of variables and of dimensions in scope.
-type depth struct{ variables, dimensions int }
-
-func (x *declaring) depth() depth {
-	v, d := x.c.Scope()
-	return depth{v, d}
+// variable is an argument variable of the constructor that is being declared,
+// with its normal form once somebody has asked for it.
+type variable struct {
+	t, v   value.Value
+	normal term.Core
 }
 
-// commutes reports whether a normal boundary element is built from argument
-// variables, dimensions, and constructors that commute with transport, alone.
-func (x *declaring) commutes(c term.Core, at depth) bool {
-	c = etaReduce(c, at)
+// isArgument reports whether a normal form is the η-expansion of an argument variable.
+func (x *declaring) isArgument(c term.Core, arguments []variable) bool {
 	if v, ok := c.(*term.Variable); ok {
 		return v.Level >= len(x.params)
 	}
-	o, ok := c.(*term.Op)
-	if !ok {
-		return false
-	}
-	switch o.Sig {
-	case numeralSig:
-		return true
-	case conSig:
-		con, ok := o.Args[0].(term.Reference).Target.(*Constructor)
-		if !ok || !con.Commutes || con.Data != x.d {
-			return false
+	for k := range arguments {
+		if arguments[k].normal == nil {
+			arguments[k].normal = x.c.NormalAt(arguments[k].t, arguments[k].v)
 		}
-		for _, a := range o.Args[2:] {
-			if core, ok := a.(term.Core); ok && !x.commutes(core, at) {
-				return false
-			}
+		if term.Same(arguments[k].normal, c) {
+			return true
 		}
-		return true
 	}
 	return false
 }
 
-// etaReduce undoes η at the root of a normal form, as often as it can:
-// λx.(f x), ⟨i⟩(p @ i), (fst p, snd p).
-func etaReduce(c term.Core, at depth) term.Core {
-	o, ok := c.(*term.Op)
-	if !ok {
-		return c
+// commutes reports whether a normal boundary element is built from argument
+// variables, dimensions, and constructors that commute with transport, alone.
+func (x *declaring) commutes(c term.Core, arguments []variable) (ok bool) {
+	o, isOp := c.(*term.Op)
+	if !isOp {
+		return x.isArgument(c, arguments)
 	}
 	switch o.Sig {
-	case lamSig, lamDimensionSig, pathLamSig:
-		inside := depth{at.variables, at.dimensions + 1}
-		if o.Sig == lamSig {
-			inside = depth{at.variables + 1, at.dimensions}
-		}
-		body, ok := etaReduce(o.Args[0].(*term.Bound).Body, inside).(*term.Op)
-		if !ok || (body.Sig != applySig && body.Sig != atSig) {
-			return c
-		}
-		head := body.Args[0].(term.Core)
-		switch arg := body.Args[1].(type) {
-		case term.Dimension:
-			n := interval.Name(at.dimensions)
-			if o.Sig == lamSig || !arg.Equal(interval.Var(n)) || mentionsDimension(head, n) {
-				return c
+	case numeralSig, unitSig:
+		return true
+	case conSig:
+		con := o.Args[0].(term.Reference).Target.(*Constructor)
+		ok = con.Commutes
+		x.run.Down(func() {
+			for n := range con.Args {
+				a := o.Args[2+n].(term.Core)
+				// Transport at a data type without parameters is the identity,
+				// so its constructors commute only where that is also so for
+				// what they are applied to.
+				ok = ok && x.commutes(a, arguments) &&
+					(con.Data == x.d || len(con.Data.Params) > 0 || con.Args[n].steady || x.closed(a))
 			}
-		case term.Core:
-			v, ok := etaReduce(arg, inside).(*term.Variable)
-			if !ok || o.Sig != lamSig || v.Level != at.variables || mentionsVariable(head, v.Level) {
-				return c
-			}
-		}
-		return head
-	case pairSig:
-		a, ok1 := etaReduce(o.Args[0].(term.Core), at).(*term.Op)
-		b, ok2 := etaReduce(o.Args[1].(term.Core), at).(*term.Op)
-		if ok1 && ok2 && a.Sig == firstSig && b.Sig == secondSig && term.Same(a.Args[0].(term.Core), b.Args[0].(term.Core)) {
-			return a.Args[0].(term.Core)
-		}
+		})
+		return ok
 	}
-	return c
+	return x.isArgument(c, arguments)
 }
 
-func mentionsVariable(c term.Core, level int) (found bool) {
-	term.Walk(c, func(a term.Arg) bool {
-		if v, ok := a.(*term.Variable); ok && v.Level == level {
-			found = true
+// closed reports whether c mentions no variable.
+func (x *declaring) closed(c term.Core) bool {
+	n, _ := x.c.Scope()
+	return len(term.FreeVariables(c, n)) == 0
+}
+
+// steady reports whether transport along a constant line of this normal type is
+// the identity by definition.
+func (x *declaring) steady(c term.Core) (ok bool) {
+	o, isOp := c.(*term.Op)
+	if !isOp {
+		return false
+	}
+	x.run.Down(func() {
+		switch o.Sig {
+		case unitTypeSig, universeSig:
+			ok = true
+		case dataSig:
+			ok = len(o.Args) == 1
+		case piSig, sigmaSig:
+			ok = x.steady(o.Args[0].(term.Core)) && x.steady(o.Args[1].(*term.Bound).Body)
+		case piDimensionSig:
+			ok = x.steady(o.Args[0].(*term.Bound).Body)
 		}
-		return !found
 	})
-	return found
+	return ok
 }
 
-func mentionsDimension(c term.Core, n interval.Name) (found bool) {
-	term.Walk(c, func(a term.Arg) bool {
-		switch a := a.(type) {
-		case term.Dimension:
-			found = found || a.Mentions(n)
-		case *term.Face:
-			found = found || a.Mentions(n)
-		}
-		return !found
-	})
-	return found
-}
-
-// recursion classifies the normal type of an argument, and refuses it where
-// the data type does not occur strictly positively.
-func (x *declaring) recursion(at *term.Written, nf term.Core, here depth) *Recursion {
-	mentions := func(c term.Core) bool {
-		return term.References(c, func(r term.Reference) bool { return r.Target == any(x.d) })
-	}
-	if !mentions(nf) {
-		return nil
-	}
+// recursion classifies the type of an argument that mentions the data type,
+// given with its normal form, and refuses it where the data type does not occur
+// strictly positively.
+func (x *declaring) recursion(at *term.Written, nf term.Core, t value.Value) (r *Recursion) {
+	c, run := x.c, x.run
 	refuse := func(message string) {
-		x.c.Fail(at, term.BadDeclaration, message, "the data type itself, under functions and paths", nil)
+		c.Fail(at, term.BadDeclaration, message, x.d.Name+" itself, under functions and paths", c.ShowType(t))
 	}
 	o, ok := nf.(*term.Op)
 	if !ok {
-		refuse("the data type occurs where it must not")
+		refuse(x.d.Name + " occurs where it is not known to be positive")
 		return nil
 	}
-	switch o.Sig {
-	case dataSig:
-		if o.Args[0].(term.Reference).Target != any(x.d) {
-			refuse(x.d.Name + " inside the parameters of another data type is not supported")
-		}
-		for k, a := range o.Args[1:] {
-			v, ok := etaReduce(a.(term.Core), here).(*term.Variable)
-			if !ok || v.Level != k {
-				refuse(x.d.Name + " must stand with its own parameters in order; indexed families are not supported")
+	under := func(shape recursionShape, body *term.Bound, t value.Value) {
+		run.Down(func() { r = newRecursion(shape, x.recursion(at, body.Body, t)) })
+	}
+	switch t := run.Force(t).(type) {
+	case *DataType:
+		if t.Data != x.d {
+			if x.mentions(nf) {
+				refuse(x.d.Name + " inside the parameters of another data type is not supported")
 			}
+			break
+		}
+		for k, p := range t.Params {
+			c.Same(x.d.Params[k].At(run, x.params, nil), x.params[k], p, &term.Error{Kind: term.BadDeclaration, Place: at.Place,
+				Message: x.d.Name + " must stand with its own parameters in order; indexed families are not supported"})
 		}
 		return newRecursion(recursionSelf, nil)
-	case piSig:
-		if mentions(o.Args[0].(term.Core)) {
+	case *Pi:
+		if x.mentions(o.Args[0].(term.Core)) {
 			refuse(x.d.Name + " occurs in the domain of a function, which is not positive")
 		}
-		return newRecursion(recursionPi, x.recursion(at, o.Args[1].(*term.Bound).Body, depth{here.variables + 1, here.dimensions}))
-	case piDimensionSig:
-		return newRecursion(recursionDimension, x.recursion(at, o.Args[0].(*term.Bound).Body, depth{here.variables, here.dimensions + 1}))
-	case pathSig:
-		if inner := x.recursion(at, o.Args[0].(*term.Bound).Body, depth{here.variables, here.dimensions + 1}); inner != nil {
-			return newRecursion(recursionPath, inner)
-		}
+		c.Variable(anonymous, t.Domain, func(y value.Value) value.Core {
+			under(recursionPi, o.Args[1].(*term.Bound), t.Codomain.Open(run, y))
+			return nil
+		})
+		return r
+	case *PiDimension:
+		c.Dimensioned(anonymous, func(i value.Name) value.Core {
+			under(recursionDimension, o.Args[0].(*term.Bound), t.Codomain.Open(run, value.DimensionName(i)))
+			return nil
+		})
+		return r
+	case *Path:
+		c.Dimensioned(anonymous, func(i value.Name) value.Core {
+			under(recursionPath, o.Args[0].(*term.Bound), t.Line.Open(run, value.DimensionName(i)))
+			return nil
+		})
+		return r
 	}
 	refuse(x.d.Name + " occurs where it is not known to be positive")
 	return nil
 }
+
+var anonymous = term.Binder{Name: "_"}
 
 // StoreAsNumbers makes the elements of d, declared as zero and suc, numbers.
 func (d *Data) StoreAsNumbers() {

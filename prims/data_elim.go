@@ -43,6 +43,16 @@ func newRecursion(shape recursionShape, inner *Recursion) *Recursion {
 	return r
 }
 
+// hasPath reports whether a path stands on the way to the data type.
+func (r *Recursion) hasPath() bool {
+	for ; r != nil; r = r.inner {
+		if r.shape == recursionPath {
+			return true
+		}
+	}
+	return false
+}
+
 func codomainAt(run *value.Run, t, y value.Value) value.Value {
 	switch t := run.Force(t).(type) {
 	case *Pi:
@@ -64,14 +74,23 @@ type Eliminator struct {
 	family  value.Closure
 	cases   []value.Case // by constructor; nil for those that are not given yet
 	step    *stepRule    // for numerals
+	assumed []assumption // under the binders of a case, for the types of later hypotheses
+	checked *Eliminator  // the elimination being checked that this one comes from, nil when it has all its cases
 	support value.Support
+}
+
+// assumption says what the elimination of an argument is under the binders of a
+// case, where it has a name: its hypothesis.
+type assumption struct {
+	level      int // of the argument's variable
+	hypothesis value.Value
 }
 
 // Support is the union of the parts'.
 func (e *Eliminator) Support() value.Support { return e.support }
 
 func newEliminator(d *Data, family value.Closure, cases []value.Case, step *stepRule) *Eliminator {
-	e := &Eliminator{d, family, cases, step, family.Support()}
+	e := &Eliminator{data: d, family: family, cases: cases, step: step, support: family.Support()}
 	for _, c := range cases {
 		if c != nil {
 			e.support |= c.Support()
@@ -95,7 +114,52 @@ func (e *Eliminator) substitute(run *value.Run, s *value.Subst) *Eliminator {
 			cases[k] = c.SubstituteCase(run, s)
 		}
 	}
-	return newEliminator(e.data, e.family.Substitute(run, s), cases, e.step)
+	out := newEliminator(e.data, e.family.Substitute(run, s), cases, e.step)
+	out.checked = e.checked
+	for _, a := range e.assumed {
+		out.assume(a.level, run.Substitute(a.hypothesis, s))
+	}
+	return out
+}
+
+func (e *Eliminator) assume(level int, hypothesis value.Value) {
+	e.assumed = append(e.assumed, assumption{level, hypothesis})
+	e.support |= hypothesis.Support()
+}
+
+// assuming is e where the elimination of the variable x is the hypothesis h.
+func (e *Eliminator) assuming(x, h value.Value) *Eliminator {
+	out := *e
+	out.assumed = append([]assumption(nil), e.assumed...)
+	out.assume(x.(*value.Neutral).Head().(*value.VariableHead).Level, h)
+	return &out
+}
+
+// hypothesisOf is the elimination of a neutral that is an argument with a
+// hypothesis, at the values of functions and along paths.
+func (e *Eliminator) hypothesisOf(run *value.Run, n *value.Neutral) (value.Value, bool) {
+	x, ok := n.Head().(*value.VariableHead)
+	if !ok {
+		return nil, false
+	}
+	for _, a := range e.assumed {
+		if a.level != x.Level {
+			continue
+		}
+		h := a.hypothesis
+		for _, f := range n.Frames() {
+			switch f := f.(type) {
+			case *applyFrame:
+				h = Apply(run, h, f.arg)
+			case *atFrame:
+				h = At(run, h, f.r)
+			default:
+				return nil, false
+			}
+		}
+		return h, true
+	}
+	return nil, false
 }
 
 // Eliminate eliminates v, on demand; the result may be lazy.
@@ -103,6 +167,11 @@ func (e *Eliminator) Eliminate(run *value.Run, v value.Value) value.Value {
 	v = run.Force(v)
 	switch v := v.(type) {
 	case *value.Neutral:
+		if len(e.assumed) > 0 {
+			if h, ok := e.hypothesisOf(run, v); ok {
+				return h
+			}
+		}
 		return v.Eliminate(run, &elimFrame{e})
 	case *Formal:
 		return e.composite(run, v)
@@ -215,9 +284,16 @@ func (e *Eliminator) caseBinders(run *value.Run, b binding, c *Constructor, para
 		k++
 	}
 	env = append(env, args...)
+	// The ends of a path's hypothesis are eliminations of terms over earlier
+	// arguments, whose eliminations have names here.
+	at := e
 	for n := range c.Args {
 		if r := c.Args[n].Recursive; r != nil {
-			env = append(env, b.Variable(name(k, "h"), e.hypothesisType(run, r, c.Args[n].At(run, params, args), args[n])))
+			h := b.Variable(name(k, "h"), at.hypothesisType(run, r, c.Args[n].At(run, params, args), args[n]))
+			if c.ends {
+				at = at.assuming(args[n], h)
+			}
+			env = append(env, h)
 			k++
 		}
 	}
@@ -250,6 +326,9 @@ func (f *elimFrame) ReadBack(q value.Quoter, head value.Core, t value.Value) val
 	family := q.Variable(f.family.Hint(), d, func(x value.Value) value.Core { return q.Type(f.family.Open(run, x)) })
 	rows := term.Rows{}
 	for k, c := range f.cases {
+		if c == nil {
+			continue // the elimination is being checked and stands in a message
+		}
 		con := f.data.Constructors[k]
 		b := q.Binders(func(b value.Binding) value.Core {
 			env, t := f.caseBinders(run, b, con, d.Params, func(k int, standard string) string { return hint(c.HintAt(k), standard) })
@@ -263,7 +342,7 @@ func (f *elimFrame) ReadBack(q value.Quoter, head value.Core, t value.Value) val
 
 func (f *elimFrame) Same(c value.Comparer, other value.Frame, t value.Value) bool {
 	o, ok := other.(*elimFrame)
-	if !ok || o.data != f.data {
+	if !ok || o.data != f.data || o.checked != f.checked {
 		return false
 	}
 	run := c.Run()
@@ -274,6 +353,9 @@ func (f *elimFrame) Same(c value.Comparer, other value.Frame, t value.Value) boo
 		return false
 	}
 	for k := range f.cases {
+		if f.cases[k] == nil && o.cases[k] == nil {
+			continue // both come from the one elimination that is being checked
+		}
 		con := f.data.Constructors[k]
 		if !c.Binders(func(b value.Binding) bool {
 			env, t := f.caseBinders(run, b, con, d.Params, func(k int, standard string) string { return standard })

@@ -61,11 +61,12 @@ func (t *DataType) Hcomp(run *value.Run, base value.Value, walls value.System) v
 		for k, w := range walls {
 			us[k] = value.Wall{Cube: w.Cube, I: w.I, Body: parts[k][n]}
 		}
-		a := c.Args[n].At(run, t.Params, fillers)
 		if c.Args[n].Dependent {
+			a := c.Args[n].At(run, t.Params, fillers)
 			composed[n] = LaterComp(run, i, a, args[n], us)
 			fillers[n] = Fill(run, i, a, args[n], us)
 		} else {
+			a := c.Args[n].At(run, t.Params, args) // the same at all arguments
 			composed[n] = LaterHcomp(run, a, args[n], us)
 			fillers[n] = Hfill(run, i, a, args[n], us)
 		}

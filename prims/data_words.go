@@ -134,6 +134,7 @@ func inferElim(c value.Checker, w *term.Written) (value.Core, value.Value) {
 		return core
 	})
 	e := newEliminator(d, c.Case(family, []term.Sort{term.TermSort}).AsClosure(), make([]value.Case, len(d.Constructors)), nil)
+	e.checked = e
 
 	given := arrangeCases(c, w, d)
 	rows := make(term.Rows, 0, len(given))
@@ -150,7 +151,7 @@ func inferElim(c value.Checker, w *term.Written) (value.Core, value.Value) {
 		})
 		b.Dimensions = len(con.Dims)
 		body := c.Case(b, sorts)
-		e.checkBoundary(c, p.Body, con, t.Params, body)
+		e.checkBoundary(c, p, con, t.Params, body)
 		e.cases[k] = body
 		e.support |= body.Support()
 		rows = append(rows, []term.Arg{con.reference, b})
@@ -199,7 +200,7 @@ func arrangeCases(c value.Checker, w *term.Written, d *Data) []term.Part {
 // checkBoundary requires the case of a path constructor to be, on each face of
 // the boundary, the elimination of the boundary's element, each hypothesis
 // standing for the elimination of its argument.
-func (e *Eliminator) checkBoundary(c value.Checker, at *term.Written, con *Constructor, params []value.Value, body value.Case) {
+func (e *Eliminator) checkBoundary(c value.Checker, p term.Part, con *Constructor, params []value.Value, body value.Case) {
 	run := c.Run()
 	if len(con.Boundary) == 0 {
 		return
@@ -207,7 +208,7 @@ func (e *Eliminator) checkBoundary(c value.Checker, at *term.Written, con *Const
 	c.Binders(func(b value.CheckerBinding) value.Core {
 		args := make([]value.Value, len(con.Args))
 		for n := range args {
-			args[n] = b.Variable(term.Binder{Name: con.Args[n].Name}, con.Args[n].At(run, params, args))
+			args[n] = b.Variable(p.Binders[n], con.Args[n].At(run, params, args))
 		}
 		env := append([]value.Value(nil), args...)
 		for n := range args {
@@ -218,7 +219,7 @@ func (e *Eliminator) checkBoundary(c value.Checker, at *term.Written, con *Const
 		dims := make([]interval.Dim, len(con.Dims))
 		images := make([]interval.Dim, len(con.Dims))
 		for n := range dims {
-			dims[n] = interval.Var(b.Dimension(term.Binder{Name: con.Dims[n]}))
+			dims[n] = interval.Var(b.Dimension(p.Binders[len(env)+n]))
 			images[n] = dims[n]
 		}
 		for _, wall := range con.Boundary {
@@ -236,7 +237,7 @@ func (e *Eliminator) checkBoundary(c value.Checker, at *term.Written, con *Const
 					here = e.substitute(run, cut)
 				}
 				c.Same(here.family.Open(run, element), here.Eliminate(run, element), restrictCase(run, body, cut).ApplyAll(run, all),
-					&term.Error{Kind: term.Disagreement, Place: at.Place, Message: "the case of " + con.Name + " disagrees with the elimination of its boundary"})
+					&term.Error{Kind: term.Disagreement, Place: p.Body.Place, Message: "the case of " + con.Name + " disagrees with the elimination of its boundary"})
 			})
 		}
 		return nil
