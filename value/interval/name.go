@@ -8,9 +8,9 @@
 // irredundant disjunction of conjunctions in a fixed order, so that two of
 // them are equal exactly when they are structurally the same. Everything is an
 // immutable value: all methods are safe for concurrent use. Methods of Dim,
-// Face and Cube do not allocate, other than those that return slices or
-// strings, as long as operands and results have at most four conjunctions on
-// the names below 32 and products on the way to them at most sixteen.
+// Face and Cube do not allocate, other than those that return slices,
+// strings or substitutions, while operands and results have four conjunctions on
+// the names below 32 at most, and products on the way to them at most sixteen.
 //
 // Normal forms may grow exponentially. An operation whose result (or whose
 // work) would pass the limits of [MaxConjunctions] panics with a [*SizeError],
