@@ -7,7 +7,8 @@ package term
 // nodes of one class only once. A wrong guess does no harm: then some pair of
 // nodes differs, and that pair is reached. The walk keeps its own list of work.
 
-// Same reports whether a and b are the same core term up to hints: with
+// Same reports whether a and b are the same core term up to hints and to
+// annotations that are not written: with
 // variables and dimensions numbered by level, that is up to bound names. Cost:
 // nearly linear in the number of distinct nodes of both, however large they
 // are as trees; nesting costs no stack. Safe for concurrent use.
@@ -122,7 +123,14 @@ func (c *comparison) operators(a, b *Op) bool {
 	if len(a.Args) == 0 || c.class.join(a, b) {
 		return true
 	}
-	return c.all(a.Args, b.Args)
+	for k := len(a.Args) - 1; k >= 0; k-- {
+		// what is silent follows from the rest: a checker may have left
+		// definitions folded in it that a normal form unfolds
+		if !a.Sig.silent(k) {
+			c.todo = append(c.todo, [2]Arg{a.Args[k], b.Args[k]})
+		}
+	}
+	return true
 }
 
 func (c *comparison) all(a, b []Arg) bool {
