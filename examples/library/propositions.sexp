@@ -23,14 +23,17 @@
 (def set-groupoid (Pi ((A (U 2)) (h (set A))) (groupoid A))
   (lam (A h a b) (proposition-set (Path A a b) (h a b))))
 
-; Over a line of propositions any two ends are joined.
+; Over a line of types that ends in a proposition any two ends are joined.
+(def proposition-line
+  (Pi ((L (-> I (U 2))) (h (proposition (L 1))) (a (L 0)) (b (L 1))) (PathOver (i (L i)) a b))
+  (lam (L h a b) (path-over L a b (h (transp (i (L i)) bot a) b))))
+
 (def proposition-over
   (Pi ((A (U 2)) (B (-> A (U 2))) (h (Pi ((x A)) (proposition (B x))))
       (a A) (b A) (p (Path A a b)) (u (B a)) (v (B b)))
     (PathOver (i (B (at p i))) u v))
   (lam (A B h a b p u v)
-    (path-over (lam (i) (B (at p i))) u v
-      (h b (transp (i (B (at p i))) bot u) v))))
+    (proposition-line (lam (i) (B (at p i))) (h b) u v)))
 
 (def proposition-contractible (Pi ((A (U 2))) (proposition (contractible A)))
   (lam (A c d)
@@ -62,3 +65,18 @@
       (pair (at p i)
         (at (proposition-over (-> A B) (is-equivalence A B) (proposition-is-equivalence A B)
               (fst e) (fst d) p (snd e) (snd d)) i)))))
+
+; Being a proposition and being a set are propositions (Book 3.3.5).
+(def proposition-proposition (Pi ((A (U 2))) (proposition (proposition A)))
+  (lam (A h g) (line (i) (lam (a b) (at (proposition-set A h a b (h a b) (g a b)) i)))))
+
+(def proposition-of-set (Pi ((A (U 2))) (proposition (set A)))
+  (lam (A h g)
+    (line (i) (lam (a b p q) (at (set-groupoid A h a b p q (h a b p q) (g a b p q)) i)))))
+
+; Products of sets are sets (Book 7.1.9).
+(def set-product
+  (Pi ((A (U 2)) (B (-> A (U 2))) (h (Pi ((x A)) (set (B x))))) (set (Pi ((x A)) (B x))))
+  (lam (A B h f g p q)
+    (line (i j) (lam (x)
+      (at (at (h x (f x) (g x) (line (k) ((at p k) x)) (line (k) ((at q k) x))) i) j)))))

@@ -60,3 +60,28 @@
   (lam (A B)
     (quasi-inverse (Path (U 0) A B) (Equiv A B) (path-equivalence A B) (ua A B)
       (univalence-section A B) (univalence-retraction A B))))
+
+; Transport back along ua is the inverse map, up to a path.
+(def ua-transport-back
+  (Pi ((A (U 0)) (B (U 0)) (e (Equiv A B)) (y B))
+    (Path A (transp (i (at (ua A B e) (rev i))) bot y) (inverse-map A B e y)))
+  (lam (A B e y)
+    (path-from (lam (i) (at (ua A B e) (rev i))) y (inverse-map A B e y)
+      (line (i) (glue (at (section A B e y) (rev i)) ((= i 1) (inverse-map A B e y)) ((= i 0) y))))))
+
+; The types that are equivalent to a type, with their equivalences, are
+; contractible (CCHM 7.2): any of them is joined to the type itself by gluing,
+; with unglue for the equivalence's map.
+(def equivalences-contractible (Pi ((A (U 0))) (contractible (Sigma ((X (U 0))) (Equiv X A))))
+  (lam (A)
+    (pair (pair A (identity-equivalence A))
+      (lam (v)
+        (let ((glued (-> I (U 0))
+                (lam (i) (Glue A ((= i 0) A (identity-equivalence A)) ((= i 1) (fst v) (snd v)))))
+              (base (Pi ((i I)) (-> (glued i) A)) (lam (i b) (unglue b))))
+          (line (i)
+            (pair (glued i)
+              (pair (base i)
+                (at (proposition-line (lam (k) (is-equivalence (glued k) A (base k)))
+                      (proposition-is-equivalence (fst v) A (fst (snd v)))
+                      (snd (identity-equivalence A)) (snd (snd v))) i)))))))))
