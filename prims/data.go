@@ -364,3 +364,6 @@ func (conOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 	}
 	return NewCon(run, c, params, vs, dims)
 }
+
+// HasFormalComposites reports whether composites are canonical elements.
+func (d *Data) HasFormalComposites() bool { return d.Formal }
