@@ -96,3 +96,14 @@
 ; A map of the circle that turns n times, and the degree of a map that keeps base.
 (def wrap (Pi ((n Int)) (-> Circle Circle))
   (lam (n x) (elim (y Circle) x (base base) ((loop i) (at (turns n) i)))))
+(def degree (Pi ((f (-> Circle Circle)) (p (Path Circle (f base) base))) Int)
+  (lam (f p)
+    (winding (compose Circle base (f base) base (inverse Circle (f base) base p)
+      (compose Circle (f base) (f base) base (line (i) (f (loop i))) p)))))
+
+(def wrap-degree (-> Int Int) (lam (n) (degree (wrap n) (line (i) base))))
+
+; Loop spaces (Book 2.1.8): of a type at a point, and of its loop space again.
+(def loop-space (Pi ((A (U 2))) (-> A (U 2))) (lam (A a) (Path A a a)))
+(def second-loop-space (Pi ((A (U 2))) (-> A (U 2)))
+  (lam (A a) (loop-space (loop-space A a) (line (i) a))))
