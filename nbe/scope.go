@@ -26,6 +26,9 @@ type Scope struct {
 // Scope returns the empty scope of the engine.
 func (e *Engine) Scope() *Scope { return &Scope{e: e, cases: []*scopeContext{newContext()}} }
 
+// Engine is the engine that s is a scope of.
+func (s *Scope) Engine() *Engine { return s.e }
+
 func (x *scopeContext) clone() *scopeContext {
 	y := *x
 	y.variables = append([]variable(nil), x.variables...)
