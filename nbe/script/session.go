@@ -222,8 +222,9 @@ func (s *Session) normal(ctx context.Context, scope *nbe.Scope, f *notation.Form
 
 func (s *Session) show(ctx context.Context, e *nbe.Engine, scope *nbe.Scope, f *notation.Form) (string, error) {
 	if f.Term.Kind == term.NameKind {
-		if account, ok := e.Account(f.Term.Word); ok {
-			return account.String(), nil
+		account, err := e.Account(ctx, f.Term.Word, s.Options...)
+		if term.KindOf(err) != term.NotFound {
+			return account.String(), err
 		}
 	}
 	t, err := scope.Infer(ctx, f.Term, s.Options...)
