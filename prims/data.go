@@ -17,11 +17,12 @@ type Data struct {
 	Name         string
 	Params       []Argument
 	Constructors []*Constructor
-	Formal       bool // composites are canonical and eliminators commute with them; otherwise strict
-	Level        int  // of the universe it lives in
-	Numerals     bool // its elements are stored as numbers
-	raised       int  // the level so far, while it is being declared
-	declared     bool // the declaration is complete
+	Formal       bool      // composites are canonical and eliminators commute with them; otherwise strict
+	Level        int       // of the universe it lives in
+	Numerals     bool      // its elements are stored as numbers
+	small        []*Number // the first numbers
+	raised       int       // the level so far, while it is being declared
+	declared     bool      // the declaration is complete
 	eliminator   term.Reference
 }
 

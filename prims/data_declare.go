@@ -342,8 +342,15 @@ func (x *declaring) recursion(at *term.Written, nf term.Core, t value.Value) (r 
 
 var anonymous = term.Binder{Name: "_"}
 
+// sharedNumbers is how many of the first numbers are made once.
+const sharedNumbers = 256
+
 // StoreAsNumbers makes the elements of d, declared as zero and suc, numbers.
 func (d *Data) StoreAsNumbers() {
 	d.Numerals = true
-	d.Constructors[0].constant = &Number{data: d}
+	d.small = make([]*Number, sharedNumbers)
+	for n := range d.small {
+		d.small[n] = &Number{d, natural{small: uint64(n)}}
+	}
+	d.Constructors[0].constant = d.small[0]
 }

@@ -201,17 +201,28 @@ func (e *Eliminator) onCase(run *value.Run, c *Constructor, args []value.Value, 
 	if e.cases[c.Index] == nil {
 		run.Fault("the case of %s is not there yet", c.Name)
 	}
-	env := make([]value.Value, 0, 2*len(args)+len(dims))
-	env = append(env, args...)
+	body := e.cases[c.Index]
+	n := body.Arity()
+	env := run.Frame(n)
+	at := copy(env, args)
 	for k, a := range c.Args {
-		if a.Recursive != nil {
-			env = append(env, e.hypothesis(run, a.Recursive, args[k]))
+		if a.Recursive == nil {
+			continue
 		}
+		if body.Uses(at) {
+			env[at] = e.hypothesis(run, a.Recursive, args[k])
+		} else {
+			env[at] = args[k] // an unused hypothesis costs nothing
+		}
+		at++
 	}
 	for _, d := range dims {
-		env = append(env, value.DimensionOf(d))
+		env[at] = value.DimensionOf(d)
+		at++
 	}
-	return e.cases[c.Index].ApplyAll(run, env)
+	v := body.ApplyAll(run, env)
+	run.Release(n)
+	return v
 }
 
 // Later is Eliminate in a cell.

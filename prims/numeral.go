@@ -90,6 +90,14 @@ type Successors struct {
 	base  value.Value
 }
 
+// newNumber is the number n; small ones are shared.
+func newNumber(d *Data, n natural) *Number {
+	if n.big == nil && n.small < uint64(len(d.small)) {
+		return d.small[n.small]
+	}
+	return &Number{d, n}
+}
+
 // Support is empty.
 func (n *Number) Support() value.Support { return 0 }
 
@@ -101,7 +109,7 @@ func (n *Number) Int() *big.Int { return n.n.Int() }
 
 func (n *Number) isZero() bool { return n.n.isZero() }
 
-func (n *Number) predecessor() value.Value { return &Number{n.data, n.n.minus(natural{small: 1})} }
+func (n *Number) predecessor() value.Value { return newNumber(n.data, n.n.minus(natural{small: 1})) }
 
 // Support is the base's.
 func (s *Successors) Support() value.Support { return s.base.Support() }
@@ -122,7 +130,7 @@ func successors(d *Data, n natural, v value.Value) value.Value {
 	}
 	switch v := value.Peek(v).(type) {
 	case *Number:
-		return &Number{d, v.n.plus(n)}
+		return newNumber(d, v.n.plus(n))
 	case *Successors:
 		return &Successors{d, v.count.plus(n), v.base}
 	default:
@@ -185,7 +193,7 @@ func (o numeralOp) Eval(run *value.Run, _ eval.Frame, args []eval.Arg) value.Val
 func (numeralOp) Value(run *value.Run, args []eval.Arg) value.Value {
 	n := naturalOf(args[0].Payload.(term.Number).Int)
 	run.Charge(n.price())
-	return &Number{args[1].Payload.(term.Reference).Target.(*Data), n}
+	return newNumber(args[1].Payload.(term.Reference).Target.(*Data), n)
 }
 
 func numeralFormer() Former {

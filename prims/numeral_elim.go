@@ -83,16 +83,22 @@ func (e *Eliminator) numeral(run *value.Run, v *Number) (value.Value, bool) {
 	if v.n.big != nil || v.n.small < 2 || run.Plain.NoNumerals {
 		return nil, false
 	}
-	step, ok := e.cases[1].(value.Strict)
-	if !ok || !step.StrictIn(run, 1) {
+	step := e.cases[1]
+	if !step.StrictIn(run, 1) {
 		return nil, false
 	}
 	h := run.Force(e.cases[0].ApplyAll(run, nil))
-	args := [2]value.Value{}
+	args := run.Frame(2)
+	args[0] = v // where the step does not look at it
+	counts := step.Uses(0)
 	for k := range v.n.small {
 		run.Step()
-		args[0], args[1] = &Number{e.data, natural{small: k}}, h
-		h = run.Force(e.cases[1].ApplyAll(run, args[:]))
+		if counts {
+			args[0] = newNumber(e.data, natural{small: k})
+		}
+		args[1] = h
+		h = run.Force(step.ApplyAll(run, args))
 	}
+	run.Release(2)
 	return h, true
 }

@@ -40,8 +40,7 @@ func (l *Lam) Substitute(run *value.Run, s *value.Subst) value.Value {
 
 // Strict reports whether the function evaluates its argument in any case.
 func (l *Lam) Strict(run *value.Run) bool {
-	s, ok := l.Body.(value.Strict)
-	return ok && s.StrictIn(run, 0)
+	return l.Body.Strict(run)
 }
 
 // Hcomp is a function that composes pointwise.
@@ -212,7 +211,7 @@ func (applyOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 	fn := run.Force(args[0].Eval(run, f))
 	if l, ok := fn.(*Lam); ok {
 		run.Step()
-		if l.Strict(run) {
+		if l.Body.Strict(run) {
 			return l.Body.Apply(run, run.Force(args[1].Eval(run, f)))
 		}
 		return l.Body.Apply(run, args[1].Delay(run, f))

@@ -17,11 +17,11 @@ type Case interface {
 	HintAt(k int) string
 	// AsClosure is a case of one argument as a closure.
 	AsClosure() Closure
-}
-
-// Strict is implemented by closures and cases that know which of their
-// arguments they evaluate in any case. Asking may evaluate captured functions.
-type Strict interface {
+	// Uses reports whether the body mentions argument k; where it does not,
+	// anything may be passed.
+	Uses(k int) bool
+	// StrictIn reports whether the body evaluates its argument k in any case.
+	// Asking may evaluate captured functions that the body evaluates anyway.
 	StrictIn(run *Run, k int) bool
 }
 
@@ -64,6 +64,9 @@ func (l *Line) Open(run *Run, arg Value) Value { return l.Apply(run, arg) }
 // Hint is the name for printing.
 func (l *Line) Hint() string { return l.Name }
 
+// Strict is false: a dimension needs no evaluation.
+func (l *Line) Strict(*Run) bool { return false }
+
 // Constant is a closure that does not look at its argument.
 type Constant struct{ V Value }
 
@@ -81,6 +84,9 @@ func (c Constant) Open(*Run, Value) Value { return c.V }
 
 // Hint is none.
 func (c Constant) Hint() string { return "_" }
+
+// Strict is false.
+func (c Constant) Strict(*Run) bool { return false }
 
 // Rule is the body of a closure that a rule of a former makes: a function of
 // what it captured and the argument. It captures nothing of its own.
@@ -174,3 +180,6 @@ func (c *Captured) Open(run *Run, x Value) Value {
 
 // Hint is the rule's name of its variable.
 func (c *Captured) Hint() string { return c.Rule.Name }
+
+// Strict is false: what a rule makes of its argument it delays.
+func (c *Captured) Strict(*Run) bool { return false }

@@ -81,9 +81,10 @@ type Run struct {
 	// since values were made that are stuck on them
 	solutions map[Global]Global
 	refreshed map[*Neutral]Value
-	stack     [][]Value // segments of call frames
-	top       []Value   // what is left of the current segment
-	spare     []Value   // a segment that is not in use
+	slots     []Value // the segment of call frames in use
+	used      int
+	outer     []outerSegment
+	spare     []Value // a segment that is not in use
 }
 
 // Settings are what a run is made with.
@@ -226,66 +227,61 @@ func (r *Run) Fresh(avoid Support) Name {
 	return Name(r.high.Add(1))
 }
 
-// frameSegment is how many slots of call frames are allocated together; the
-// first segment of a run is small, since most runs are.
+// Call frames stand in segments; the first of a run is small, since most runs
+// are. A segment that has become empty gives way to the one before it.
 const (
 	firstSegment = 64
 	frameSegment = 1024
 )
 
-// Frame returns n slots for a call frame, to be given back with Release in the
-// opposite order. Nothing may keep a frame after its release.
+// outerSegment is a segment that is full for now.
+type outerSegment struct {
+	slots []Value
+	used  int
+}
+
+// Frame returns n slots for a call frame, to be given back with Release(n) in
+// the opposite order. Nothing may keep a frame after its release.
 func (r *Run) Frame(n int) []Value {
-	if len(r.top) < n {
+	used := r.used + n
+	if used > len(r.slots) {
 		r.segment(n)
+		used = n
 	}
-	f := r.top[:n:n]
-	r.top = r.top[n:]
+	f := r.slots[r.used:used:used]
+	r.used = used
 	return f
+}
+
+// Release gives back the last frame, of n slots.
+func (r *Run) Release(n int) {
+	r.used -= n
+	if r.used == 0 && len(r.outer) > 0 {
+		r.shrink()
+	}
 }
 
 //go:noinline
 func (r *Run) segment(n int) {
-	size := frameSegment
-	if r.stack == nil {
-		size = firstSegment
+	size := firstSegment
+	if r.slots != nil {
+		r.outer = append(r.outer, outerSegment{r.slots, r.used})
+		size = frameSegment
 	}
-	r.stack = append(r.stack, r.top)
+	r.used = 0
 	if len(r.spare) >= n {
-		r.top, r.spare = r.spare, nil
+		r.slots, r.spare = r.spare, nil
 		return
 	}
-	r.top = make([]Value, max(size, n))
+	r.slots = make([]Value, max(size, n))
 }
 
-// FrameMark remembers the state of the frames for Release.
-type FrameMark struct {
-	top      []Value
-	segments int
-}
-
-// Mark returns the present state of the frames.
-func (r *Run) Mark() FrameMark { return FrameMark{r.top, len(r.stack)} }
-
-// Release gives back every frame taken since the mark.
-func (r *Run) Release(m FrameMark) {
-	if len(r.stack) > m.segments {
-		r.shrink(m.segments)
-	}
-	r.top = m.top
-}
-
-// shrink drops segments, but keeps one so that work at the edge of a segment
-// does not allocate one each time.
-//
 //go:noinline
-func (r *Run) shrink(segments int) {
-	if r.spare == nil && len(r.stack) == segments+1 {
-		if full := r.top[:cap(r.top)]; len(full) >= frameSegment/2 {
-			r.spare = full
-		}
-	}
-	r.stack = r.stack[:segments]
+func (r *Run) shrink() {
+	last := len(r.outer) - 1
+	r.spare = r.slots // so that work at the edge of a segment does not make one each time
+	r.slots, r.used = r.outer[last].slots, r.outer[last].used
+	r.outer = r.outer[:last]
 }
 
 func recoverSize(thrown any) (*term.Error, bool) {

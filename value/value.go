@@ -73,6 +73,9 @@ type Closure interface {
 	Open(run *Run, arg Value) Value
 	// Hint is the host's name of the bound variable, for printing.
 	Hint() string
+	// Strict reports whether the body evaluates its argument in any case.
+	// Asking may evaluate captured functions that the body evaluates anyway.
+	Strict(run *Run) bool
 }
 
 // Dimension is an interval expression as a value: what a function over the

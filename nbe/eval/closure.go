@@ -10,6 +10,7 @@ type Abstraction struct {
 	hints    []string
 	body     Code
 	demands  []*demand // by argument
+	unused   []bool    // by argument; nil: all are used
 }
 
 func (a *Abstraction) capture(to, from Frame) {
@@ -71,12 +72,12 @@ func (c *closure) Substitute(run *value.Run, s *value.Subst) value.Closure {
 
 // Apply evaluates the body in a frame of the run's.
 func (c *closure) Apply(run *value.Run, arg value.Value) value.Value {
-	m := run.Mark()
-	f := run.Frame(1 + len(c.env))
+	n := 1 + len(c.env)
+	f := run.Frame(n)
 	f[0] = arg
 	copy(f[1:], c.env)
 	v := c.abs.body.Eval(run, f)
-	run.Release(m)
+	run.Release(n)
 	return v
 }
 
@@ -90,12 +91,12 @@ func (c *closure) Hint() string { return c.HintAt(0) }
 
 // ApplyAll evaluates the body under all its arguments.
 func (c *closure) ApplyAll(run *value.Run, args []value.Value) value.Value {
-	m := run.Mark()
-	f := run.Frame(len(args) + len(c.env))
+	n := len(args) + len(c.env)
+	f := run.Frame(n)
 	copy(f, args)
 	copy(f[len(args):], c.env)
 	v := c.abs.body.Eval(run, f)
-	run.Release(m)
+	run.Release(n)
 	return v
 }
 
@@ -124,6 +125,9 @@ type caseClosure struct{ *closure }
 func (c caseClosure) SubstituteCase(run *value.Run, s *value.Subst) value.Case {
 	return caseClosure{c.closure.substitute(run, s)}
 }
+
+// Uses reports whether the body mentions argument k.
+func (c *closure) Uses(k int) bool { return k >= len(c.abs.unused) || !c.abs.unused[k] }
 
 // AsClosure is a case of one argument as a closure.
 func (c caseClosure) AsClosure() value.Closure { return c.closure }

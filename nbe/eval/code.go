@@ -62,12 +62,20 @@ type opCode struct {
 	cheap int  // 0: not cheap; otherwise 1 + how deep cheap operators nest in it
 }
 
-func (c *opCode) Eval(run *value.Run, f Frame) (v value.Value) {
+func (c *opCode) Eval(run *value.Run, f Frame) value.Value {
 	if run.Enter() {
-		run.Hop(func() { v = c.op.Eval(run, f, c.args) })
-	} else {
-		v = c.op.Eval(run, f, c.args)
+		return c.hop(run, f)
 	}
+	v := c.op.Eval(run, f, c.args)
+	run.Leave()
+	return v
+}
+
+// hop is apart so that the result of Eval need not live on the heap.
+//
+//go:noinline
+func (c *opCode) hop(run *value.Run, f Frame) (v value.Value) {
+	run.Hop(func() { v = c.op.Eval(run, f, c.args) })
 	run.Leave()
 	return v
 }
@@ -119,11 +127,11 @@ func (a *Arg) Eval(run *value.Run, f Frame) value.Value {
 	if a.dim != nil {
 		return value.DimensionOf(a.dim.eval(f))
 	}
-	m := run.Mark()
-	frame := run.Frame(len(a.abs.captures))
+	n := len(a.abs.captures)
+	frame := run.Frame(n)
 	a.abs.capture(frame, f)
 	v := a.abs.body.Eval(run, frame)
-	run.Release(m)
+	run.Release(n)
 	return v
 }
 

@@ -66,6 +66,7 @@ type layout struct {
 	abs                   *Abstraction
 	variables, dimensions map[int]int
 	size                  int
+	used                  []bool // by argument
 }
 
 func (l *layout) slot(level int, dimension bool) int {
@@ -74,6 +75,9 @@ func (l *layout) slot(level int, dimension bool) int {
 		m = l.dimensions
 	}
 	if s, ok := m[level]; ok {
+		if s < len(l.used) {
+			l.used[s] = true
+		}
 		return s
 	}
 	if l.outer == nil {
@@ -253,7 +257,7 @@ func (k *compiler) abstraction(key term.Arg, body term.Core, binds []term.Sort, 
 		return abs
 	}
 	abs := &Abstraction{arity: len(binds), hints: hints}
-	inner := &layout{outer: l, abs: abs, variables: map[int]int{}, dimensions: map[int]int{}, size: len(binds)}
+	inner := &layout{outer: l, abs: abs, variables: map[int]int{}, dimensions: map[int]int{}, size: len(binds), used: make([]bool, len(binds))}
 	for s, sort := range binds {
 		if sort == term.DimensionSort {
 			inner.dimensions[nd] = s
@@ -264,6 +268,14 @@ func (k *compiler) abstraction(key term.Arg, body term.Core, binds []term.Sort, 
 		}
 	}
 	abs.body = k.term(body, inner, nv, nd)
+	for s, used := range inner.used {
+		if !used && abs.unused == nil {
+			abs.unused = make([]bool, abs.arity)
+		}
+		if !used {
+			abs.unused[s] = true
+		}
+	}
 	for s := range abs.arity {
 		d := demandOf(abs.body, s)
 		if d != nil && abs.demands == nil {

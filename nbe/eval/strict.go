@@ -98,6 +98,9 @@ const (
 	lazy
 )
 
+// Strict reports whether the body demands its argument.
+func (c *closure) Strict(run *value.Run) bool { return c.StrictIn(run, 0) }
+
 // StrictIn reports whether the body demands its argument k. It is asked when
 // the closure is called and may evaluate captured functions that the body
 // evaluates in any case.
