@@ -473,5 +473,9 @@ func (x *accountant) transpText(i value.Name, t value.Value, face, v string) (te
 	})
 	return text
 }
-func (c valueOfCase) Uses(int) bool                 { return true }
-func (c valueOfCase) StrictIn(*value.Run, int) bool { return false }
+func (c valueOfCase) Uses(int) bool                      { return true }
+func (c valueOfCase) StrictIn(*value.Run, int) bool      { return false }
+func (c valueOfCase) Enter(run *value.Run) []value.Value { return run.Frame(c.arity) }
+func (c valueOfCase) Eval(run *value.Run, frame []value.Value) value.Value {
+	return c.ApplyAll(run, frame)
+}

@@ -202,8 +202,7 @@ func (e *Eliminator) onCase(run *value.Run, c *Constructor, args []value.Value, 
 		run.Fault("the case of %s is not there yet", c.Name)
 	}
 	body := e.cases[c.Index]
-	n := body.Arity()
-	env := run.Frame(n)
+	env := body.Enter(run)
 	at := copy(env, args)
 	for k, a := range c.Args {
 		if a.Recursive == nil {
@@ -220,8 +219,8 @@ func (e *Eliminator) onCase(run *value.Run, c *Constructor, args []value.Value, 
 		env[at] = value.DimensionOf(d)
 		at++
 	}
-	v := body.ApplyAll(run, env)
-	run.Release(n)
+	v := body.Eval(run, env)
+	run.Release(len(env))
 	return v
 }
 

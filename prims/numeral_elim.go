@@ -88,17 +88,17 @@ func (e *Eliminator) numeral(run *value.Run, v *Number) (value.Value, bool) {
 		return nil, false
 	}
 	h := run.Force(e.cases[0].ApplyAll(run, nil))
-	args := run.Frame(2)
-	args[0] = v // where the step does not look at it
+	frame := step.Enter(run)
+	frame[0] = v // where the step does not look at it
 	counts := step.Uses(0)
 	for k := range v.n.small {
 		run.Step()
 		if counts {
-			args[0] = newNumber(e.data, natural{small: k})
+			frame[0] = newNumber(e.data, natural{small: k})
 		}
-		args[1] = h
-		h = run.Force(step.ApplyAll(run, args))
+		frame[1] = h
+		h = run.Force(step.Eval(run, frame))
 	}
-	run.Release(2)
+	run.Release(len(frame))
 	return h, true
 }

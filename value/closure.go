@@ -11,6 +11,11 @@ type Case interface {
 	ApplyAll(run *Run, args []Value) Value
 	// OpenAll is ApplyAll without doing any work.
 	OpenAll(run *Run, args []Value) Value
+	// Enter returns a call frame (Run.Frame) whose first slots, as many as the
+	// arity, are for the arguments; Eval evaluates the body in it, as often as
+	// the caller likes, who then releases it.
+	Enter(run *Run) []Value
+	Eval(run *Run, frame []Value) Value
 	// Arity is the number of arguments.
 	Arity() int
 	// HintAt is the host's name of argument k.

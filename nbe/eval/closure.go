@@ -129,6 +129,18 @@ func (c caseClosure) SubstituteCase(run *value.Run, s *value.Subst) value.Case {
 // Uses reports whether the body mentions argument k.
 func (c *closure) Uses(k int) bool { return k >= len(c.abs.unused) || !c.abs.unused[k] }
 
+// Enter is a frame for the arguments, with what is captured in its place.
+func (c caseClosure) Enter(run *value.Run) []value.Value {
+	f := run.Frame(c.abs.arity + len(c.env))
+	copy(f[c.abs.arity:], c.env)
+	return f
+}
+
+// Eval evaluates the body in a frame of Enter's.
+func (c caseClosure) Eval(run *value.Run, frame []value.Value) value.Value {
+	return c.abs.body.Eval(run, frame)
+}
+
 // AsClosure is a case of one argument as a closure.
 func (c caseClosure) AsClosure() value.Closure { return c.closure }
 
