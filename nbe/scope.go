@@ -280,12 +280,6 @@ func (e *Engine) evaluate(run *value.Run, core term.Core, x *scopeContext) value
 	return eval.Compile(run, e, core, len(x.variables), len(x.dimensions), variables, dimensions).Eval(run, vs)
 }
 
-// Head is t reduced to its outermost constructor only, one form for each
-// conjunction: what stands below is left as it was, definitions folded.
-func (s *Scope) Head(ctx context.Context, t *Term, options ...CallOption) ([]Form, error) {
-	return s.forms(ctx, t, gather(options), func(q *quote.Reader, t, v value.Value) term.Core { return q.Head(t, v) })
-}
-
 // faceText is a face with the names of a scope.
 func faceText(f interval.Face, names []string) string {
 	if f.IsTop() {

@@ -68,21 +68,27 @@ func unfit(run *value.Run, what string) {
 	run.Fail(&term.Error{Kind: term.IllTyped, Message: what})
 }
 
+// fits requires an argument's type to be included in a domain.
+func (s *Scope) fits(run *value.Run, k int, got, domain value.Value) {
+	x := s.cases[k]
+	cmp := quote.NewComparer(run, x.variableNames(), x.dimensionNames(), isHole)
+	if cmp.Included(got, domain) != quote.Equal {
+		c := s.e.checker(run, x.clone())
+		run.Fail(&term.Error{Kind: term.IllTyped, Message: "the argument has another type", Want: c.ShowType(domain), Got: c.ShowType(got), Detail: s.e.difference(run, cmp.Difference())})
+	}
+}
+
 // Apply applies a function to values of the same scope, which must have the
 // types of its domains: that is checked.
 func (v *Value) Apply(ctx context.Context, args []*Value, options ...CallOption) (*Value, error) {
 	return v.call(ctx, options, args, func(run *value.Run, k int) valueCase {
 		c := v.cases[k]
-		x := v.scope.cases[k]
 		for _, a := range args {
 			p, ok := run.Force(c.t).(*prims.Pi)
 			if !ok {
 				unfit(run, "only a function takes an argument")
 			}
-			cmp := quote.NewComparer(run, x.variableNames(), x.dimensionNames(), isHole)
-			if cmp.Included(a.cases[k].t, p.Domain) != quote.Equal {
-				run.Fail(&term.Error{Kind: term.IllTyped, Message: "the argument has another type", Detail: v.scope.e.difference(run, cmp.Difference())})
-			}
+			v.scope.fits(run, k, a.cases[k].t, p.Domain)
 			c = valueCase{p.Codomain.Open(run, a.cases[k].v), prims.LaterApply(run, c.v, a.cases[k].v)}
 		}
 		return c

@@ -119,6 +119,11 @@ func (s *Successors) Substitute(run *value.Run, t *value.Subst) value.Value {
 	return successors(s.data, s.count, run.Substitute(s.base, t))
 }
 
+// Split is the number of successors and what stands below them.
+func (s *Successors) Split() (*big.Int, value.Value) {
+	return new(big.Int).Set(s.count.Int()), s.base
+}
+
 func (s *Successors) predecessor() value.Value {
 	return successors(s.data, s.count.minus(natural{small: 1}), s.base)
 }
