@@ -49,9 +49,11 @@ func (a *Abstraction) Eval(run *value.Run, env []value.Value) value.Value {
 func (a *Abstraction) Case(run *value.Run) value.Case { return caseClosure{a.close(run, nil)} }
 
 type compiler struct {
-	run  *value.Run
-	r    Resolver
-	seen map[seenKey]*Abstraction
+	run    *value.Run
+	r      Resolver
+	seen   map[seenKey]*Abstraction
+	placed map[seenKey]Code // cheap operators, in the frames they stand in
+	cheap  map[*term.Op]int8
 }
 
 type seenKey struct {
@@ -137,7 +139,6 @@ func (k *compiler) op(c *term.Op, l *layout, nv, nd int) Code {
 	if e, ok := op.(Eliminator); ok {
 		principal = e.Principal()
 	}
-	cheap := 1
 	for i, a := range c.Args {
 		slot := c.Sig.SlotOf(i).Slot
 		if i == principal {
@@ -156,13 +157,8 @@ func (k *compiler) op(c *term.Op, l *layout, nv, nd int) Code {
 			continue
 		}
 		out.args[i] = k.arg(a, slot, l, nv, nd)
-		if o, ok := out.args[i].code.(*opCode); ok && o.cheap >= cheap {
-			cheap = o.cheap + 1
-		}
 	}
-	if o, ok := op.(Canonical); ok && cheap <= cheapest && o.Canonical(out.args) {
-		out.cheap = cheap
-	}
+	out.cheap = k.cheapness(c)
 	if p, ok := op.(Preparer); ok {
 		if payload, ok := p.Prepare(c, nv); ok {
 			out.args = append(out.args, Arg{Payload: payload})
@@ -172,6 +168,43 @@ func (k *compiler) op(c *term.Op, l *layout, nv, nd int) Code {
 		return constantCode{constant.Value(k.run, out.args)}
 	}
 	return out
+}
+
+// cheapness is 0 for an operator that is to be delayed, and otherwise 1 + how
+// deep cheap operators nest in it. It is found on the core term: to compile an
+// argument first and look then would compile what is nested 2^depth times.
+func (k *compiler) cheapness(c *term.Op) int {
+	if known, ok := k.cheap[c]; ok {
+		return int(known)
+	}
+	cheap := 0
+	if o, ok := k.r.Operation(c.Sig).(Canonical); ok {
+		args := make([]Arg, len(c.Args))
+		cheap = 1
+		for i, a := range c.Args {
+			switch a := a.(type) {
+			case *term.Op:
+				below := 0
+				k.run.Down(func() { below = k.cheapness(a) })
+				cheap = max(cheap, below+1)
+			case term.Level, term.Number, term.Reference:
+				args[i].Payload = a
+			}
+		}
+		if cheap > cheapest || !o.Canonical(args) {
+			cheap = 0
+		}
+	}
+	if k.cheap == nil {
+		k.cheap = map[*term.Op]int8{}
+	}
+	k.cheap[c] = int8(cheap)
+	return cheap
+}
+
+func (k *compiler) isClosed(c *term.Op) bool {
+	_, ok := k.r.Operation(c.Sig).(Closed)
+	return ok
 }
 
 // Closed is an Operation whose value depends on nothing in the frame: a
@@ -193,15 +226,19 @@ func (k *compiler) arg(a term.Arg, slot term.Slot, l *layout, nv, nd int) Arg {
 	case *term.Variable, *term.Global:
 		return Arg{code: k.term(a.(term.Core), l, nv, nd)}
 	case *term.Op:
-		abs := k.abstraction(a, a, nil, nil, l, nv, nd)
-		if o, ok := abs.body.(*opCode); !ok || o.cheap > 0 {
+		if k.cheapness(a) > 0 || k.isClosed(a) {
 			// building it costs less than delaying it, so it stands in the surrounding frame
-			if ok {
-				return Arg{code: k.term(a, l, nv, nd)}
+			code, ok := k.placed[seenKey{a, l}]
+			if !ok {
+				code = k.term(a, l, nv, nd)
+				if k.placed == nil {
+					k.placed = map[seenKey]Code{}
+				}
+				k.placed[seenKey{a, l}] = code
 			}
-			return Arg{code: abs.body}
+			return Arg{code: code}
 		}
-		return Arg{abs: abs}
+		return Arg{abs: k.abstraction(a, a, nil, nil, l, nv, nd)}
 	case *term.Bound:
 		return Arg{abs: k.abstraction(a, a.Body, k.binds(a, slot), a.Hints, l, nv, nd)}
 	case term.Dimension:
