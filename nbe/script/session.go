@@ -1,12 +1,21 @@
 // Package script handles scripts in the notation: a list of forms that define,
 // assume, declare, compare, normalise and show. It uses nothing but what any
 // host can: an engine, its empty scope, and the reader.
+//
+// A [Session] handles the forms of a text in order, on one engine. A form either
+// does what it says or gives an error, which is reported with the place of the
+// form and ends nothing: the forms after it are handled on what the engine holds.
+// Only text that cannot be read ends a session, with an [Unreadable].
+//
+// A form (reject FORM) is handled on a fork of the engine, so that nothing of it
+// is added whatever happens.
 package script
 
 import (
 	"context"
 	"errors"
 	"fmt"
+	"maps"
 	"os"
 	"path/filepath"
 	"strings"
@@ -21,7 +30,9 @@ import (
 // reported. Not safe for concurrent use.
 type Session struct {
 	Engine *nbe.Engine
-	// Report is called for each reporting form, in order. May be nil.
+	// Begin is called before each form is handled, in order. May be nil.
+	Begin func(*notation.Form)
+	// Report is called after each form, in order. May be nil.
 	Report func(Result)
 	// Options are given to every call of the engine.
 	Options []nbe.CallOption
@@ -105,8 +116,14 @@ func (s *Session) Source(ctx context.Context, src []byte, name string) error {
 			}
 			continue
 		}
+		if s.Begin != nil {
+			s.Begin(f)
+		}
 		begin := time.Now()
 		text, err := s.handle(ctx, s.Engine, f)
+		if isUnreadable(err) {
+			return err
+		}
 		if s.Report != nil {
 			s.Report(Result{f, text, err, time.Since(begin)})
 		}
@@ -123,6 +140,7 @@ func (s *Session) load(ctx context.Context, f *notation.Form, from string) error
 		path = filepath.Join(filepath.Dir(from), path)
 	}
 	err := s.File(ctx, path)
+	// A file that is not there is a fault of the form that names it.
 	var e *term.Error
 	if errors.As(err, &e) && e.Kind == term.Unreadable && e.Place.Line == 0 {
 		e.Place, e.GotText = f.FilePlace, fmt.Sprintf("%q", f.File)
@@ -130,28 +148,45 @@ func (s *Session) load(ctx context.Context, f *notation.Form, from string) error
 	return err
 }
 
-// handle does what a form says on an engine.
+func isUnreadable(err error) bool {
+	var u *Unreadable
+	return errors.As(err, &u)
+}
+
+// handle does what a form says on an engine. Every error has a place: that of
+// the form, where the engine knows none nearer.
 func (s *Session) handle(ctx context.Context, e *nbe.Engine, f *notation.Form) (string, error) {
+	text, err := s.do(ctx, e, f)
+	if err == nil || isUnreadable(err) {
+		return text, err
+	}
+	place := f.Place
+	if term.KindOf(err) == term.Duplicate && f.Kind != notation.Declare && f.NamePlace.Known() {
+		place = f.NamePlace
+	}
+	return text, at(place, err)
+}
+
+func (s *Session) do(ctx context.Context, e *nbe.Engine, f *notation.Form) (string, error) {
 	scope := e.Scope()
 	switch f.Kind {
 	case notation.Define:
-		return "", at(f.NamePlace, e.Define(ctx, f.Name, f.Type, f.Term, s.Options...))
+		return "", e.Define(ctx, f.Name, f.Type, f.Term, s.Options...)
 	case notation.Assume:
-		return "", at(f.NamePlace, e.Assume(ctx, f.Name, f.Type, s.Options...))
+		return "", e.Assume(ctx, f.Name, f.Type, s.Options...)
 	case notation.Declare:
 		return "", e.Declare(ctx, f.Declaration, s.Options...)
 	case notation.Equal, notation.Differ:
 		c, err := scope.CompareAt(ctx, f.Type, f.Term, f.Other, s.Options...)
-		if err != nil {
+		switch {
+		case err != nil:
 			return "", err
-		}
-		if equal := c.Verdict == nbe.Equal; equal != (f.Kind == notation.Equal) {
-			return "", unequal(f, c)
-		}
-		if f.Kind == notation.Equal {
+		case f.Kind == notation.Equal && c.Verdict == nbe.Equal:
 			return "equal", nil
+		case f.Kind == notation.Differ && c.Verdict == nbe.Different:
+			return "different: " + c.Difference.String(), nil
 		}
-		return "different: " + c.Difference.String(), nil
+		return "", unequal(f, c)
 	case notation.Normal:
 		return s.normal(ctx, scope, f)
 	case notation.Show:
@@ -169,13 +204,14 @@ func (s *Session) handle(ctx context.Context, e *nbe.Engine, f *notation.Form) (
 	case notation.Reject:
 		return s.reject(ctx, e, f)
 	}
-	return "", &term.Error{Kind: term.Malformed, Place: f.Place, Message: "no such form"}
+	return "", &term.Error{Kind: term.Internal, Message: "a form of a script of no known kind", GotText: f.Kind.String()}
 }
 
-// at gives an error the place p if it has none.
+// at gives an error the place p if it has none. A name that is declared twice
+// is at fault itself, not the type that stands beside it.
 func at(p term.Place, err error) error {
 	var e *term.Error
-	if errors.As(err, &e) && (!e.Place.Known() || e.Kind == term.Duplicate) {
+	if errors.As(err, &e) && (!e.Place.Known() || e.Kind == term.Duplicate && p.Known()) {
 		c := *e
 		c.Place = p
 		return &c
@@ -183,13 +219,18 @@ func at(p term.Place, err error) error {
 	return err
 }
 
+// shown is how long a term inside a message may be, in bytes.
+const shown = 1 << 12
+
+// unequal is the error of a comparison with another verdict than the form says.
 func unequal(f *notation.Form, c nbe.Comparison) error {
 	err := &term.Error{Kind: term.Unequal, Place: f.Place, Want: f.Term, Got: f.Other}
 	switch {
 	case c.Verdict == nbe.Undecided:
-		err.Message = "it depends on " + c.Hole
+		err.Message = "it depends on the hole " + c.Hole
 	case f.Kind == notation.Differ:
 		err.Message = "the two are equal by definition"
+		err.Want, err.WantText = nil, "something that differs from "+f.Term.Text(shown)
 	default:
 		err.Message = "not equal by definition, " + c.Difference.String()
 	}
@@ -246,7 +287,8 @@ func (s *Session) show(ctx context.Context, e *nbe.Engine, scope *nbe.Scope, f *
 	return fmt.Sprintf("%s : %s", notation.Format(w, 96), notation.Format(ty, 96)), nil
 }
 
-// refusals are the kinds of error that count as a refusal.
+// refusal reports whether an error says that a form is wrong. Running out of a
+// budget, being cancelled and what is not supported say nothing about the form.
 func refusal(err error) bool {
 	switch term.KindOf(err) {
 	case term.NotFound, term.Duplicate, term.IllTyped, term.Disagreement, term.BadDeclaration, term.Unequal, term.Malformed:
@@ -255,19 +297,53 @@ func refusal(err error) bool {
 	return false
 }
 
+// reject handles a form on a fork, which is dropped. Of a rejection of a
+// rejection only the innermost form is handled: the others turn its outcome.
 func (s *Session) reject(ctx context.Context, e *nbe.Engine, f *notation.Form) (string, error) {
-	text, err := s.handle(ctx, e.Fork(), f.Inner)
-	switch {
-	case err == nil:
-		got := "it was accepted"
-		if text != "" {
-			got += ": " + text
-		}
-		return "", &term.Error{Kind: term.Unequal, Place: f.Place, Message: "the form was to be refused", GotText: got}
-	case !refusal(err):
-		return "", err
+	inner, odd := f.Inner, true
+	for inner.Kind == notation.Reject {
+		inner, odd = inner.Inner, !odd
 	}
-	return "refused: " + strings.TrimSpace(withoutPlace(err)), nil
+	var text string
+	var err error
+	if fork := e.Fork(); inner.Kind == notation.Load {
+		err = s.trial(ctx, fork, inner)
+	} else {
+		text, err = s.handle(ctx, fork, inner)
+	}
+	switch refused := err != nil; {
+	case refused && !refusal(err):
+		return "", err
+	case refused == odd && refused:
+		return "refused: " + strings.TrimSpace(withoutPlace(err)), nil
+	case refused == odd:
+		return "accepted", nil
+	case refused:
+		return "", &term.Error{Kind: term.Unequal, Place: f.Place, Message: "the rejection was to be refused", GotText: "the form was refused: " + withoutPlace(err)}
+	}
+	got := "it was accepted"
+	if text != "" {
+		got += ": " + text
+	}
+	return "", &term.Error{Kind: term.Unequal, Place: f.Place, Message: "the form was to be refused", GotText: got}
+}
+
+// trial handles a file on an engine that is dropped, up to its first failure.
+func (s *Session) trial(ctx context.Context, fork *nbe.Engine, f *notation.Form) error {
+	inside, stop := context.WithCancel(ctx)
+	defer stop()
+	var first error
+	t := &Session{Engine: fork, Options: s.Options, ReadFile: s.ReadFile, loaded: maps.Clone(s.loaded)}
+	t.Report = func(r Result) {
+		if first == nil && r.Err != nil {
+			first = r.Err
+			stop()
+		}
+	}
+	if err := t.load(inside, f, f.FilePlace.File); err != nil {
+		return err
+	}
+	return first
 }
 
 func withoutPlace(err error) string {
