@@ -123,11 +123,11 @@ func (c *Comparer) Differ(step, left, right string) bool {
 func (c *Comparer) attempt(a, b value.Value) bool {
 	l, ok1 := a.(*value.Lazy)
 	r, ok2 := b.(*value.Lazy)
-	if !ok1 || !ok2 || l.Fold() == nil || r.Fold() == nil {
+	if !ok1 || !ok2 {
 		return false
 	}
-	m, n := l.Fold(), r.Fold()
-	if m.Length() != n.Length() || !m.Head().Same(c, n.Head()) {
+	m, n := l.Fold(c.run), r.Fold(c.run)
+	if m == nil || n == nil || m.Length() != n.Length() || !m.Head().Same(c, n.Head()) {
 		return false
 	}
 	found, blocked := c.found, c.blocked

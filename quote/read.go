@@ -44,10 +44,7 @@ func (q *Reader) count() {
 	q.nodes++
 	q.run.Charge(value.PriceNode)
 	if q.nodes > q.limit {
-		q.run.Fail(&term.Error{Kind: term.OutOfBudget, Message: "out of budget: the normal form is too large", Detail: q.run.Stats})
-	}
-	if q.nodes%value.PollEvery == 0 {
-		q.run.Poll()
+		q.run.Over("nodes", q.limit)
 	}
 }
 
@@ -57,7 +54,7 @@ func (q *Reader) folded(v value.Value) *value.Neutral {
 	if !ok || q.fold == nil {
 		return nil
 	}
-	n := l.Fold()
+	n := l.Fold(q.run)
 	if n != nil && q.fold(n.Head().(*value.GlobalHead).Global) {
 		return n
 	}

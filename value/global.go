@@ -1,6 +1,10 @@
 package value
 
-import "example.com/boxwright/nbe/term"
+import (
+	"sync/atomic"
+
+	"example.com/boxwright/nbe/term"
+)
 
 // Global is a definition or an assumption as evaluation sees it. Its methods
 // are safe for concurrent use.
@@ -49,25 +53,80 @@ func (r *Run) Folded(g Global) Value {
 // is what it prints and compares as; its work unfolds the global and resumes
 // the eliminations.
 func (r *Run) Fold(n *Neutral) *Lazy {
-	w := &foldWork{n: n}
+	w := &foldWork{}
+	w.n.Store(n)
 	l := r.NewLazy(n.support, &w.Pending, w)
-	l.fold = n
+	l.fold = &w.folding
 	return l
+}
+
+// Folder makes the folded form of a cell when somebody asks for it.
+type Folder interface {
+	// Fold is the folded form, nil where the run keeps the definition opaque
+	// or it is an assumption.
+	Fold(run *Run) *Neutral
+	// Unfolded is the value where there is no folded form.
+	Unfolded(run *Run) Value
+}
+
+// FoldLater is Fold for a folded form that f makes. Nested definitions make
+// nested folded forms, so they are made one level at a time, on demand.
+func (r *Run) FoldLater(support Support, f Folder) *Lazy {
+	w := &foldWork{folding: folding{from: f}}
+	l := r.NewLazy(support, &w.Pending, w)
+	l.fold = &w.folding
+	return l
+}
+
+// folding is a folded form, made or to be made.
+type folding struct {
+	n    atomic.Pointer[Neutral]
+	from Folder // nil if n was there from the beginning
+}
+
+func (f *folding) get(run *Run) (n *Neutral) {
+	if n = f.n.Load(); n != nil {
+		return n
+	}
+	run.Down(func() { n = f.from.Fold(run) })
+	if n != nil && run.unfold == nil { // what a run keeps opaque is its own affair
+		f.n.Store(n)
+	}
+	return n
 }
 
 type foldWork struct {
 	Pending
-	n *Neutral
+	folding
 }
 
 func (w *foldWork) Do(run *Run) Value {
+	n := w.get(run)
+	if n == nil {
+		return w.from.Unfolded(run)
+	}
 	run.Step()
-	v := run.Unfold(w.n.head.(*GlobalHead).Global)
-	for _, f := range w.n.Frames() {
+	v := run.Unfold(n.head.(*GlobalHead).Global)
+	for _, f := range n.Frames() {
 		v = f.Resume(run, v)
 	}
 	return v
 }
+
+// substitutedFold is a folded form with a substitution put in.
+type substitutedFold struct {
+	f *folding
+	s *Subst
+}
+
+func (w *substitutedFold) Fold(run *Run) *Neutral {
+	if n := w.f.get(run); n != nil {
+		return n.relabel(run, w.s)
+	}
+	return nil
+}
+
+func (w *substitutedFold) Unfolded(*Run) Value { return nil }
 
 // GlobalHead is a global that is not unfolded: an assumption, an opaque
 // definition, or any definition in its folded form.
@@ -152,6 +211,12 @@ func (r *Run) refresh(v Value) Value {
 	}
 	r.refreshed[n] = n // what asks again on the way sees it as it is
 	var w Value
+	r.Down(func() { w = r.refreshOnce(n) })
+	r.refreshed[n] = w
+	return w
+}
+
+func (r *Run) refreshOnce(n *Neutral) (w Value) {
 	if h, ok := n.head.(*GlobalHead); ok {
 		w = n
 		if _, solved := r.solutions[h.Global]; solved {
@@ -163,7 +228,6 @@ func (r *Run) refresh(v Value) Value {
 	if l, ok := w.(*Lazy); ok {
 		w = r.Force(l)
 	}
-	r.refreshed[n] = w
 	return w
 }
 

@@ -16,7 +16,7 @@ type Lazy struct {
 	support Support
 	pending atomic.Pointer[Pending]
 	result  Value
-	fold    *Neutral // the folded form, where the work is a definition under eliminations
+	fold    *folding // the folded form, where the work is a definition under eliminations
 }
 
 // Work is what a lazy cell waits for. Do's result may itself be lazy.
@@ -37,8 +37,14 @@ func (l *Lazy) Support() Support { return l.support }
 // Substitute forces the cell; Run.Substitute delays instead.
 func (l *Lazy) Substitute(run *Run, s *Subst) Value { return run.Force(l).Substitute(run, s) }
 
-// Fold is the folded form of the cell: a neutral headed by a global; nil if it has none.
-func (l *Lazy) Fold() *Neutral { return l.fold }
+// Fold is the folded form of the cell: a neutral headed by a global; nil if it
+// has none. It is made when it is first asked for, one level at a time.
+func (l *Lazy) Fold(run *Run) *Neutral {
+	if l.fold == nil {
+		return nil
+	}
+	return l.fold.get(run)
+}
 
 // NewLazy makes a cell of work w, which embeds p.
 func (r *Run) NewLazy(support Support, p *Pending, w Work) *Lazy {
@@ -199,7 +205,7 @@ func (r *Run) Substitute(v Value, s *Subst) Value {
 	w := &substituted{v: v, s: s}
 	l := r.NewLazy(SubstSupport(support, s), &w.Pending, w)
 	if f, ok := v.(*Lazy); ok && f.fold != nil {
-		l.fold = f.fold.relabel(r, s)
+		l.fold = &folding{from: &substitutedFold{f.fold, s}}
 	}
 	return l
 }

@@ -4,7 +4,9 @@ import (
 	"context"
 	"fmt"
 	"math/rand/v2"
+	"runtime"
 	"sync/atomic"
+	"time"
 
 	"example.com/boxwright/nbe/term"
 	"example.com/boxwright/value/interval"
@@ -15,26 +17,25 @@ import (
 type Budget struct {
 	Steps  int64 // β, eliminations, Kan rules, unfoldings
 	Depth  int64 // nesting of evaluation, in levels
-	Memory int64 // bytes, charged at the fixed prices below
+	Memory int64 // bytes, charged at the fixed prices of prices.go
 	Output int64 // nodes of a normal form, as a shared graph
 }
 
-// Prices at which memory is charged, in bytes. They are what the allocations
-// take on a 64-bit machine, rounded up, and stay fixed so that a budget means
-// the same everywhere.
-const (
-	PriceLazy    = 128
-	PriceClosure = 96
-	PriceNode    = 64
-)
+// PollEvery is how many steps pass between two looks at the context: some 50 to
+// 250 µs. Work that takes no steps is counted by Charge and Work.
+const PollEvery = 256
 
-// PollEvery is how many steps pass between two looks at the context.
-const PollEvery = 1024
+// pollBytes is how much memory is charged between two looks at the context:
+// about 2,000 allocations.
+const pollBytes = 256 << 10
+
+// pollWork is how many units of other work pass between two looks at the context.
+const pollWork = 4096
 
 // HopEvery is how many levels of nesting stand on one goroutine's stack; the
-// next level continues on a fresh one. A level takes at most about 3 kB (with
+// next level continues on a fresh one. A level takes at most about 4 kB (with
 // the race detector and without optimisation), so one stack stays below 64 MB.
-const HopEvery = 20_000
+const HopEvery = 10_000
 
 // Plain switches the engine's shortcuts off, for the plain evaluator that the
 // fast one is tested against. The zero value is the fast evaluator.
@@ -68,15 +69,21 @@ type Stats struct {
 // It belongs to one call and is not safe for concurrent use.
 type Run struct {
 	Stats
-	Plain  Plain
-	budget Budget
-	ctx    context.Context
-	check  int64 // the step at which to look at budget and context again
-	depth  int64
-	limit  int64 // the depth at which to hop or stop
-	high   *atomic.Int32
-	draw   *rand.Rand // names drawn at random, a hook for tests
-	unfold Unfolder
+	Plain    Plain
+	budget   Budget
+	ctx      context.Context
+	deadline time.Time // of ctx, zero if it has none
+	check    int64     // the step at which to look at budget and context again
+	bytes    int64     // the memory at which to look at them again
+	work     int       // other work since the last look
+	depth    int64
+	limit    int64            // the depth at which to hop or stop
+	owner    Global           // the definition whose code is running, nil outside of definitions
+	spent    map[Global]int64 // steps by definition, by samples
+	sample   int64            // the steps at the last sample
+	high     *atomic.Int32
+	draw     *rand.Rand // names drawn at random, a hook for tests
+	unfold   Unfolder
 	// solutions are the assumptions and holes that have become definitions
 	// since values were made that are stuck on them
 	solutions map[Global]Global
@@ -112,6 +119,8 @@ func NewRun(s Settings) *Run {
 	r := &Run{Plain: s.Plain, budget: s.Budget, ctx: s.Context, high: s.High, unfold: s.Unfold, draw: s.Draw, solutions: s.Solutions}
 	r.limit = min(HopEvery, r.budget.Depth)
 	r.check = min(PollEvery, r.budget.Steps)
+	r.bytes = min(pollBytes, r.budget.Memory+1)
+	r.deadline, _ = s.Context.Deadline()
 	return r
 }
 
@@ -145,27 +154,60 @@ func (r *Run) Step() {
 
 //go:noinline
 func (r *Run) poll() {
+	r.attribute()
 	if r.Steps >= r.budget.Steps {
 		r.over("steps", r.budget.Steps)
 	}
-	if err := r.ctx.Err(); err != nil {
-		r.Fail(&term.Error{Kind: term.Cancelled, Message: "cancelled", Cause: context.Cause(r.ctx)})
+	if r.Memory > r.budget.Memory {
+		r.over("bytes", r.budget.Memory)
 	}
+	r.look()
 	r.check = min(r.Steps+PollEvery, r.budget.Steps)
+	r.bytes = min(r.Memory+pollBytes, r.budget.Memory+1)
+	r.work = 0
 }
 
-// Poll looks at the context at once; entry points call it first.
+// look stops the run if its context has ended. A deadline that has passed ends
+// it also where the context has not noticed yet: its timer may be waiting for
+// the very processor that this run keeps busy.
+func (r *Run) look() {
+	err := r.ctx.Err()
+	if err == nil && r.deadline.After(time.Time{}) && !time.Now().Before(r.deadline) {
+		for range 100 {
+			if err = r.ctx.Err(); err != nil {
+				break
+			}
+			runtime.Gosched()
+		}
+		if err == nil {
+			err = context.DeadlineExceeded
+		}
+	}
+	if err == nil {
+		return
+	}
+	if cause := context.Cause(r.ctx); cause != nil {
+		err = cause
+	}
+	r.Fail(&term.Error{Kind: term.Cancelled, Message: "cancelled", Cause: err})
+}
+
+// Poll looks at budget and context at once; entry points call it first.
 func (r *Run) Poll() { r.poll() }
 
-func (r *Run) over(what string, limit int64) {
-	r.Fail(&term.Error{Kind: term.OutOfBudget, Message: "out of budget", WantText: fmt.Sprintf("at most %d %s", limit, what), GotText: "more", Detail: r.Stats})
+// Work counts n units of work that neither takes steps nor is charged memory,
+// each about a microsecond at most, and looks at the context now and then.
+func (r *Run) Work(n int) {
+	if r.work += n; r.work >= pollWork {
+		r.poll()
+	}
 }
 
 // Charge counts memory at a fixed price.
 func (r *Run) Charge(bytes int64) {
 	r.Memory += bytes
-	if r.Memory > r.budget.Memory {
-		r.over("bytes", r.budget.Memory)
+	if r.Memory >= r.bytes {
+		r.poll()
 	}
 }
 
@@ -186,7 +228,10 @@ func (r *Run) Hop(f func()) {
 		r.over("levels of nesting", r.budget.Depth)
 	}
 	r.Poll()
-	r.Deepest = max(r.Deepest, r.depth)
+	if r.depth > r.Deepest { // the stack is kept, so each level is charged once
+		r.Charge((r.depth - r.Deepest) * PriceLevel)
+		r.Deepest = r.depth
+	}
 	limit := r.limit
 	r.limit = min(r.depth+HopEvery, r.budget.Depth)
 	var thrown any

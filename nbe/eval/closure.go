@@ -190,9 +190,6 @@ func (t *thunk) cell(run *value.Run, code Code, env []value.Value) value.Value {
 	if op.cheap > 0 {
 		return op.Eval(run, env)
 	}
-	if op.folds {
-		return op.fold(run, env)
-	}
 	var support value.Support
 	for k, v := range env {
 		v = value.Peek(v)
@@ -200,5 +197,8 @@ func (t *thunk) cell(run *value.Run, code Code, env []value.Value) value.Value {
 		support |= v.Support()
 	}
 	t.code, t.env = code, env
+	if op.folds {
+		return run.FoldLater(support, t)
+	}
 	return run.NewLazy(support, &t.Pending, t)
 }

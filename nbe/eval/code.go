@@ -80,33 +80,32 @@ func (c *opCode) hop(run *value.Run, f Frame) (v value.Value) {
 	return v
 }
 
-// fold is a definition under eliminations that nobody needs the value of yet:
-// its folded form in a cell or, where the run keeps the definition opaque, the neutral.
-func (c *opCode) fold(run *value.Run, f Frame) value.Value {
+// Fold is a definition under eliminations that nobody needs the value of yet:
+// nil where the run keeps the definition opaque, and for an assumption.
+func (t *thunk) Fold(run *value.Run) *value.Neutral {
 	var frames []value.Frame
-	for {
+	for c := t.code.(*opCode); ; {
 		e := c.op.(Eliminator)
-		frames = append(frames, e.Frame(run, f, c.args))
+		frames = append(frames, e.Frame(run, t.env, c.args))
 		switch p := c.args[e.Principal()].code.(type) {
 		case *opCode:
 			c = p
 		case globalCode:
-			v := run.Folded(p.g)
-			l, lazy := v.(*value.Lazy)
-			if !lazy || l.Fold() == nil {
-				for k := len(frames) - 1; k >= 0; k-- {
-					v = frames[k].Resume(run, v)
-				}
-				return v
+			l, ok := run.Folded(p.g).(*value.Lazy)
+			if !ok {
+				return nil
 			}
-			n := l.Fold()
-			for k := len(frames) - 1; k >= 0; k-- {
+			n := l.Fold(run)
+			for k := len(frames) - 1; k >= 0 && n != nil; k-- {
 				n = n.Eliminate(run, frames[k])
 			}
-			return run.Fold(n)
+			return n
 		}
 	}
 }
+
+// Unfolded is the value.
+func (t *thunk) Unfolded(run *value.Run) value.Value { return t.Do(run) }
 
 // Arg is a compiled argument of an operator: by the slot of its signature a
 // term, a body under binders, a dimension, a face, rows, or a payload.

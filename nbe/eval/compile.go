@@ -71,29 +71,39 @@ type layout struct {
 	used                  []bool // by argument
 }
 
+// slot is where a level stands. It looks outwards and then captures inwards, by
+// loops, since binders may nest deeper than a stack.
 func (l *layout) slot(level int, dimension bool) int {
-	m := l.variables
-	if dimension {
-		m = l.dimensions
-	}
-	if s, ok := m[level]; ok {
-		if s < len(l.used) {
-			l.used[s] = true
+	var way []*layout // those that do not have it yet
+	s := -1
+	for at := l; ; at = at.outer {
+		if at == nil {
+			return -1
 		}
-		return s
+		if known, ok := at.levels(dimension)[level]; ok {
+			if known < len(at.used) {
+				at.used[known] = true
+			}
+			s = known
+			break
+		}
+		way = append(way, at)
 	}
-	if l.outer == nil {
-		return -1
+	for k := len(way) - 1; k >= 0; k-- {
+		at := way[k]
+		at.abs.captures = append(at.abs.captures, s)
+		s = at.size
+		at.size++
+		at.levels(dimension)[level] = s
 	}
-	from := l.outer.slot(level, dimension)
-	if from < 0 {
-		return -1
-	}
-	l.abs.captures = append(l.abs.captures, from)
-	s := l.size
-	l.size++
-	m[level] = s
 	return s
+}
+
+func (l *layout) levels(dimension bool) map[int]int {
+	if dimension {
+		return l.dimensions
+	}
+	return l.variables
 }
 
 func (k *compiler) fault(what string, at any) {
@@ -314,7 +324,8 @@ func (k *compiler) abstraction(key term.Arg, body term.Core, binds []term.Sort, 
 		}
 	}
 	for s := range abs.arity {
-		d := demandOf(abs.body, s)
+		nodes := demandNodes
+		d := demandOf(abs.body, s, &nodes)
 		if d != nil && abs.demands == nil {
 			abs.demands = make([]*demand, abs.arity)
 		}

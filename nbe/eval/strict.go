@@ -33,8 +33,16 @@ type demand struct {
 	conditions []int
 }
 
+// demandNodes is how many nodes of a body are looked at for a demand; what is
+// found later is not certain. It bounds the stack, the lists of conditions and
+// the time, a body being a graph.
+const demandNodes = 200
+
 // demandOf is how the code demands a slot, nil if that is not certain.
-func demandOf(c Code, slot int) *demand {
+func demandOf(c Code, slot int, nodes *int) *demand {
+	if *nodes--; *nodes < 0 {
+		return nil
+	}
 	switch c := c.(type) {
 	case slotCode:
 		if int(c) == slot {
@@ -42,13 +50,13 @@ func demandOf(c Code, slot int) *demand {
 		}
 	case *opCode:
 		if e, ok := c.op.(Eliminator); ok {
-			if d := demandOfArg(&c.args[e.Principal()], slot); d != nil {
+			if d := demandOfArg(&c.args[e.Principal()], slot, nodes); d != nil {
 				return d
 			}
 		}
 		if o, ok := c.op.(Demander); ok {
 			for _, a := range o.Demands(c.args) {
-				if d := demandOfArg(a, slot); d != nil {
+				if d := demandOfArg(a, slot, nodes); d != nil {
 					return d
 				}
 			}
@@ -56,7 +64,7 @@ func demandOf(c Code, slot int) *demand {
 		if o, ok := c.op.(Caller); ok {
 			f, x := o.Called()
 			if g, ok := c.args[f].code.(slotCode); ok {
-				if d := demandOfArg(&c.args[x], slot); d != nil {
+				if d := demandOfArg(&c.args[x], slot, nodes); d != nil {
 					return &demand{append([]int{int(g)}, d.conditions...)}
 				}
 			}
@@ -65,9 +73,9 @@ func demandOf(c Code, slot int) *demand {
 	return nil
 }
 
-func demandOfArg(a *Arg, slot int) *demand {
+func demandOfArg(a *Arg, slot int, nodes *int) *demand {
 	if a.code != nil {
-		return demandOf(a.code, slot)
+		return demandOf(a.code, slot, nodes)
 	}
 	if a.abs == nil || a.abs.arity > 0 {
 		return nil
@@ -76,7 +84,7 @@ func demandOfArg(a *Arg, slot int) *demand {
 		if from != slot {
 			continue
 		}
-		d := demandOf(a.abs.body, k)
+		d := demandOf(a.abs.body, k, nodes)
 		if d == nil {
 			return nil
 		}
@@ -121,7 +129,9 @@ func (c *closure) StrictIn(run *value.Run, k int) bool {
 		}
 	}
 	verdict := lazy
-	if c.decide(run, d) {
+	decided := false
+	run.Down(func() { decided = c.decide(run, d) })
+	if decided {
 		verdict = strict
 	}
 	if k == c.abs.arity-1 {
