@@ -2,6 +2,7 @@ package nbe
 
 import (
 	"fmt"
+	"slices"
 
 	"example.com/boxwright/nbe/eval"
 	"example.com/boxwright/nbe/term"
@@ -22,6 +23,7 @@ import (
 type scopeContext struct {
 	variables  []variable
 	dimensions []dimension
+	hints      [2][]string        // the names of both, by level
 	names      map[string][]bound // innermost last
 	face       interval.Face      // what has been assumed, for messages
 	cube       interval.Cube      // the same as the one conjunction that is assumed here
@@ -60,6 +62,7 @@ func newContext() *scopeContext {
 func (x *scopeContext) pushVariable(name string, t, v value.Value) {
 	level := len(x.variables)
 	x.variables = append(x.variables, variable{name, t, v})
+	x.hints[0] = append(x.hints[0], name)
 	x.names[name] = append(x.names[name], bound{false, level})
 	x.env = &environment{x.env, v, false, level}
 	x.support |= v.Support()
@@ -68,6 +71,7 @@ func (x *scopeContext) pushVariable(name string, t, v value.Value) {
 func (x *scopeContext) pushDimension(name string, at interval.Dim) {
 	level := len(x.dimensions)
 	x.dimensions = append(x.dimensions, dimension{name, at})
+	x.hints[1] = append(x.hints[1], name)
 	x.names[name] = append(x.names[name], bound{true, level})
 	x.env = &environment{x.env, value.DimensionOf(at), true, level}
 	x.support |= at.Support()
@@ -94,6 +98,7 @@ func (x *scopeContext) reset(variables, dimensions int, env *environment, suppor
 		x.unname(x.dimensions[n].name)
 		x.dimensions = x.dimensions[:n]
 	}
+	x.hints = [2][]string{x.hints[0][:variables], x.hints[1][:dimensions]}
 	x.env, x.support = env, support
 }
 
@@ -107,6 +112,7 @@ func (x *scopeContext) restricted(run *value.Run, cube interval.Cube) *scopeCont
 		y.variables[k] = variable{v.name, run.Substitute(v.t, cut), run.Substitute(v.v, cut)}
 		y.support |= y.variables[k].v.Support()
 	}
+	y.hints = [2][]string{x.variableNames(), x.dimensionNames()}
 	y.dimensions = make([]dimension, len(x.dimensions))
 	for k, d := range x.dimensions {
 		y.dimensions[k] = dimension{d.name, d.at.Subst(cut)}
@@ -129,21 +135,12 @@ func (x *scopeContext) restricted(run *value.Run, cube interval.Cube) *scopeCont
 	return y
 }
 
-func (x *scopeContext) variableNames() []string {
-	out := make([]string, len(x.variables))
-	for k, v := range x.variables {
-		out[k] = v.name
-	}
-	return out
-}
+// variableNames are the names of the variables, outermost first. The slice is
+// lent: what keeps it while x goes on takes a copy. Appending to it makes one.
+func (x *scopeContext) variableNames() []string { return slices.Clip(x.hints[0]) }
 
-func (x *scopeContext) dimensionNames() []string {
-	out := make([]string, len(x.dimensions))
-	for k, d := range x.dimensions {
-		out[k] = d.name
-	}
-	return out
-}
+// dimensionNames are the names of the dimensions, in the same way.
+func (x *scopeContext) dimensionNames() []string { return slices.Clip(x.hints[1]) }
 
 // checker is one elaboration. It implements value.Checker.
 type checker struct {

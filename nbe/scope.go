@@ -33,6 +33,7 @@ func (x *scopeContext) clone() *scopeContext {
 	y := *x
 	y.variables = append([]variable(nil), x.variables...)
 	y.dimensions = append([]dimension(nil), x.dimensions...)
+	y.hints = [2][]string{x.variableNames(), x.dimensionNames()}
 	y.names = make(map[string][]bound, len(x.names))
 	for name, list := range x.names {
 		y.names[name] = append([]bound(nil), list...)

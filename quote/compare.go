@@ -1,6 +1,8 @@
 package quote
 
 import (
+	"slices"
+
 	"example.com/boxwright/value"
 	"example.com/boxwright/value/interval"
 )
@@ -39,7 +41,8 @@ type Difference struct {
 // scope, never as a pair alone.
 type Comparer struct {
 	run        *value.Run
-	variables  []string // hints
+	scope      [2][]string // names of the variables and the dimensions in scope, shared with the caller
+	variables  []string    // hints of those that the comparison went under
 	dimensions []string
 	inclusion  bool
 	memo       map[pairKey]bool // true: equal; false: different
@@ -56,9 +59,10 @@ type pairKey struct {
 }
 
 // NewComparer compares in a scope with the given names of variables and
-// dimensions, whose names as values are their levels. isHole may be nil.
+// dimensions, whose names as values are their levels; the slices are not copied
+// and must stay as they are. isHole may be nil.
 func NewComparer(run *value.Run, variables, dimensions []string, isHole func(value.Global) bool) *Comparer {
-	return &Comparer{run: run, variables: append([]string(nil), variables...), dimensions: append([]string(nil), dimensions...), memo: map[pairKey]bool{}, face: interval.Top(), isHole: isHole}
+	return &Comparer{run: run, scope: [2][]string{variables, dimensions}, memo: map[pairKey]bool{}, face: interval.Top(), isHole: isHole}
 }
 
 // Included decides a ≤ b for types.
@@ -99,11 +103,15 @@ func (c *Comparer) Run() *value.Run { return c.run }
 // Inclusion reports whether the comparison is at ≤ here.
 func (c *Comparer) Inclusion() bool { return c.inclusion }
 
+// level is the level of the next variable, dimension that of the next dimension.
+func (c *Comparer) level() int     { return len(c.scope[0]) + len(c.variables) }
+func (c *Comparer) dimension() int { return len(c.scope[1]) + len(c.dimensions) }
+
 func (c *Comparer) differ(t, a, b value.Value) bool {
 	if c.found == nil {
 		c.found = &Difference{
-			Way: append([]string(nil), c.way...), Face: c.face, Variables: len(c.variables), Dimensions: len(c.dimensions), Type: t, Left: a, Right: b,
-			Names: append([]string(nil), c.variables...), DimensionNames: append([]string(nil), c.dimensions...),
+			Way: append([]string(nil), c.way...), Face: c.face, Variables: c.level(), Dimensions: c.dimension(), Type: t, Left: a, Right: b,
+			Names: slices.Concat(c.scope[0], c.variables), DimensionNames: slices.Concat(c.scope[1], c.dimensions),
 		}
 	}
 	return false
@@ -286,13 +294,13 @@ func (c *Comparer) Dimension(hint string, body func(i value.Name) bool) bool {
 type comparerBinding struct{ c *Comparer }
 
 func (b comparerBinding) Variable(hint string, t value.Value) value.Value {
-	x := value.NewVariable(len(b.c.variables), hint, t)
+	x := value.NewVariable(b.c.level(), hint, t)
 	b.c.variables = append(b.c.variables, hint)
 	return x
 }
 
 func (b comparerBinding) Dimension(hint string) value.Name {
-	i := value.Name(len(b.c.dimensions))
+	i := value.Name(b.c.dimension())
 	b.c.dimensions = append(b.c.dimensions, hint)
 	return i
 }
