@@ -105,6 +105,7 @@ func (x *scopeContext) reset(variables, dimensions int, env *environment, suppor
 // restricted is the context on a cube; names are shared with x.
 func (x *scopeContext) restricted(run *value.Run, cube interval.Cube) *scopeContext {
 	cut := cube.Restriction()
+	run.Charge(int64(len(x.variables)+len(x.dimensions)) * value.PriceNode)
 	y := &scopeContext{names: x.names, face: x.face.And(cube.Face())}
 	y.cube, _ = x.cube.And(cube)
 	y.variables = make([]variable, len(x.variables))
@@ -353,15 +354,16 @@ func (c *checker) Value(core term.Core) value.Value {
 	}
 	env, nv, nd, e := c.env, len(c.variables), len(c.dimensions), c.e
 	return c.run.Later(c.support, func(run *value.Run) value.Value {
-		variables, dimensions, vs := free(core, env, nv, nd)
+		variables, dimensions, vs := free(run, core, env, nv, nd)
 		return eval.Compile(run, e, core, nv, nd, variables, dimensions).Eval(run, vs)
 	})
 }
 
 // free are the levels that core mentions, with their values.
-func free(core term.Core, env *environment, nv, nd int) (variables, dimensions []int, vs []value.Value) {
+func free(run *value.Run, core term.Core, env *environment, nv, nd int) (variables, dimensions []int, vs []value.Value) {
 	hasV, hasD := map[int]bool{}, map[int]bool{}
 	term.Walk(core, func(a term.Arg) bool {
+		run.Work(1)
 		switch a := a.(type) {
 		case *term.Variable:
 			if a.Level < nv {
@@ -384,6 +386,7 @@ func free(core term.Core, env *environment, nv, nd int) (variables, dimensions [
 	})
 	var ds []value.Value
 	for e := env; e != nil && len(variables)+len(dimensions) < len(hasV)+len(hasD); e = e.outer {
+		run.Work(1)
 		switch {
 		case e.dimension && hasD[e.level]:
 			dimensions, ds = append(dimensions, e.level), append(ds, e.v)
@@ -425,7 +428,7 @@ func (c *checker) Scope() (variables, dimensions int) {
 // Case is an elaborated body under binders as a case in the present scope.
 func (c *checker) Case(b *term.Bound, sorts []term.Sort) value.Case {
 	nv, nd := len(c.variables), len(c.dimensions)
-	variables, dimensions, vs := free(b.Body, c.env, nv, nd)
+	variables, dimensions, vs := free(c.run, b.Body, c.env, nv, nd)
 	return eval.CompileCase(c.run, c.e, b, sorts, nv, nd, variables, dimensions, vs)
 }
 

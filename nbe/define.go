@@ -65,7 +65,7 @@ func (e *Engine) global(ctx context.Context, name string, ty, t *term.Written, h
 			c.SameType(old.t, d.t, &term.Error{Kind: term.IllTyped, Place: ty.Place, Message: "the assumption has another type"})
 		}
 		d.core = c.Check(t, d.t)
-		if replaces && e.mentions(d.core, old) {
+		if replaces && e.mentions(run, d.core, old) {
 			c.Fail(t, term.IllTyped, "the definition of an assumption may not use it", nil, name)
 		}
 		d.code = eval.Compile(run, e, d.core, 0, 0, nil, nil)
@@ -87,7 +87,7 @@ func (e *Engine) global(ctx context.Context, name string, ty, t *term.Written, h
 }
 
 // mentions reports whether core uses old, also through definitions.
-func (e *Engine) mentions(core term.Core, old *definition) bool {
+func (e *Engine) mentions(run *value.Run, core term.Core, old *definition) bool {
 	seen := map[string]bool{}
 	work := []term.Core{core}
 	found := false
@@ -95,6 +95,7 @@ func (e *Engine) mentions(core term.Core, old *definition) bool {
 		c := work[len(work)-1]
 		work = work[:len(work)-1]
 		term.Walk(c, func(a term.Arg) bool {
+			run.Work(1)
 			g, ok := a.(*term.Global)
 			if !ok || seen[g.Name] {
 				return !found

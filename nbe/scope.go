@@ -277,7 +277,7 @@ func (s *Scope) forms(ctx context.Context, t *Term, o *callOptions, read func(q 
 }
 
 func (e *Engine) evaluate(run *value.Run, core term.Core, x *scopeContext) value.Value {
-	variables, dimensions, vs := free(core, x.env, len(x.variables), len(x.dimensions))
+	variables, dimensions, vs := free(run, core, x.env, len(x.variables), len(x.dimensions))
 	return eval.Compile(run, e, core, len(x.variables), len(x.dimensions), variables, dimensions).Eval(run, vs)
 }
 

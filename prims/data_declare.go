@@ -103,7 +103,7 @@ type declaring struct {
 // argument is an entry of a telescope in the present scope.
 func (x *declaring) argument(name string, core term.Core) Argument {
 	n, _ := x.c.Scope()
-	used := term.FreeVariables(core, n)
+	used := term.FreeVariables(core, n, x.visit)
 	return Argument{Name: name, Core: core, Used: used, Type: x.c.Compile(core, used, nil)}
 }
 
@@ -114,8 +114,11 @@ func (x *declaring) mentions(c term.Core) bool {
 			return k.Data == x.d
 		}
 		return r.Target == any(x.d)
-	})
+	}, x.visit)
 }
+
+// visit counts the visit of a node.
+func (x *declaring) visit() { x.run.Work(1) }
 
 func (x *declaring) constructor(w *term.Constructor) *Constructor {
 	k := &Constructor{Data: x.d, Name: w.Name, Commutes: true}
@@ -137,7 +140,7 @@ func (x *declaring) constructor(w *term.Constructor) *Constructor {
 			}
 			a.steady = x.steady(nf)
 			n, _ := c.Scope()
-			for _, used := range term.FreeVariables(nf, n) {
+			for _, used := range term.FreeVariables(nf, n, x.visit) {
 				a.Dependent = a.Dependent || used >= len(x.params)
 			}
 			arguments = append(arguments, variable{t, b.Variable(term.Binder{Name: p.Name, Place: p.Place}, t), nil})
@@ -260,7 +263,7 @@ func (x *declaring) commutes(c term.Core, arguments []variable) (ok bool) {
 // closed reports whether c mentions no variable.
 func (x *declaring) closed(c term.Core) bool {
 	n, _ := x.c.Scope()
-	return len(term.FreeVariables(c, n)) == 0
+	return len(term.FreeVariables(c, n, x.visit)) == 0
 }
 
 // steady reports whether transport along a constant line of this normal type is

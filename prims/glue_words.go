@@ -117,10 +117,10 @@ func inferEquiv(c value.Checker, w *term.Written) (value.Core, value.Value) {
 	a, n := c.Type(part(w, 1))
 	v, d := c.Scope()
 	up := func(x term.Core, by int) term.Core {
-		return term.Move{Variables: v, Dimensions: d, MoreVariables: by}.Apply(x)
+		return moved(c, term.Move{Variables: v, Dimensions: d, MoreVariables: by}, x)
 	}
 	upDimension := func(x term.Core, by int) term.Core {
-		return term.Move{Variables: v, Dimensions: d, MoreVariables: by, MoreDimensions: 1}.Apply(x)
+		return moved(c, term.Move{Variables: v, Dimensions: d, MoreVariables: by, MoreDimensions: 1}, x)
 	}
 	variable := func(k int) term.Core { return &term.Variable{Level: v + k} }
 	bound := func(name string, body term.Core) *term.Bound {
@@ -132,7 +132,7 @@ func inferEquiv(c value.Checker, w *term.Written) (value.Core, value.Value) {
 	}
 	fiberOver := func(by int) term.Core { // the same under one more dimension
 		x := fiber(by)
-		return term.Move{Variables: v + by, Dimensions: d, MoreDimensions: 1}.Apply(x)
+		return moved(c, term.Move{Variables: v + by, Dimensions: d, MoreDimensions: 1}, x)
 	}
 	contr := op(sigmaSig, fiber(2), bound("x", op(piSig, fiber(3), bound("y", op(pathSig, bound("_", fiberOver(4)), variable(2), variable(3))))))
 	return op(sigmaSig, op(piSig, t, bound("_", up(a, 1))), bound("f", op(piSig, up(a, 1), bound("y", contr)))), NewUniverse(max(m, n))

@@ -200,7 +200,14 @@ func boundedLine(c value.Checker, line *term.Bound, r interval.Dim) *term.Bound 
 	v, d := c.Scope()
 	j := interval.Name(d)
 	m := term.Move{Variables: v, Dimensions: d + 1, Subst: interval.Assign(j, r.Min(interval.Var(j)))}
-	return &term.Bound{Hints: line.Hints, Body: m.Apply(line.Body)}
+	return &term.Bound{Hints: line.Hints, Body: moved(c, m, line.Body)}
+}
+
+// moved is x moved by m, charged by the node.
+func moved(c value.Checker, m term.Move, x value.Core) value.Core {
+	run := c.Run()
+	m.Each = func() { run.Charge(value.PriceNode) }
+	return m.Apply(x)
 }
 
 // compCore is comp (i.A) u0 [φ ↦ i.u] unfolded:
@@ -208,12 +215,12 @@ func boundedLine(c value.Checker, line *term.Bound, r interval.Dim) *term.Bound 
 func compCore(c value.Checker, line *term.Bound, base value.Core, walls []coreWall) value.Core {
 	v, d := c.Scope()
 	k, j := interval.Name(d), interval.Name(d+1)
-	a1 := term.Move{Variables: v, Dimensions: d + 1, MoreDimensions: -1, Subst: interval.Assign(k, interval.One())}.Apply(line.Body)
+	a1 := moved(c, term.Move{Variables: v, Dimensions: d + 1, MoreDimensions: -1, Subst: interval.Assign(k, interval.One())}, line.Body)
 	u0 := op(transpSig, line, &term.Face{Face: interval.Bot()}, base)
 	us := make([]coreWall, len(walls))
 	for n, w := range walls {
 		m := term.Move{Variables: v, Dimensions: d + 1, MoreDimensions: 1, Subst: w.cube.Restriction().Extend(k, interval.Var(k).Max(interval.Var(j)))}
-		body := op(transpSig, &term.Bound{Hints: line.Hints, Body: m.Apply(line.Body)}, &term.Face{Face: interval.Eq1(k)}, w.body.Body)
+		body := op(transpSig, &term.Bound{Hints: line.Hints, Body: moved(c, m, line.Body)}, &term.Face{Face: interval.Eq1(k)}, w.body.Body)
 		us[n] = coreWall{w.cube, &term.Bound{Hints: w.body.Hints, Body: body}}
 	}
 	return op(hcompSig, a1, u0, wallRows(us))
@@ -227,13 +234,13 @@ func fillCore(c value.Checker, r interval.Dim, base value.Core, walls []coreWall
 	for _, w := range walls {
 		at := r.Subst(w.cube.Restriction()).Min(interval.Var(j))
 		m := term.Move{Variables: v, Dimensions: d + 1, Subst: interval.Assign(j, at)}
-		out = append(out, coreWall{w.cube, &term.Bound{Hints: w.body.Hints, Body: m.Apply(w.body.Body)}})
+		out = append(out, coreWall{w.cube, &term.Bound{Hints: w.body.Hints, Body: moved(c, m, w.body.Body)}})
 	}
 	face := r.Is0()
 	for k := range face.Len() {
 		cube := face.Cube(k)
 		m := term.Move{Variables: v, Dimensions: d, MoreDimensions: 1, Subst: cube.Restriction()}
-		out = append(out, coreWall{cube, &term.Bound{Hints: []string{"_"}, Body: m.Apply(base)}})
+		out = append(out, coreWall{cube, &term.Bound{Hints: []string{"_"}, Body: moved(c, m, base)}})
 	}
 	return out
 }

@@ -1,9 +1,11 @@
 package notation
 
 import (
+	"context"
 	"strings"
 	"unicode/utf8"
 
+	"example.com/boxwright/nbe/internal/watch"
 	"example.com/boxwright/nbe/term"
 )
 
@@ -21,6 +23,15 @@ import (
 // same tree. Cost: linear in the text.
 func Format(w *term.Written, width int) string { return layout(w.String(), width) }
 
+// FormatContext is [Format] in a context, whose end is the error Cancelled.
+func FormatContext(ctx context.Context, w *term.Written, width int) (string, error) {
+	text, err := w.TextContext(ctx)
+	if err != nil {
+		return "", err
+	}
+	return layoutContext(ctx, text, width)
+}
+
 // FormatForm is [Format] for a form of a script.
 func FormatForm(f *Form, width int) string { return layout(f.String(), width) }
 
@@ -36,13 +47,22 @@ type pending struct {
 // layout lays the one-line text of something out. Text that does not read, as
 // one that was cut off, is left as it is.
 func layout(text string, width int) string {
+	text, _ = layoutContext(context.Background(), text, width)
+	return text
+}
+
+func layoutContext(ctx context.Context, text string, width int) (string, error) {
 	if width <= 0 || utf8.RuneCountInString(text) <= width {
-		return text
+		return text, nil
 	}
 	l := &lists{lexer: newLexer(text, "")}
+	l.lexer.watch = watch.Of(ctx)
 	n, ok, err := l.next()
+	if term.KindOf(err) == term.Cancelled {
+		return "", err
+	}
 	if err != nil || !ok {
-		return text
+		return text, nil
 	}
 	var b strings.Builder
 	column := 0
@@ -54,6 +74,9 @@ func layout(text string, width int) string {
 	for len(todo) > 0 {
 		p := todo[len(todo)-1]
 		todo = todo[:len(todo)-1]
+		if err := l.lexer.ended(1); err != nil {
+			return "", err
+		}
 		if p.n == nil {
 			write(p.text)
 			continue
@@ -99,7 +122,7 @@ func layout(text string, width int) string {
 			}
 		}
 	}
-	return b.String()
+	return b.String(), nil
 }
 
 // flat writes n on the line at hand, its lists' items by way of todo.

@@ -6,6 +6,7 @@ import (
 	"unicode"
 	"unicode/utf8"
 
+	"example.com/boxwright/nbe/internal/watch"
 	"example.com/boxwright/nbe/term"
 )
 
@@ -39,6 +40,15 @@ type lexer struct {
 	src, file string
 	pos       int
 	line, col int32
+	watch     *watch.Watch
+}
+
+// ended counts n units of work and returns the error of a context that has ended.
+func (l *lexer) ended(n int) error {
+	if l.watch.Ended(n) {
+		return &term.Error{Kind: term.Cancelled, Place: l.place(l.line, l.col), Message: "cancelled", Cause: l.watch.Cause()}
+	}
+	return nil
 }
 
 func newLexer(src, file string) *lexer {
@@ -86,6 +96,9 @@ func (l *lexer) next() (token, error) {
 	comment := false
 	for {
 		c, size, err := l.peek()
+		if err == nil {
+			err = l.ended(1)
+		}
 		switch {
 		case err != nil:
 			return token{}, err
@@ -121,6 +134,9 @@ func (l *lexer) token(c rune) (token, error) {
 	t.kind = wordToken
 	for {
 		c, size, err := l.peek()
+		if err == nil {
+			err = l.ended(1)
+		}
 		if err != nil {
 			return t, err
 		}
@@ -140,6 +156,9 @@ func (l *lexer) quoted(t token) (token, error) {
 	t.kind = textToken
 	for {
 		c, size, err := l.peek()
+		if err == nil {
+			err = l.ended(1)
+		}
 		if err != nil {
 			return t, err
 		}

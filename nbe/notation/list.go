@@ -72,6 +72,7 @@ func (l *lists) next() (n node, ok bool, err error) {
 				return node{}, false, l.fault(term.Malformed, t.line, t.col, "a parenthesis closes nothing", "a form", ")")
 			}
 			n = l.close()
+			l.lexer.watch.Ended(len(n.items))
 		default:
 			n = node{text: t.text, line: t.line, col: t.col, width: t.characters}
 			if t.kind == textToken {

@@ -1,10 +1,12 @@
 package notation
 
 import (
+	"context"
 	"fmt"
 	"math/big"
 	"strings"
 
+	"example.com/boxwright/nbe/internal/watch"
 	"example.com/boxwright/nbe/term"
 )
 
@@ -18,7 +20,7 @@ import (
 // form the first in the text is reported.
 
 // MaxDigits is how many digits a numeral in a text may have; a longer one is OutOfBudget.
-const MaxDigits = 100_000
+const MaxDigits = term.MaxDigits
 
 // ReadTerm reads src, which must hold one term and nothing else, of the words
 // w (nil: those of the notation). Places carry file. The errors are
@@ -26,7 +28,12 @@ const MaxDigits = 100_000
 // found, OutOfBudget for text beyond [MaxNesting] or [MaxDigits]. Cost: linear
 // in src, but for the conversion of long numerals. Safe for concurrent use.
 func ReadTerm(src, file string, w *Words) (*term.Written, error) {
-	r := newReader(src, file, w)
+	return ReadTermContext(context.Background(), src, file, w)
+}
+
+// ReadTermContext is [ReadTerm] in a context, whose end is the error Cancelled.
+func ReadTermContext(ctx context.Context, src, file string, w *Words) (*term.Written, error) {
+	r := newReader(ctx, src, file, w)
 	n, ok, err := r.lists.next()
 	if err != nil {
 		return nil, err
@@ -121,8 +128,10 @@ type task struct {
 	dst  **term.Written
 }
 
-func newReader(src, file string, w *Words) *reader {
-	return &reader{words: w.orBuiltin(), lists: &lists{lexer: newLexer(src, file)}, names: map[string]string{}}
+func newReader(ctx context.Context, src, file string, w *Words) *reader {
+	l := newLexer(src, file)
+	l.watch = watch.Of(ctx)
+	return &reader{words: w.orBuiltin(), lists: &lists{lexer: l}, names: map[string]string{}}
 }
 
 func (r *reader) place(n *node) term.Place { return r.lists.lexer.place(n.line, n.col) }
@@ -156,6 +165,9 @@ func (r *reader) run() error {
 	for len(r.todo) > 0 {
 		t := r.todo[len(r.todo)-1]
 		r.todo = r.todo[:len(r.todo)-1]
+		if err := r.lists.lexer.ended(1 + len(t.n.items)); err != nil {
+			return err
+		}
 		switch t.n.kind {
 		case textNode:
 			r.fault(t.n, t.here.String())
@@ -217,6 +229,7 @@ func (r *reader) numeral(n *node, here position) *term.Written {
 		r.fault(n, here.String())
 		return nil
 	}
+	r.lists.lexer.watch.Ended(len(n.text)) // the conversion takes longer than other words
 	number, _ := new(big.Int).SetString(n.text, 10)
 	return &term.Written{Kind: term.NumeralKind, Number: number, Place: r.place(n)}
 }

@@ -1,6 +1,7 @@
 package notation
 
 import (
+	"context"
 	"slices"
 
 	"example.com/boxwright/nbe/term"
@@ -71,7 +72,12 @@ var formUsage = [...]string{
 // Cost: linear in src, but for the conversion of long numerals. Safe for
 // concurrent use.
 func ReadScript(src []byte, file string, w *Words) ([]Form, error) {
-	r := newReader(string(src), file, w)
+	return ReadScriptContext(context.Background(), src, file, w)
+}
+
+// ReadScriptContext is [ReadScript] in a context, whose end is the error Cancelled.
+func ReadScriptContext(ctx context.Context, src []byte, file string, w *Words) ([]Form, error) {
+	r := newReader(ctx, string(src), file, w)
 	var out []Form
 	for {
 		n, ok, err := r.lists.next()

@@ -36,10 +36,14 @@ func Walk(c Core, visit func(Arg) bool) {
 	}
 }
 
-// FreeVariables are the levels below n that c mentions, in order.
-func FreeVariables(c Core, n int) []int {
+// FreeVariables are the levels below n that c mentions, in order. each, if not
+// nil, is called for every node that is visited.
+func FreeVariables(c Core, n int, each func()) []int {
 	has := make([]bool, n)
 	Walk(c, func(a Arg) bool {
+		if each != nil {
+			each()
+		}
 		if v, ok := a.(*Variable); ok && v.Level < n {
 			has[v.Level] = true
 		}
@@ -54,9 +58,13 @@ func FreeVariables(c Core, n int) []int {
 	return out
 }
 
-// References reports whether c mentions a declaration for which is holds.
-func References(c Core, is func(Reference) bool) (found bool) {
+// References reports whether c mentions a declaration for which is holds. each,
+// if not nil, is called for every node that is visited.
+func References(c Core, is func(Reference) bool, each func()) (found bool) {
 	Walk(c, func(a Arg) bool {
+		if each != nil {
+			each()
+		}
 		if r, ok := a.(Reference); ok && is(r) {
 			found = true
 		}

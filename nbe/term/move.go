@@ -10,6 +10,7 @@ type Move struct {
 	Variables, Dimensions         int // the scope the term comes from
 	MoreVariables, MoreDimensions int // how many binders the new scope has beyond it; may be negative for dimensions that Subst removes
 	Subst                         *interval.Subst
+	Each                          func() // called for each operator that is made, to charge it; may panic; nil: none
 }
 
 // Apply moves c. Sharing is kept; the cost is linear in c as a shared graph.
@@ -43,11 +44,16 @@ func (m *mover) core(c Core, depth int) Core {
 		var out Core
 		if depth > 0 && depth%moveHop == 0 {
 			done := make(chan struct{})
+			var thrown any
 			go func() {
 				defer close(done)
+				defer func() { thrown = recover() }()
 				out = m.op(c, depth+1)
 			}()
 			<-done
+			if thrown != nil {
+				panic(thrown)
+			}
 		} else {
 			out = m.op(c, depth+1)
 		}
@@ -58,6 +64,9 @@ func (m *mover) core(c Core, depth int) Core {
 }
 
 func (m *mover) op(c *Op, depth int) Core {
+	if m.Each != nil {
+		m.Each()
+	}
 	out := &Op{Sig: c.Sig, Args: make([]Arg, len(c.Args))}
 	for k, a := range c.Args {
 		out.Args[k] = m.arg(a, depth)

@@ -129,6 +129,9 @@ func (w *writer) choose() {
 		}
 	}
 	for _, k := range w.events {
+		if w.watch.Ended(1) {
+			return
+		}
 		if k < 0 {
 			c.close()
 		} else {

@@ -1,6 +1,12 @@
 package term
 
-import "strings"
+import (
+	"context"
+	"math/big"
+	"strings"
+
+	"example.com/boxwright/nbe/internal/watch"
+)
 
 // The text of a written term on one line.
 //
@@ -29,6 +35,16 @@ func (w *Written) Text(limit int) string {
 	return p.out.String()
 }
 
+// TextContext is [Written.String] in a context, whose end is the error Cancelled.
+func (w *Written) TextContext(ctx context.Context) (string, error) {
+	p := printer{limit: MaxText, watch: watch.Of(ctx)}
+	p.push(w)
+	if p.run(); p.watch.Cause() != nil {
+		return "", ended(p.watch)
+	}
+	return p.out.String(), nil
+}
+
 // piece is what remains to be printed: a text, a term, or the rest of a nest
 // that is written as one form. The rest is not taken apart before its turn
 // comes: in a shared graph every nest may hold further ones.
@@ -42,6 +58,7 @@ type piece struct {
 type printer struct {
 	out    strings.Builder
 	limit  int
+	watch  *watch.Watch
 	todo   []piece
 	pieces []piece // of the form at hand, in order
 }
@@ -64,7 +81,7 @@ func (p *printer) namesAfter(before string, binders []Binder) {
 
 // run prints the pieces until none is left or the limit is passed.
 func (p *printer) run() {
-	for len(p.todo) > 0 {
+	for len(p.todo) > 0 && !p.watch.Ended(1) {
 		next := p.todo[len(p.todo)-1]
 		p.todo = p.todo[:len(p.todo)-1]
 		if p.out.Len() > p.limit {
@@ -87,6 +104,16 @@ func (p *printer) run() {
 	}
 }
 
+// number prints n; one that the notation has no room for is cut off.
+func (p *printer) number(n *big.Int) {
+	if tooLong(n) {
+		p.text("(" + cutMark + ")")
+		return
+	}
+	p.text(n.String())
+	p.watch.Ended(n.BitLen() / 8)
+}
+
 // missing stands for a part that a badly built term lacks; it does not read back.
 const missing = "()"
 
@@ -100,7 +127,7 @@ func (p *printer) expand(w *Written) {
 			p.text(missing)
 			return
 		}
-		p.text(w.Number.String())
+		p.number(w.Number)
 	case ApplyKind:
 		p.application(w)
 	case FormKind:
@@ -176,7 +203,7 @@ func (w *Written) isPlain(word string) bool {
 
 func (p *printer) nestedNames(w *Written) {
 	word, before := w.Word, " ("
-	for w.isChain(word, 1, 0) {
+	for w.isChain(word, 1, 0) && !p.watch.Ended(1) {
 		p.text(before)
 		p.text(w.Parts[0].Binders[0].Name)
 		before, w = " ", w.Parts[0].Body
@@ -224,7 +251,7 @@ func (p *printer) follow(word string, w *Written) {
 
 func (p *printer) nestedAt(w *Written) {
 	var dimensions []*Written
-	for w.isPlain("at") {
+	for w.isPlain("at") && !p.watch.Ended(1) {
 		dimensions = append(dimensions, w.Parts[1].Body)
 		w = w.Parts[0].Body
 	}

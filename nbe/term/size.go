@@ -1,6 +1,10 @@
 package term
 
-import "math/big"
+import (
+	"math/big"
+
+	"example.com/boxwright/nbe/internal/watch"
+)
 
 // The size of core terms, as trees and as the graphs they are. A tree may be
 // exponentially larger than its graph, so each node's size is worked out once,
@@ -22,8 +26,8 @@ func Size(c Core) (tree *big.Int, nodes int) {
 }
 
 // writtenSize is the tree size of what the writer writes: without silent arguments.
-func writtenSize(c Core) *big.Int {
-	m := measure{sizes: map[Arg]count{}, written: true}
+func writtenSize(c Core, w *watch.Watch) *big.Int {
+	m := measure{sizes: map[Arg]count{}, written: true, watch: w}
 	return m.of(c).big()
 }
 
@@ -66,6 +70,7 @@ type measure struct {
 	todo    []Arg
 	written bool
 	nodes   int
+	watch   *watch.Watch
 }
 
 func (m *measure) of(c Core) count {
@@ -73,7 +78,7 @@ func (m *measure) of(c Core) count {
 		return count{}
 	}
 	m.todo = append(m.todo, c)
-	for len(m.todo) > 0 {
+	for len(m.todo) > 0 && !m.watch.Ended(1) {
 		a := m.todo[len(m.todo)-1]
 		if _, ok := m.sizes[a]; ok {
 			m.todo = m.todo[:len(m.todo)-1]

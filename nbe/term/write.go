@@ -1,9 +1,11 @@
 package term
 
 import (
+	"context"
 	"fmt"
 	"math/big"
 
+	"example.com/boxwright/nbe/internal/watch"
 	"example.com/boxwright/value/interval"
 )
 
@@ -36,12 +38,18 @@ type Names struct {
 // that is empty, "_" or no name is replaced, by "_" where the name is not used.
 // A name of the scope that a later one hides is written as a variant of it.
 // The errors are [*Error]: OutOfBudget when c is larger than names.Size as a
-// tree, with the size, a *big.Int, as its Detail; WrongScope for a level
+// tree, with the size, a *big.Int, as its Detail, or for a numeral that the
+// notation has no room for ([MaxDigits]); WrongScope for a level
 // without a name; Internal for an operator that does not fit its signature.
 // Cost: linear in the result, times the logarithm of its size at worst. Safe
 // for concurrent use.
 func Write(c Core, names Names) (*Written, error) {
-	w := writer{limit: names.Size, taken: names.Taken}
+	return WriteContext(context.Background(), c, names)
+}
+
+// WriteContext is [Write] in a context, whose end is the error Cancelled.
+func WriteContext(ctx context.Context, c Core, names Names) (*Written, error) {
+	w := writer{limit: names.Size, taken: names.Taken, watch: watch.Of(ctx)}
 	if w.limit <= 0 {
 		w.limit = DefaultSize
 	}
@@ -49,18 +57,48 @@ func Write(c Core, names Names) (*Written, error) {
 	w.openScope(names)
 	w.core(c, &root)
 	w.run()
-	if w.failed == nil && w.made > w.limit {
-		size := writtenSize(c)
+	if w.failed == nil && w.made > w.limit && w.watch.Cause() == nil {
+		size := writtenSize(c, w.watch)
 		w.failed = &Error{
 			Kind: OutOfBudget, Message: "the term is too large to be written", Detail: size,
 			WantText: fmt.Sprintf("at most %d nodes", w.limit), GotText: sizeText(size),
 		}
 	}
+	if w.watch.Cause() != nil {
+		return nil, ended(w.watch)
+	}
 	if w.failed != nil {
 		return nil, w.failed
 	}
-	w.choose()
+	if w.choose(); w.watch.Cause() != nil {
+		return nil, ended(w.watch)
+	}
 	return root, nil
+}
+
+// ended is the error of a context that has ended.
+func ended(w *watch.Watch) *Error {
+	return &Error{Kind: Cancelled, Message: "cancelled", Cause: w.Cause()}
+}
+
+// MaxDigits is how many decimal digits a numeral of the notation may have: what
+// is read and what is written. Converting more would take long and could not be
+// interrupted.
+const MaxDigits = 100_000
+
+// tooLong reports whether n has more than MaxDigits digits, by its bits: 3.3219
+// of them for a digit, less one.
+func tooLong(n *big.Int) bool { return n != nil && n.BitLen() > MaxDigits*33219/10000 }
+
+// number is the numeral n.
+func (w *writer) number(n *big.Int) *Written {
+	if tooLong(n) && w.failed == nil {
+		w.failed = &Error{
+			Kind: OutOfBudget, Message: "a numeral is too long to be written", Detail: new(big.Int).SetInt64(int64(n.BitLen())),
+			WantText: fmt.Sprintf("at most %d digits", MaxDigits), GotText: fmt.Sprintf("%d bits", n.BitLen()),
+		}
+	}
+	return &Written{Kind: NumeralKind, Number: n}
 }
 
 // sizeText says how large a tree is.
@@ -76,6 +114,7 @@ type writer struct {
 	limit, made int
 	taken       func(string) bool
 	failed      *Error
+	watch       *watch.Watch
 	todo        []job
 	// What is in scope at the place being written, by level: indices of bound.
 	variables, dimensions []int
@@ -93,7 +132,7 @@ type job struct {
 }
 
 func (w *writer) run() {
-	for len(w.todo) > 0 && w.failed == nil && w.made <= w.limit {
+	for len(w.todo) > 0 && w.failed == nil && w.made <= w.limit && !w.watch.Ended(1) {
 		last := len(w.todo) - 1
 		j := w.todo[last]
 		w.todo = w.todo[:last]
@@ -250,7 +289,7 @@ func (w *writer) arg(a Arg, slot Slot, part *Part) {
 	case Level:
 		part.Body = Numeral(uint64(max(a, 0)))
 	case Number:
-		part.Body = &Written{Kind: NumeralKind, Number: a.Int}
+		part.Body = w.number(a.Int)
 	case Reference:
 		part.Body = w.mention(a.Name)
 	default:

@@ -47,6 +47,9 @@ func (w *writer) app(c *Op) *Written {
 			w.fail(Internal, "what is applied is %T", o.Args[0])
 			return nil
 		}
+		if w.watch.Ended(1) {
+			return nil
+		}
 		if n++; w.made+n > w.limit {
 			w.made = w.limit + 1 // each argument counts too
 			return nil
@@ -141,7 +144,7 @@ func (w *writer) numeral(c *Op) *Written {
 		w.fail(Internal, "a numeral without a number")
 		return nil
 	}
-	return &Written{Kind: NumeralKind, Number: n.Int}
+	return w.number(n.Int)
 }
 
 // elim writes an elimination: its arguments are the declaration and its
