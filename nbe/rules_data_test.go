@@ -54,7 +54,7 @@ func TestRuleStrictHcompArguments(t *testing.T) {
 			left:  "(hcomp (Two A C) (two a c) ((= k 0) (i) (two (at p i) (at pc i))))",
 			right: "(two (hcomp A a ((= k 0) (i) (at p i))) (hcomp C c ((= k 0) (i) (at pc i))))"},
 		law{name: "the choice is the declaration's, not the instance's", source: source, dims: "k", ty: "(Crate A (lam (_) C))",
-			left: "(hcomp (Crate A (lam (_) C)) (crate a c) ((= k 0) (i) (crate (at p i) (at pc i))))",
+			left:  "(hcomp (Crate A (lam (_) C)) (crate a c) ((= k 0) (i) (crate (at p i) (at pc i))))",
 			right: `(crate (hcomp A a ((= k 0) (i) (at p i))) (comp (_ C) c ((= k 0) (i) (at pc i))))`},
 	)
 }

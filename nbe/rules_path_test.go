@@ -35,10 +35,10 @@ func TestRuleHcompPath(t *testing.T) {
 	const source = "CCHM 2015, 4.5; CHM 2018, 2"
 	holds(t, paths,
 		law{name: "not over", source: source, dims: "k", ty: "(Path A a b)",
-			left: "(hcomp (Path A a b) p ((= k 0) (i) (at q i)))",
+			left:  "(hcomp (Path A a b) p ((= k 0) (i) (at q i)))",
 			right: `(line (j) (hcomp A (at p j) ((= k 0) (i) (at q i j)) ((= j 0) (_) a) ((= j 1) (_) b)))`},
 		law{name: "over a line", source: source, dims: "k", ty: "(PathOver (i (LA i)) m0 m1)",
-			left: "(hcomp (PathOver (i (LA i)) m0 m1) o ((= k 1) (i) (at oq i)))",
+			left:  "(hcomp (PathOver (i (LA i)) m0 m1) o ((= k 1) (i) (at oq i)))",
 			right: `(line (j) (hcomp (LA j) (at o j) ((= k 1) (i) (at oq i j)) ((= j 0) (_) m0) ((= j 1) (_) m1)))`},
 		law{name: "no wall keeps the ends", source: source, ty: "(Path A a b)",
 			left: "(hcomp (Path A a b) p)", right: "(line (j) (hcomp A (at p j) ((= j 0) (_) a) ((= j 1) (_) b)))"},
@@ -62,7 +62,7 @@ func TestRuleTranspPath(t *testing.T) {
 	const source = "CCHM 2015, 4.5; CHM 2018, 2"
 	holds(t, paths,
 		law{name: "over a line, moving ends", source: source, ty: "(PathOver (j (M 1 j)) (e0 1) (e1 1))",
-			left: "(transp (i (PathOver (j (M i j)) (e0 i) (e1 i))) bot mp)",
+			left:  "(transp (i (PathOver (j (M i j)) (e0 i) (e1 i))) bot mp)",
 			right: `(line (j) (comp (i (M i j)) (at mp j) ((= j 0) (i) (e0 i)) ((= j 1) (i) (e1 i))))`},
 		law{name: "constant on a face", source: source, dims: "k", ty: "(PathOver (j (M k j)) (e0 k) (e1 k))",
 			left: "(transp (i (PathOver (j (M (min i k) j)) (e0 (min i k)) (e1 (min i k)))) (= k 0) mp)",
