@@ -150,7 +150,7 @@ func counted(run *value.Run, v value.Value) (n natural, rest value.Value) {
 		case *Number:
 			return n.plus(w.n), nil
 		case *Successors:
-			run.Step()
+			run.Take(value.StepNumeral)
 			n, v = n.plus(w.count), w.base
 		default:
 			return n, w
@@ -181,10 +181,27 @@ func (t *DataType) sameNumber(c value.Comparer, a, b value.Value) bool {
 	run := c.Run()
 	m, x := counted(run, a)
 	n, y := counted(run, b)
-	if x == nil || y == nil {
-		return x == nil && y == nil && m.equal(n)
+	if x == nil && y == nil {
+		return m.equal(n)
 	}
-	return m.equal(n) && c.Terms("the number below the successors", t, x, y)
+	if x != nil && y != nil && m.equal(n) {
+		return c.Terms("the number below the successors", t, x, y)
+	}
+	// what is left below the common successors differs, unless a hole there says more
+	least := m
+	if n.less(m) {
+		least = n
+	}
+	if least.isZero() {
+		return false
+	}
+	below := func(n natural, rest value.Value) value.Value {
+		if rest == nil {
+			return newNumber(t.Data, n.minus(least))
+		}
+		return successors(t.Data, n.minus(least), rest)
+	}
+	return c.Terms("the number below the successors", t, below(m, x), below(n, y))
 }
 
 var numeralSig = &term.Signature{Name: "numeral", Slots: []term.CoreSlot{{}, {Slot: term.Slot{Sort: term.NameSort}, Silent: true}}}
