@@ -162,7 +162,7 @@ func (c *checker) Infer(w *term.Written) (core term.Core, t value.Value) {
 }
 
 func (c *checker) infer(w *term.Written) (term.Core, value.Value) {
-	c.run.Step()
+	c.run.Take(value.StepCheck)
 	if w == nil {
 		c.Fail(w, term.Malformed, "a term is missing", "a term", nil)
 	}
@@ -241,7 +241,7 @@ func (c *checker) Check(w *term.Written, t value.Value) (core term.Core) {
 }
 
 func (c *checker) check(w *term.Written, t value.Value) term.Core {
-	c.run.Step()
+	c.run.Take(value.StepCheck)
 	if w == nil {
 		c.Fail(w, term.Malformed, "a term is missing", "a term", nil)
 	}

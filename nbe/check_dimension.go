@@ -2,6 +2,7 @@ package nbe
 
 import (
 	"example.com/boxwright/nbe/term"
+	"example.com/boxwright/value"
 	"example.com/boxwright/value/interval"
 )
 
@@ -47,7 +48,7 @@ func (c *checker) Dimension(w *term.Written) (d interval.Dim) {
 		switch w.Word {
 		case "min", "max", "rev":
 			c.word(w)
-			c.run.Step()
+			c.run.Take(value.StepDimensional)
 			c.run.Down(func() {
 				d = c.Dimension(w.Parts[0].Body)
 				for _, p := range w.Parts[1:] {
@@ -103,7 +104,7 @@ func (c *checker) Face(w *term.Written) (f interval.Face) {
 		return d.Is0()
 	case "and", "or":
 		c.word(w)
-		c.run.Step()
+		c.run.Take(value.StepDimensional)
 		c.run.Down(func() {
 			f = c.Face(w.Parts[0].Body)
 			for _, p := range w.Parts[1:] {

@@ -250,7 +250,7 @@ func (e *Engine) call(ctx context.Context, o *callOptions, body func(run *value.
 	run := value.NewRun(s)
 	defer func() {
 		if o.stats != nil {
-			*o.stats = run.Stats
+			*o.stats = run.Snapshot()
 		}
 		if thrown := recover(); thrown != nil {
 			err = value.ErrorOf(thrown)

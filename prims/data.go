@@ -24,6 +24,7 @@ type Data struct {
 	raised       int       // the level so far, while it is being declared
 	declared     bool      // the declaration is complete
 	eliminator   term.Reference
+	label        *value.Label // its name in counters and profiles
 }
 
 // Argument is one entry of a telescope: of parameters, or of a constructor's arguments.
@@ -123,7 +124,7 @@ func NewCon(run *value.Run, c *Constructor, params, args []value.Value, dims []i
 	s := dimensionSubst(dims)
 	for _, b := range c.Boundary {
 		if b.Cube.Subst(s).IsTop() {
-			run.Step()
+			run.Take(value.StepBoundary)
 			return b.Element.OpenAll(run, environment(params, args, dims))
 		}
 	}

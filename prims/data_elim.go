@@ -165,6 +165,14 @@ func (e *Eliminator) hypothesisOf(run *value.Run, n *value.Neutral) (value.Value
 // Eliminate eliminates v, on demand; the result may be lazy.
 func (e *Eliminator) Eliminate(run *value.Run, v value.Value) value.Value {
 	v = run.Force(v)
+	if run.Traced() {
+		return e.traced(run, v)
+	}
+	return e.eliminate(run, v)
+}
+
+// eliminate eliminates v, which is forced.
+func (e *Eliminator) eliminate(run *value.Run, v value.Value) value.Value {
 	switch v := v.(type) {
 	case *value.Neutral:
 		if len(e.assumed) > 0 {
@@ -181,7 +189,7 @@ func (e *Eliminator) Eliminate(run *value.Run, v value.Value) value.Value {
 		}
 	case *Successors:
 		if e.step != nil && e.step.affine && !run.Plain.NoNumerals {
-			run.Step()
+			run.Take(value.StepNumeral)
 			return successors(e.data, e.step.count.times(v.count), run.Force(e.Eliminate(run, v.base)))
 		}
 	}
@@ -197,7 +205,7 @@ func (e *Eliminator) Eliminate(run *value.Run, v value.Value) value.Value {
 }
 
 func (e *Eliminator) onCase(run *value.Run, c *Constructor, args []value.Value, dims []interval.Dim) value.Value {
-	run.Step()
+	run.Take(value.StepEliminate)
 	if e.cases[c.Index] == nil {
 		run.Fault("the case of %s is not there yet", c.Name)
 	}
@@ -231,7 +239,7 @@ func (e *Eliminator) Later(run *value.Run, v value.Value) value.Value {
 
 // composite commutes the elimination with a formal composite.
 func (e *Eliminator) composite(run *value.Run, v *Formal) value.Value {
-	run.Step()
+	run.Take(value.StepEliminate)
 	i := run.Fresh(e.support | v.support)
 	h := Hfill(run, i, v.Type, v.Base, v.Walls)
 	walls := v.Walls.Map(run, e.support, 0, func(run *value.Run, _ value.Name, u value.Value, cut *value.Subst) value.Value {

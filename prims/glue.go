@@ -136,13 +136,16 @@ func (g *GlueElement) Substitute(run *value.Run, s *value.Subst) value.Value {
 func Unglue(run *value.Run, parts []GluePart, b value.Value) value.Value {
 	for _, p := range parts {
 		if p.Cube.IsTop() {
-			run.Step()
+			run.Take(value.StepUnglue)
 			return Apply(run, First(run, p.E), b)
 		}
 	}
 	switch b := run.Force(b).(type) {
 	case *GlueElement:
-		run.Step()
+		run.Take(value.StepUnglue)
+		if run.Followed() {
+			return unglueFollowed(run, b)
+		}
 		return b.Base
 	case *value.Neutral:
 		return b.Eliminate(run, &unglueFrame{parts})

@@ -16,12 +16,21 @@ func Hcomp(run *value.Run, a, base value.Value, walls value.System) value.Value 
 	if w, ok := walls.Top(); ok {
 		return w.End(run)
 	}
-	run.Step()
-	run.Composites++
-	switch t := run.Force(a).(type) {
+	t := run.Force(a)
+	if run.Traced() {
+		return hcompTraced(run, t, base, walls)
+	}
+	return hcompAt(run, t, base, walls)
+}
+
+// hcompAt is Hcomp at a type that is forced.
+func hcompAt(run *value.Run, t, base value.Value, walls value.System) value.Value {
+	switch t := t.(type) {
 	case value.Type:
+		run.Composite(t)
 		return t.Hcomp(run, base, walls)
 	case *value.Neutral:
+		run.Composite(nil)
 		frontier, faces := t.Frontier()
 		return stuckHcomp(t, base, walls, frontier, faces)
 	default:
@@ -45,13 +54,22 @@ func Transp(run *value.Run, i value.Name, a value.Value, phi interval.Face, v va
 	if phi.IsTop() {
 		return v
 	}
-	run.Step()
-	run.Transports++
 	i, a = FreshLine(run, i, a, phi.Support()|v.Support())
-	switch t := run.Force(a).(type) {
+	t := run.Force(a)
+	if run.Traced() {
+		return transpTraced(run, i, t, phi, v)
+	}
+	return transpAt(run, i, t, phi, v)
+}
+
+// transpAt is Transp along a line that is forced and whose name is fresh.
+func transpAt(run *value.Run, i value.Name, t value.Value, phi interval.Face, v value.Value) value.Value {
+	switch t := t.(type) {
 	case value.Type:
+		run.Transport(t)
 		return t.Transp(run, i, phi, v)
 	case *value.Neutral:
+		run.Transport(nil)
 		return stuckTransp(i, t, phi, v)
 	default:
 		run.Fault("transp along %T, which is no type", t)

@@ -66,7 +66,7 @@ func elaborateWalls(c value.Checker, rows [][]term.Part, base value.Core, typeAt
 			c.Same(typeAt(value.Zero()), c.Value(base), u.OpenAll(run, []value.Value{value.Zero()}),
 				&term.Error{Kind: term.Disagreement, Place: at.Place, Message: "the wall does not stand on the base"})
 			for _, other := range walls {
-				run.Step() // many walls make many pairs
+				run.Take(value.StepDimensional) // many walls make many pairs
 				c.Under(other.cube.Face(), nil, func(interval.Cube) {
 					d := next(c)
 					t, a, b := typeAt(d), c.Case(other.body, dimensions).OpenAll(run, []value.Value{d}), c.Case(body, dimensions).OpenAll(run, []value.Value{d})

@@ -74,7 +74,7 @@ func (elimOp) Demands(args []eval.Arg) []*eval.Arg {
 // hypothesis and the number is to be taken apart by one.
 func (e *Eliminator) numeral(run *value.Run, v *Number) (value.Value, bool) {
 	if e.step != nil && e.step.affine && !run.Plain.NoNumerals {
-		run.Step()
+		run.Take(value.StepNumeral)
 		n := e.step.count.times(v.n)
 		run.Charge(n.price())
 		// the base is forced, so that sums of sums are numbers and no chains
@@ -92,7 +92,7 @@ func (e *Eliminator) numeral(run *value.Run, v *Number) (value.Value, bool) {
 	frame[0] = v // where the step does not look at it
 	counts := step.Uses(0)
 	for k := range v.n.small {
-		run.Step()
+		run.Take(value.StepEliminate)
 		if counts {
 			frame[0] = newNumber(e.data, natural{small: k})
 		}

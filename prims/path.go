@@ -71,7 +71,10 @@ func (t *Path) Transp(run *value.Run, i value.Name, phi interval.Face, p value.V
 func At(run *value.Run, p value.Value, r interval.Dim) value.Value {
 	switch p := run.Force(p).(type) {
 	case *PathLam:
-		run.Step()
+		run.Take(value.StepAt)
+		if run.Followed() {
+			return atFollowed(run, p, r)
+		}
 		return p.Body.Apply(run, value.DimensionOf(r))
 	case *value.Neutral:
 		if r.IsEnd() {

@@ -72,14 +72,22 @@ var transpPi = &value.Rule{Name: "x", Apply: func(run *value.Run, c *value.Captu
 func Apply(run *value.Run, f, x value.Value) value.Value {
 	switch f := run.Force(f).(type) {
 	case *Lam:
-		run.Step()
-		return f.Body.Apply(run, x)
+		return beta(run, f, x)
 	case *value.Neutral:
 		return f.Eliminate(run, &applyFrame{x})
 	default:
 		run.Fault("application of %T, which is no function", f)
 		return nil
 	}
+}
+
+// beta is f x by β.
+func beta(run *value.Run, f *Lam, x value.Value) value.Value {
+	run.Take(value.StepApply)
+	if run.Followed() {
+		return betaFollowed(run, f, x)
+	}
+	return f.Body.Apply(run, x)
 }
 
 // LaterApply is Apply in a cell.
@@ -210,11 +218,10 @@ func (applyOp) Called() (function, argument int) { return 0, 1 }
 func (applyOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 	fn := run.Force(args[0].Eval(run, f))
 	if l, ok := fn.(*Lam); ok {
-		run.Step()
 		if l.Body.Strict(run) {
-			return l.Body.Apply(run, run.Force(args[1].Eval(run, f)))
+			return beta(run, l, run.Force(args[1].Eval(run, f)))
 		}
-		return l.Body.Apply(run, args[1].Delay(run, f))
+		return beta(run, l, args[1].Delay(run, f))
 	}
 	return Apply(run, fn, args[1].Delay(run, f))
 }

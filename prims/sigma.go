@@ -59,7 +59,10 @@ func (t *Sigma) Transp(run *value.Run, i value.Name, phi interval.Face, p value.
 func First(run *value.Run, p value.Value) value.Value {
 	switch p := run.Force(p).(type) {
 	case *Pair:
-		run.Step()
+		run.Take(value.StepProject)
+		if run.Followed() {
+			return projectFollowed(run, p, firstFrame, p.A)
+		}
 		return p.A
 	case *value.Neutral:
 		return p.Eliminate(run, firstFrame)
@@ -73,7 +76,10 @@ func First(run *value.Run, p value.Value) value.Value {
 func Second(run *value.Run, p value.Value) value.Value {
 	switch p := run.Force(p).(type) {
 	case *Pair:
-		run.Step()
+		run.Take(value.StepProject)
+		if run.Followed() {
+			return projectFollowed(run, p, secondFrame, p.B)
+		}
 		return p.B
 	case *value.Neutral:
 		return p.Eliminate(run, secondFrame)

@@ -67,6 +67,9 @@ func NewComparer(run *value.Run, variables, dimensions []string, isHole func(val
 
 // Included decides a ≤ b for types.
 func (c *Comparer) Included(a, b value.Value) Verdict {
+	if c.run.Traced() {
+		defer c.run.Out(c.run.In(value.ComparingSite))
+	}
 	c.inclusion = true
 	ok := c.Types("", a, b)
 	c.inclusion = false
@@ -74,10 +77,18 @@ func (c *Comparer) Included(a, b value.Value) Verdict {
 }
 
 // EqualAt decides whether a and b are equal at t.
-func (c *Comparer) EqualAt(t, a, b value.Value) Verdict { return c.verdict(c.Terms("", t, a, b)) }
+func (c *Comparer) EqualAt(t, a, b value.Value) Verdict {
+	if c.run.Traced() {
+		defer c.run.Out(c.run.In(value.ComparingSite))
+	}
+	return c.verdict(c.Terms("", t, a, b))
+}
 
 // EqualAsTypes decides whether two types are equal.
 func (c *Comparer) EqualAsTypes(a, b value.Value) Verdict {
+	if c.run.Traced() {
+		defer c.run.Out(c.run.In(value.ComparingSite))
+	}
 	return c.verdict(c.EqualTypes("", a, b))
 }
 
@@ -176,7 +187,7 @@ func (c *Comparer) Types(step string, a, b value.Value) bool {
 		return known || c.differ(nil, a, b)
 	}
 	ok := c.into(step, func() bool {
-		c.run.Step()
+		c.run.Take(value.StepCompare)
 		if c.attempt(a, b) {
 			return true
 		}
@@ -215,7 +226,7 @@ func (c *Comparer) Terms(step string, t, a, b value.Value) bool {
 	inclusion := c.inclusion
 	c.inclusion = false
 	ok := c.into(step, func() bool {
-		c.run.Step()
+		c.run.Take(value.StepCompare)
 		if c.attempt(a, b) {
 			return true
 		}
@@ -271,7 +282,7 @@ func (c *Comparer) Neutrals(a, b *value.Neutral) bool {
 	t := a.Head().Type(c.run)
 	frames := b.Frames()
 	for k, p := range a.Prefixes()[1:] {
-		c.run.Step()
+		c.run.Take(value.StepCompare)
 		before, f := p.Split()
 		if !f.Same(c, frames[k], t) {
 			return false
@@ -325,7 +336,9 @@ func (c *Comparer) Under(cube interval.Cube, body func() bool) bool {
 // Walls compares two systems at type t: the same faces once what is implied is
 // dropped, and equal walls, each at t on its face.
 func (c *Comparer) Walls(t value.Value, a, b value.System) bool {
+	all := len(a) + len(b)
 	a, b = a.Irredundant(), b.Irredundant()
+	c.run.Dropped += int64(all - len(a) - len(b))
 	same := len(a) == len(b)
 	for k := 0; same && k < len(a); k++ {
 		same = a[k].Cube.Equal(b[k].Cube)

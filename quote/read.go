@@ -67,6 +67,9 @@ func (q *Reader) Type(v value.Value) (c value.Core) {
 	if c, ok := q.memo[key]; ok {
 		return c
 	}
+	if q.run.Traced() {
+		defer q.run.Out(q.run.In(value.ReadbackSite))
+	}
 	q.run.Down(func() {
 		if n := q.folded(v); n != nil {
 			c = q.Neutral(n)
@@ -91,6 +94,9 @@ func (q *Reader) Term(t, v value.Value) (c value.Core) {
 	key := memoKey{t, v, q.variables, q.dimensions}
 	if c, ok := q.memo[key]; ok {
 		return c
+	}
+	if q.run.Traced() {
+		defer q.run.Out(q.run.In(value.ReadbackSite))
 	}
 	q.run.Down(func() {
 		if n := q.folded(v); n != nil {
@@ -181,6 +187,7 @@ func (q *Reader) Binders(body func(b value.Binding) value.Core) *term.Bound {
 // wall at t on its own face.
 func (q *Reader) Walls(t value.Value, s value.System) term.Rows {
 	walls := s.Irredundant()
+	q.run.Dropped += int64(len(s) - len(walls))
 	cubes := make([]interval.Cube, len(walls))
 	for k, w := range walls {
 		cubes[k] = w.Cube

@@ -105,7 +105,10 @@ func (w *foldWork) Do(run *Run) Value {
 	if n == nil {
 		return w.from.Unfolded(run)
 	}
-	run.Step()
+	if run.Traced() {
+		return w.doTraced(run, n)
+	}
+	run.Take(StepUnfold)
 	v := run.Unfold(n.head.(*GlobalHead).Global)
 	for _, f := range n.Frames() {
 		v = f.Resume(run, v)
@@ -225,10 +228,21 @@ func (r *Run) refreshOnce(n *Neutral) (w Value) {
 	} else if w = n.head.Recompute(r, nil); n.length > 0 {
 		w = r.resume(n, w)
 	}
-	if l, ok := w.(*Lazy); ok {
-		w = r.Force(l)
+	for {
+		if l, ok := w.(*Lazy); ok {
+			w = r.Force(l)
+		}
+		m, ok := w.(*Neutral)
+		if !ok || m == n {
+			return w
+		}
+		if h, ok := m.head.(*GlobalHead); !ok || r.solutions[h.Global] == nil {
+			return w // it has just been computed as far as it goes
+		}
+		if w = r.refresh(m); w == Value(m) {
+			return w
+		}
 	}
-	return w
 }
 
 func (r *Run) resume(n *Neutral, v Value) Value {

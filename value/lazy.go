@@ -67,6 +67,9 @@ func (w *laterWork) Do(run *Run) Value { return w.f(run) }
 // function captures; whatever stands under a face must have been restricted
 // before.
 func (r *Run) Later(support Support, f func(*Run) Value) Value {
+	if r.Traced() {
+		return r.laterTraced(support, f)
+	}
 	w := &laterWork{f: f}
 	return r.NewLazy(support, &w.Pending, w)
 }
@@ -162,8 +165,12 @@ type substituted struct {
 }
 
 func (w *substituted) Do(run *Run) Value {
+	v := run.Force(w.v)
+	if run.Traced() {
+		return w.doTraced(run, v)
+	}
 	run.Pushed++
-	return run.push(run.Force(w.v), w.s)
+	return run.push(v, w.s)
 }
 
 // push substitutes in a weak head normal form, if that changes it.

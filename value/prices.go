@@ -89,7 +89,7 @@ func (r *Run) Over(what string, limit int64) { r.over(what, limit) }
 
 func (r *Run) over(what string, limit int64) {
 	r.attribute()
-	s := &Spent{Stats: r.Stats, What: what, Limit: limit}
+	s := &Spent{Stats: r.Snapshot(), What: what, Limit: limit}
 	s.Deepest = max(s.Deepest, r.depth)
 	for g, n := range r.spent {
 		s.Definitions = append(s.Definitions, Cost{g.GlobalName(), n})

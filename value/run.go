@@ -47,24 +47,6 @@ type Plain struct {
 	NoNumerals bool // a numeral is eliminated step by step
 }
 
-// Stats counts what a run did. For the same calls on a fresh engine the counts
-// are the same on every run and machine.
-type Stats struct {
-	Steps         int64
-	Substitutions int64 // delayed over a value
-	Skipped       int64 // answered by the support
-	Pushed        int64 // pushed one constructor down
-	Relabelled    int64 // neutrals that a substitution could not unstick
-	Lazies        int64 // lazy cells made
-	Forced        int64 // lazy cells evaluated
-	Composites    int64 // hcomp rules
-	Transports    int64 // transp rules
-	Unfolded      int64 // definitions unfolded
-	Identical     int64 // comparisons answered by identity
-	Deepest       int64 // deepest nesting
-	Memory        int64 // bytes charged
-}
-
 // Run is one call's budget and counters, handed to everything that computes.
 // It belongs to one call and is not safe for concurrent use.
 type Run struct {
@@ -92,6 +74,11 @@ type Run struct {
 	used      int
 	outer     []outerSegment
 	spare     []Value // a segment that is not in use
+	trace     *Trace  // where the work is done; nil where nobody asked
+	stacked   int64   // the levels of nesting whose stack has been charged
+	// Standing is the definition or term that is being checked or compiled, for
+	// the code that is made of it; nil outside of any.
+	Standing *Site
 }
 
 // Settings are what a run is made with.
@@ -144,8 +131,13 @@ func (r *Run) Fault(format string, args ...any) {
 	panic(&Abort{&term.Error{Kind: term.Internal, Message: fmt.Sprintf(format, args...)}})
 }
 
-// Step counts one step and, now and then, looks at the budget and the context.
-func (r *Run) Step() {
+// Step counts one step of a rule that has no kind of its own.
+func (r *Run) Step() { r.Take(StepOther) }
+
+// Take counts one step by a rule of the given kind and, now and then, looks at
+// the budget and the context.
+func (r *Run) Take(k StepKind) {
+	r.ByRule[k]++
 	r.Steps++
 	if r.Steps >= r.check {
 		r.poll()
@@ -215,6 +207,9 @@ func (r *Run) Charge(bytes int64) {
 // continue inside Hop; either way it calls Leave when it is done.
 func (r *Run) Enter() bool {
 	r.depth++
+	if r.depth > r.Deepest {
+		r.Deepest = r.depth
+	}
 	return r.depth >= r.limit
 }
 
@@ -228,9 +223,9 @@ func (r *Run) Hop(f func()) {
 		r.over("levels of nesting", r.budget.Depth)
 	}
 	r.Poll()
-	if r.depth > r.Deepest { // the stack is kept, so each level is charged once
-		r.Charge((r.depth - r.Deepest) * PriceLevel)
-		r.Deepest = r.depth
+	if r.depth > r.stacked { // the stack is kept, so each level is charged once
+		r.Charge((r.depth - r.stacked) * PriceLevel)
+		r.stacked = r.depth
 	}
 	limit := r.limit
 	r.limit = min(r.depth+HopEvery, r.budget.Depth)

@@ -37,6 +37,9 @@ func (s System) Substitute(run *Run, t *Subst) System {
 	out := make(System, 0, len(s))
 	for _, w := range s {
 		face := w.Cube.Subst(t)
+		if face.IsBot() {
+			run.Dropped++
+		}
 		for k := range face.Len() {
 			cube := face.Cube(k)
 			i, under := run.Under(w.I, w.Body.Support(), t, cube.Support())

@@ -9,8 +9,9 @@ type Abstraction struct {
 	arity    int
 	hints    []string
 	body     Code
-	demands  []*demand // by argument
-	unused   []bool    // by argument; nil: all are used
+	demands  []*demand   // by argument
+	unused   []bool      // by argument; nil: all are used
+	site     *value.Site // the definition or term it was compiled for; may be nil
 }
 
 func (a *Abstraction) capture(to, from Frame) {
@@ -72,6 +73,9 @@ func (c *closure) Substitute(run *value.Run, s *value.Subst) value.Closure {
 
 // Apply evaluates the body in a frame of the run's.
 func (c *closure) Apply(run *value.Run, arg value.Value) value.Value {
+	if run.Traced() {
+		return c.applyTraced(run, arg)
+	}
 	n := 1 + len(c.env)
 	f := run.Frame(n)
 	f[0] = arg
@@ -91,6 +95,9 @@ func (c *closure) Hint() string { return c.HintAt(0) }
 
 // ApplyAll evaluates the body under all its arguments.
 func (c *closure) ApplyAll(run *value.Run, args []value.Value) value.Value {
+	if run.Traced() {
+		return c.applyAllTraced(run, args)
+	}
 	n := len(args) + len(c.env)
 	f := run.Frame(n)
 	copy(f, args)
@@ -138,6 +145,9 @@ func (c caseClosure) Enter(run *value.Run) []value.Value {
 
 // Eval evaluates the body in a frame of Enter's.
 func (c caseClosure) Eval(run *value.Run, frame []value.Value) value.Value {
+	if run.Traced() {
+		return c.evalTraced(run, frame)
+	}
 	return c.abs.body.Eval(run, frame)
 }
 
@@ -176,7 +186,12 @@ type thunk struct {
 }
 
 // Do evaluates the term. The environment is the frame.
-func (t *thunk) Do(run *value.Run) value.Value { return t.code.Eval(run, t.env) }
+func (t *thunk) Do(run *value.Run) value.Value {
+	if run.Traced() {
+		return t.doTraced(run)
+	}
+	return t.code.Eval(run, t.env)
+}
 
 func newThunk(run *value.Run, code Code, env []value.Value) value.Value {
 	return (&thunk{}).cell(run, code, env)

@@ -60,6 +60,7 @@ type opCode struct {
 	args  []Arg
 	folds bool // its principal argument ends in a global
 	cheap int  // 0: not cheap; otherwise 1 + how deep cheap operators nest in it
+	site  *value.Site
 }
 
 func (c *opCode) Eval(run *value.Run, f Frame) value.Value {
@@ -189,6 +190,9 @@ func (a *Arg) Walls(run *value.Run, f Frame) value.System {
 	out := make(value.System, 0, len(a.Rows)+2)
 	for _, row := range a.Rows {
 		face := row[0].Face(f)
+		if face.IsBot() {
+			run.Dropped++
+		}
 		for k := range face.Len() {
 			cube := face.Cube(k)
 			under := restrict(run, row[1].abs, f, cube)

@@ -18,7 +18,7 @@ type Resolver interface {
 // cost is linear in its size as a shared graph, for what is shared in one scope.
 func Compile(run *value.Run, r Resolver, c term.Core, nv, nd int, variables, dimensions []int) *Abstraction {
 	k := &compiler{run: run, r: r}
-	abs := &Abstraction{arity: len(variables) + len(dimensions)}
+	abs := &Abstraction{arity: len(variables) + len(dimensions), site: run.Standing}
 	l := &layout{abs: abs, variables: map[int]int{}, dimensions: map[int]int{}, size: abs.arity}
 	for s, level := range variables {
 		l.variables[level] = s
@@ -144,7 +144,7 @@ func (k *compiler) op(c *term.Op, l *layout, nv, nd int) Code {
 	if op == nil {
 		k.run.Fail(&term.Error{Kind: term.NotFound, Message: "no former brings this operator", GotText: c.Sig.Name})
 	}
-	out := &opCode{op: op, args: make([]Arg, len(c.Args))}
+	out := &opCode{op: op, args: make([]Arg, len(c.Args)), site: k.run.Standing}
 	principal := -1
 	if e, ok := op.(Eliminator); ok {
 		principal = e.Principal()
@@ -303,7 +303,7 @@ func (k *compiler) abstraction(key term.Arg, body term.Core, binds []term.Sort, 
 	if abs, ok := k.seen[seenKey{key, l}]; ok {
 		return abs
 	}
-	abs := &Abstraction{arity: len(binds), hints: hints}
+	abs := &Abstraction{arity: len(binds), hints: hints, site: k.run.Standing}
 	inner := &layout{outer: l, abs: abs, variables: map[int]int{}, dimensions: map[int]int{}, size: len(binds), used: make([]bool, len(binds))}
 	for s, sort := range binds {
 		if sort == term.DimensionSort {

@@ -1,0 +1,118 @@
+package prims
+
+import (
+	"example.com/boxwright/nbe/term"
+	"example.com/boxwright/value"
+	"example.com/boxwright/value/interval"
+)
+
+// The rules in a run that is traced: the same rules, at the site of the former
+// or data type that they belong to, and reported to whoever follows the run.
+
+// The labels of the built-in formers, in counters and profiles.
+var (
+	piLabel          = value.NewLabel("functions", term.Place{})
+	piDimensionLabel = value.NewLabel("functions of a dimension", term.Place{})
+	sigmaLabel       = value.NewLabel("pairs", term.Place{})
+	pathLabel        = value.NewLabel("paths", term.Place{})
+	unitLabel        = value.NewLabel("Unit", term.Place{})
+	universeLabel    = value.NewLabel("universes", term.Place{})
+	glueLabel        = value.NewLabel("Glue", term.Place{})
+)
+
+// Label is "functions".
+func (p *Pi) Label() *value.Label { return piLabel }
+
+// Label is "functions of a dimension".
+func (p *PiDimension) Label() *value.Label { return piDimensionLabel }
+
+// Label is "pairs".
+func (t *Sigma) Label() *value.Label { return sigmaLabel }
+
+// Label is "paths".
+func (t *Path) Label() *value.Label { return pathLabel }
+
+// Label is "universes".
+func (u *Universe) Label() *value.Label { return universeLabel }
+
+// Label is "Unit".
+func (unitType) Label() *value.Label { return unitLabel }
+
+// Label is "Glue".
+func (g *GlueType) Label() *value.Label { return glueLabel }
+
+// Label is the data type's name.
+func (t *DataType) Label() *value.Label { return t.Data.label }
+
+func hcompTraced(run *value.Run, t, base value.Value, walls value.System) value.Value {
+	former, _ := t.(value.Type)
+	back := run.InHcomp(former)
+	var e *value.Event
+	if run.Followed() {
+		e = run.Begins(value.StepHcomp, "hcomp at "+run.FormerName(former), func(s *value.Sketch) *term.Written {
+			return term.Hcomp(s.Value(t), s.Value(base), s.Walls(walls)...)
+		})
+	}
+	v := hcompAt(run, t, base, walls)
+	run.Ends(e, v)
+	run.Out(back)
+	return v
+}
+
+func transpTraced(run *value.Run, i value.Name, t value.Value, phi interval.Face, v value.Value) value.Value {
+	former, _ := t.(value.Type)
+	back := run.InTransp(former)
+	var e *value.Event
+	if run.Followed() {
+		e = run.Begins(value.StepTransp, "transp at "+run.FormerName(former), func(s *value.Sketch) *term.Written {
+			return term.Transp(interval.Var(i).String(), s.Value(t), s.Face(phi), s.Value(v))
+		})
+	}
+	w := transpAt(run, i, t, phi, v)
+	run.Ends(e, w)
+	run.Out(back)
+	return w
+}
+
+// traced eliminates v, which is forced, at the elimination's site.
+func (e *Eliminator) traced(run *value.Run, v value.Value) value.Value {
+	back := run.InElimination(e.data.label)
+	var event *value.Event
+	if _, stuck := v.(*value.Neutral); !stuck && run.Followed() {
+		event = run.Begins(value.StepEliminate, "elim "+e.data.Name, func(s *value.Sketch) *term.Written {
+			return (&elimFrame{e}).SketchOn(s, s.Value(v))
+		})
+	}
+	w := e.eliminate(run, v)
+	run.Ends(event, w)
+	run.Out(back)
+	return w
+}
+
+func betaFollowed(run *value.Run, f *Lam, x value.Value) value.Value {
+	e := run.Begins(value.StepApply, value.StepApply.String(), func(s *value.Sketch) *term.Written {
+		return term.Apply(s.Value(f), s.Value(x))
+	})
+	return run.Ends(e, f.Body.Apply(run, x))
+}
+
+func atFollowed(run *value.Run, p *PathLam, r interval.Dim) value.Value {
+	e := run.Begins(value.StepAt, value.StepAt.String(), func(s *value.Sketch) *term.Written {
+		return term.At(s.Value(p), s.Dimension(r))
+	})
+	return run.Ends(e, p.Body.Apply(run, value.DimensionOf(r)))
+}
+
+func projectFollowed(run *value.Run, p *Pair, f *projection, v value.Value) value.Value {
+	e := run.Begins(value.StepProject, value.StepProject.String(), func(s *value.Sketch) *term.Written {
+		return f.SketchOn(s, s.Value(p))
+	})
+	return run.Ends(e, v)
+}
+
+func unglueFollowed(run *value.Run, g *GlueElement) value.Value {
+	e := run.Begins(value.StepUnglue, value.StepUnglue.String(), func(s *value.Sketch) *term.Written {
+		return term.Unglue(s.Value(g))
+	})
+	return run.Ends(e, g.Base)
+}

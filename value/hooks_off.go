@@ -1,0 +1,5 @@
+//go:build boxwright_nohooks
+
+package value
+
+const hooks = false
