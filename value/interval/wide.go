@@ -201,9 +201,12 @@ func (c conj) literals(yield func(n Name, second bool)) {
 	}
 }
 
+// wideCost is how many comparisons of words one of conjs takes the time of.
+const wideCost = 4
+
 // addConj joins c to the antichain cs, which it may overwrite.
 func addConj(cs []conj, c conj, k *work) []conj {
-	cost := len(cs) * (1 + len(c.codes()))
+	cost := wideCost * len(cs) * (1 + len(c.codes()))
 	for _, d := range cs {
 		if d.subset(c) {
 			k.add(cost, len(cs))

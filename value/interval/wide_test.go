@@ -84,16 +84,16 @@ func clauses(n int, first Name) Dim {
 
 func TestSizesAreBounded(t *testing.T) {
 	var largest Dim
-	require.Nil(t, sizeErrorOf(t, func() { largest = clauses(14, 0) }))
+	require.Nil(t, sizeErrorOf(t, func() { largest = clauses(11, 0) }))
 	require.Equal(t, MaxConjunctions, largest.Len())
-	pairs := Zero() // its reversal has 2^15 conjunctions
-	for k := range Name(15) {
+	pairs := Zero() // its reversal has 2^12 conjunctions
+	for k := range Name(12) {
 		pairs = pairs.Max(Var(2 * k).Min(Var(2*k + 1)))
 	}
 	for _, explode := range []func(){
-		func() { clauses(15, 0) },
+		func() { clauses(12, 0) },
 		func() { largest.Max(Var(30)).Max(Var(31)) },
-		func() { clauses(12, 0).Subst(Assign(1, clauses(4, 40))) },
+		func() { clauses(9, 0).Subst(Assign(1, clauses(4, 40))) },
 		func() { largest.Is1().And(Eq0(31).Or(Eq1(31))) },
 		func() { pairs.Rev() },
 		func() { pairs.Is0() },

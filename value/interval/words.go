@@ -22,11 +22,11 @@ import (
 
 // MaxConjunctions bounds the conjunctions of a Dim or Face. An operation which
 // would keep more of them, also for a moment, or which would compare
-// conjunctions more than about 2^28 times, panics with a *SizeError.
-const MaxConjunctions = 1 << 14
+// conjunctions more than about 2^22 times, panics with a *SizeError.
+const MaxConjunctions = 1 << 11
 
 // maxWork bounds the comparisons of conjunctions in one operation.
-const maxWork = 1 << 28
+const maxWork = 1 << 22
 
 // SizeError is the value with which an operation panics when a normal form
 // would get too large to build. It depends on the operands alone.
