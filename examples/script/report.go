@@ -61,7 +61,7 @@ func (r *reporter) summary() {
 	r.progress.clear()
 	verdict := "each did what it should"
 	if r.failed > 0 {
-		verdict = fmt.Sprintf("of which %d did not do what it should", r.failed)
+		verdict = fmt.Sprintf("of which %d did not do what %s should", r.failed, plural(r.failed))
 	}
 	fmt.Fprintf(r.out, "%s, %s\n", count(r.forms, "form"), verdict)
 	if r.unread > 0 {
@@ -79,6 +79,13 @@ func count(n int, word string) string {
 	return fmt.Sprintf("%d %ss", n, word)
 }
 
+func plural(n int) string {
+	if n == 1 {
+		return "it"
+	}
+	return "they"
+}
+
 // what says in a few words what a form is about.
 func what(f *notation.Form) string {
 	switch f.Kind {
@@ -89,7 +96,11 @@ func what(f *notation.Form) string {
 	case notation.Normal, notation.Show, notation.Blocked:
 		return f.Kind.String() + " " + short(f.Term)
 	case notation.Reject:
-		return "reject " + what(f.Inner)
+		times, inner := 1, f.Inner
+		for ; inner.Kind == notation.Reject; times++ {
+			inner = inner.Inner
+		}
+		return strings.Repeat("reject ", min(times, 3)) + what(inner)
 	case notation.Load:
 		return fmt.Sprintf("load %q", f.File)
 	}

@@ -312,7 +312,7 @@ func (s *Session) reject(ctx context.Context, e *nbe.Engine, f *notation.Form) (
 		text, err = s.handle(ctx, fork, inner)
 	}
 	switch refused := err != nil; {
-	case refused && !refusal(err):
+	case refused && (isUnreadable(err) || !refusal(err)):
 		return "", err
 	case refused == odd && refused:
 		return "refused: " + strings.TrimSpace(withoutPlace(err)), nil
