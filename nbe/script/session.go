@@ -161,8 +161,11 @@ func (s *Session) handle(ctx context.Context, e *nbe.Engine, f *notation.Form) (
 		return text, err
 	}
 	place := f.Place
-	if term.KindOf(err) == term.Duplicate && f.Kind != notation.Declare && f.NamePlace.Known() {
+	if term.KindOf(err) == term.Duplicate {
 		place = f.NamePlace
+		if f.Kind == notation.Declare {
+			place = term.Place{} // the declaration knows which of its names it is
+		}
 	}
 	return text, at(place, err)
 }
