@@ -5,6 +5,7 @@ import (
 	"strings"
 
 	"example.com/boxwright/nbe/term"
+	"example.com/boxwright/prims"
 	"example.com/boxwright/quote"
 	"example.com/boxwright/value"
 	"example.com/boxwright/value/interval"
@@ -129,7 +130,7 @@ func (s *Scope) Compare(ctx context.Context, a, b *Term, options ...CallOption) 
 
 // CompareAt checks two written terms at a type and compares them.
 func (s *Scope) CompareAt(ctx context.Context, ty, a, b *term.Written, options ...CallOption) (Comparison, error) {
-	t, err := s.Infer(ctx, ty, options...)
+	t, err := s.formed(ctx, ty, options)
 	if err != nil {
 		return Comparison{}, err
 	}
@@ -142,4 +143,15 @@ func (s *Scope) CompareAt(ctx context.Context, ty, a, b *term.Written, options .
 		return Comparison{}, err
 	}
 	return s.Compare(ctx, x, y, options...)
+}
+
+// formed elaborates a type, and blames its place where it is none.
+func (s *Scope) formed(ctx context.Context, ty *term.Written, options []CallOption) (t *Term, err error) {
+	err = s.e.call(ctx, gather(options), func(run *value.Run) {
+		t = s.newTerm(run, func(c *checker) (term.Core, value.Value) {
+			core, level := c.Type(ty)
+			return core, prims.NewUniverse(level)
+		})
+	})
+	return t, err
 }
