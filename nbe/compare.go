@@ -147,11 +147,17 @@ func (s *Scope) CompareAt(ctx context.Context, ty, a, b *term.Written, options .
 
 // formed elaborates a type, and blames its place where it is none.
 func (s *Scope) formed(ctx context.Context, ty *term.Written, options []CallOption) (t *Term, err error) {
+	t, err = s.Infer(ctx, ty, options...)
+	if err != nil {
+		return nil, err
+	}
 	err = s.e.call(ctx, gather(options), func(run *value.Run) {
-		t = s.newTerm(run, func(c *checker) (term.Core, value.Value) {
-			core, level := c.Type(ty)
-			return core, prims.NewUniverse(level)
-		})
+		for k, x := range s.cases {
+			if _, ok := run.Force(t.cases[k].t).(*prims.Universe); !ok {
+				c := s.e.checker(run, x.clone())
+				c.Fail(ty, term.IllTyped, "this is no type", "a type", c.ShowType(t.cases[k].t))
+			}
+		}
 	})
 	return t, err
 }
