@@ -1,0 +1,321 @@
+package kit
+
+import (
+	"example.com/boxwright/nbe/term"
+)
+
+// The built-in formers as the suite sees them: how to draw their types, their
+// elements and their eliminations, and what the theory claims of these. An
+// author of a former finds the shape of her own generator here.
+
+// Builtin returns the built-in formers.
+func Builtin() []Former {
+	return []Former{
+		{Name: "functions", Types: functions},
+		{Name: "functions over the interval", Types: dimensionFunctions},
+		{Name: "pairs", Types: pairs},
+		{Name: "paths", Types: paths},
+		{Name: "the unit type", Types: func(*Gen) Sample { return unit() }},
+		{Name: "universes", Types: func(*Gen) Sample { return types() }},
+		{Name: "numbers", Types: func(g *Gen) Sample { return numbersWithElim() }},
+		{Name: "sums", Types: sums},
+		{Name: "the circle", Types: func(g *Gen) Sample { return turnsWithElim() }},
+		{Name: "lists, formal", Script: formalLists, Types: lists},
+		{Name: "suspensions", Script: suspension, Types: suspensions},
+		{Name: "gluing", Script: glued, Types: gluing},
+		{Name: "neutral types", Types: func(g *Gen) Sample { return Base(g) }},
+	}
+}
+
+func functions(g *Gen) Sample {
+	a := Base(g)
+	b := Family(g, "B", a.Type)
+	s := Sample{Type: fill("(Pi ((y A)) B)", "A", a.Type, "B", b(term.Name("y")))}
+	s.Element = func(g *Gen) *term.Written { return g.Variable("f", s.Type, nil) }
+	s.Eliminations = func(g *Gen) []Elimination {
+		// the argument is at the end 1 of the line: a variable of a type that is closed there
+		x := g.Over(without(g.dims, height)...).Variable("x", Replace(a.Type, map[string]*term.Written{height: oneEnd}), nil)
+		constant := !namesIn(a.Type)[height]
+		if !constant {
+			return nil // the line may be closed before its end
+		}
+		return []Elimination{{
+			Name: "application",
+			Of:   func(f *term.Written) *term.Written { return term.Apply(f, x) },
+			Composite: func(box Box, of func(x, at *term.Written) *term.Written) *term.Written {
+				return box.Map(b(x), func(u *term.Written) *term.Written { return term.Apply(u, x) }).Hcomp()
+			},
+			Transport: func(t Transport, of func(x, at *term.Written) *term.Written) *term.Written {
+				back := func(r *term.Written) *term.Written { return t.Back(a.Type, x, r) }
+				return t.With(b(back(Along())), term.Apply(t.Base, back(zero))).Transp()
+			},
+		}}
+	}
+	s.Expand = func(f *term.Written) *term.Written { return fill("(lam (y) (F y))", "F", f) }
+	return s
+}
+
+func without(names []string, name string) []string {
+	var out []string
+	for _, n := range names {
+		if n != name {
+			out = append(out, n)
+		}
+	}
+	return out
+}
+
+func dimensionFunctions(g *Gen) Sample {
+	b := Base(g.With("z"))
+	s := Sample{Type: term.Pi("z", term.Interval(), b.Type)}
+	s.Element = func(g *Gen) *term.Written {
+		if g.Choose(2) == 1 {
+			return term.Ann(term.Lam(b.Any(g.With("z")), "z"), s.Type)
+		}
+		return g.Variable("f", s.Type, nil)
+	}
+	s.Expand = func(f *term.Written) *term.Written { return fill("(lam (y) (F y))", "F", f) }
+	s.Eliminations = func(g *Gen) []Elimination {
+		r := term.Name(g.dims[0])
+		at := Replace(b.Type, map[string]*term.Written{"z": r})
+		return []Elimination{{
+			Name: "application",
+			Of:   func(f *term.Written) *term.Written { return term.Apply(f, r) },
+			Composite: func(box Box, of func(x, at *term.Written) *term.Written) *term.Written {
+				return box.Map(at, func(u *term.Written) *term.Written { return term.Apply(u, r) }).Hcomp()
+			},
+			Transport: func(t Transport, of func(x, at *term.Written) *term.Written) *term.Written {
+				return t.With(at, term.Apply(t.Base, r)).Transp()
+			},
+		}}
+	}
+	return s
+}
+
+func pairs(g *Gen) Sample {
+	a := Base(g)
+	b := Family(g, "B", a.Type)
+	s := Sample{Type: fill("(Sigma ((y A)) B)", "A", a.Type, "B", b(term.Name("y")))}
+	s.Element = func(g *Gen) *term.Written {
+		if g.Choose(2) == 1 {
+			x := a.Any(g)
+			return term.Ann(term.Pair(x, g.Variable("y", b(x), nil)), s.Type)
+		}
+		return g.Variable("p", s.Type, nil)
+	}
+	first := func(p *term.Written) *term.Written { return term.Fst(p) }
+	second := func(p *term.Written) *term.Written { return term.Snd(p) }
+	s.Expand = func(p *term.Written) *term.Written { return fill("(pair (fst P) (snd P))", "P", p) }
+	s.Eliminations = func(*Gen) []Elimination {
+		return []Elimination{
+			{
+				Name: "the first part", Of: first,
+				Composite: func(box Box, of func(x, at *term.Written) *term.Written) *term.Written {
+					return box.Map(a.Type, first).Hcomp()
+				},
+				Transport: func(t Transport, of func(x, at *term.Written) *term.Written) *term.Written {
+					return t.With(a.Type, first(t.Base)).Transp()
+				},
+			},
+			{
+				Name: "the second part", Of: second,
+				Composite: func(box Box, of func(x, at *term.Written) *term.Written) *term.Written {
+					return box.Map(a.Type, second).Over(b(box.Map(a.Type, first).Hfill(Along())))
+				},
+				Transport: func(t Transport, of func(x, at *term.Written) *term.Written) *term.Written {
+					return t.With(b(t.With(a.Type, first(t.Base)).Tfill(Along())), second(t.Base)).Transp()
+				},
+			},
+		}
+	}
+	return s
+}
+
+func paths(g *Gen) Sample {
+	a := Base(g)
+	x, y := a.Any(g), a.Any(g)
+	s := Sample{Type: fill("(Path A X Y)", "A", a.Type, "X", x, "Y", y)}
+	s.Element = func(g *Gen) *term.Written { return g.Variable("p", s.Type, nil) }
+	s.Expand = func(p *term.Written) *term.Written { return fill("(line (z) (at P z))", "P", p) }
+	s.Eliminations = func(g *Gen) []Elimination {
+		d := g.dims[0]
+		return []Elimination{{
+			Name: "the point at " + d,
+			Of:   func(p *term.Written) *term.Written { return term.At(p, term.Name(d)) },
+			Composite: func(box Box, of func(x, at *term.Written) *term.Written) *term.Written {
+				b := box.Map(a.Type, func(u *term.Written) *term.Written { return term.At(u, term.Name(d)) })
+				for one, end := range []*term.Written{x, y} {
+					at := []End{{d, one == 1}}
+					b.Walls = append(b.Walls, Wall{Face: term.Eq(term.Name(d), uint64(one)), Ends: at, Body: Replace(end, cut(at))})
+				}
+				return b.Hcomp()
+			},
+		}}
+	}
+	return s
+}
+
+func unit() Sample {
+	s := Sample{Type: term.Form("Unit")}
+	s.Element = func(g *Gen) *term.Written {
+		if g.Choose(2) == 1 {
+			return g.Variable("u", s.Type, func(*Gen) *term.Written { return term.Form("unit") })
+		}
+		return term.Form("unit")
+	}
+	s.Expand = func(*term.Written) *term.Written { return term.Form("unit") }
+	return s
+}
+
+func types() Sample {
+	s := Sample{Type: universe}
+	s.Element = func(g *Gen) *term.Written { return Base(g).Type }
+	return s
+}
+
+// eliminate is the elimination of a data type into a family of types over it,
+// with the cases given as text over the family's type C and the cases' names.
+func eliminate(g *Gen, ty *term.Written, commutes bool, text string, pairs ...any) Elimination {
+	e := Elimination{Name: "elim", Of: func(x *term.Written) *term.Written {
+		return fill(text, append([]any{"SCRUTINEE", x}, pairs...)...)
+	}}
+	if commutes {
+		family := pairs[1].(*term.Written)
+		e.Composite = func(box Box, of func(x, at *term.Written) *term.Written) *term.Written {
+			return box.Map(family, func(u *term.Written) *term.Written { return of(u, oneEnd) }).Over(family)
+		}
+	}
+	return e
+}
+
+func numbersWithElim() Sample {
+	s := Numbers()
+	s.Eliminations = func(g *Gen) []Elimination {
+		out := []Elimination{eliminate(g, s.Type, false, "(elim (y Nat) SCRUTINEE (zero 1) ((suc n hyp) (suc (suc hyp))))")}
+		c := Family(g, "C", s.Type)
+		z := g.Variable("z", c(term.Numeral(0)), nil)
+		step := g.Variable("s", term.Pi("n", s.Type, term.Arrow(c(term.Name("n")), c(fill("(suc n)")))), nil)
+		return append(out, eliminate(g, s.Type, false, "(elim (y C) SCRUTINEE (zero Z) ((suc n hyp) (S n hyp)))",
+			"C", c(term.Name("y")), "Z", z, "S", step))
+	}
+	return s
+}
+
+func turnsWithElim() Sample {
+	s := Turns()
+	s.Eliminations = func(g *Gen) []Elimination {
+		var out []Elimination
+		c := Abstract(g).Type
+		b := g.Over().Variable("b", c, nil)
+		p := g.Over().Variable("p", term.Path(c, b, b), nil)
+		out = append(out, eliminate(g, s.Type, true, "(elim (y C) SCRUTINEE (base B) ((loop j) (at P j)))", "C", c, "B", b, "P", p))
+		return out
+	}
+	return s
+}
+
+func sums(g *Gen) Sample {
+	a, b := Base(g), Base(g)
+	s := Sample{Type: fill("(Sum A B)", "A", a.Type, "B", b.Type)}
+	s.Element = func(g *Gen) *term.Written {
+		switch g.Choose(3) {
+		case 1:
+			return term.Ann(fill("(inl X)", "X", a.Any(g)), s.Type)
+		case 2:
+			return term.Ann(fill("(inr X)", "X", b.Any(g)), s.Type)
+		}
+		return g.Variable("s", s.Type, s.Element)
+	}
+	s.Eliminations = func(g *Gen) []Elimination {
+		return []Elimination{eliminate(g, s.Type, false, "(elim (y Nat) SCRUTINEE ((inl a) 0) ((inr b) 1))")}
+	}
+	return s
+}
+
+const formalLists = `(data Manifest ((A (U 0))) (composition formal) (point end ()) (point entry ((a A) (rest (Manifest A)))))`
+
+func lists(g *Gen) Sample {
+	a := Base(g)
+	s := Sample{Type: fill("(Manifest A)", "A", a.Type)}
+	s.Element = func(g *Gen) *term.Written {
+		switch g.Choose(3) {
+		case 1:
+			return term.Ann(fill("(entry X R)", "X", a.Any(g), "R", g.Variable("r", s.Type, nil)), s.Type)
+		case 2:
+			return g.Variable("m", s.Type, s.Element)
+		}
+		return term.Ann(term.Name("end"), s.Type)
+	}
+	s.Eliminations = func(g *Gen) []Elimination {
+		return []Elimination{eliminate(g, s.Type, true, "(elim (y C) SCRUTINEE (end 0) ((entry a r hyp) (suc hyp)))", "C", term.Name("Nat"))}
+	}
+	return s
+}
+
+const suspension = `(data Quay ((A (U 0))) (point left ()) (point right ()) (path gangway ((a A)) (i) ((= i 0) left) ((= i 1) right)))`
+
+func suspensions(g *Gen) Sample {
+	a := Base(g)
+	s := Sample{Type: fill("(Quay A)", "A", a.Type)}
+	s.Element = func(g *Gen) *term.Written {
+		switch g.Choose(4) {
+		case 1:
+			return term.Ann(fill("(gangway X R)", "X", a.Any(g), "R", g.Dimension()), s.Type)
+		case 2:
+			return g.Variable("s", s.Type, s.Element)
+		case 3:
+			return term.Ann(term.Name("right"), s.Type)
+		}
+		return term.Ann(term.Name("left"), s.Type)
+	}
+	s.Eliminations = func(g *Gen) []Elimination {
+		base := term.Name("Circle")
+		return []Elimination{eliminate(g, s.Type, true, "(elim (y C) SCRUTINEE (left base) (right base) ((gangway a j) (loop j)))", "C", base)}
+	}
+	return s
+}
+
+// Where its face is top, glue is not written; as functions of the dimension of
+// the face they can stand anywhere.
+const glued = `
+	(def hoist (Pi ((A (U 0)) (T (U 0)) (e (Equiv T A)) (i I) (x T)) (Glue A ((= i 0) T e)))
+	  (lam (A T e i x) (glue ((fst e) x) ((= i 0) x))))
+	(def lower (Pi ((A (U 0)) (T (U 0)) (e (Equiv T A)) (i I)) (-> (Glue A ((= i 0) T e)) A))
+	  (lam (A T e i b) (unglue b)))
+`
+
+func gluing(g *Gen) Sample {
+	a := Abstract(g).Type
+	t := Base(g).Type
+	e := g.Variable("e", fill("(Equiv T A)", "T", t, "A", a), nil)
+	r := g.Dimension()
+	s := Sample{Type: term.Glue(a, term.GlueType(term.Eq(r, 0), t, e))}
+	s.Element = func(g *Gen) *term.Written {
+		if g.Choose(2) == 1 {
+			return fill("(hoist A T E R X)", "A", a, "T", t, "E", e, "R", r, "X", g.Variable("t", t, nil))
+		}
+		return g.Variable("b", s.Type, nil)
+	}
+	s.Eliminations = func(g *Gen) []Elimination {
+		lower := func(b *term.Written) *term.Written {
+			return fill("(lower A T E R B)", "A", a, "T", t, "E", e, "R", r, "B", b)
+		}
+		out := Elimination{Name: "unglue", Of: lower}
+		if r.Kind == term.NameKind {
+			// hcomp A (unglue u0) [ψ ↦ i. unglue u] [φ ↦ i. e.1 t(i)], t the filler in T
+			out.Composite = func(box Box, of func(x, at *term.Written) *term.Written) *term.Written {
+				on := []End{{r.Word, false}}
+				under := Box{Type: Replace(t, cut(on)), Base: Replace(box.Base, cut(on))}
+				for _, w := range box.Walls {
+					face := Replace(w.Face, cut(on))
+					under.Walls = append(under.Walls, Wall{Face: face, Ends: w.Ends, Body: Replace(w.Body, cut(on))})
+				}
+				b := box.Map(a, lower)
+				b.Walls = append(b.Walls, Wall{Face: term.Eq(r, 0), Ends: on, Body: term.Apply(term.Fst(Replace(e, cut(on))), under.Hfill(Along()))})
+				return b.Hcomp()
+			}
+		}
+		return []Elimination{out}
+	}
+	return s
+}
