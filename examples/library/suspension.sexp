@@ -52,3 +52,25 @@
 
 (def hopf-transport (-> Circle Circle Circle)
   (lam (a b) (transp (i (hopf (at (meridian-loop a) i))) bot b)))
+
+; That is rotation, up to a path.
+(def hopf-rotates (Pi ((a Circle) (b Circle)) (Path Circle (hopf-transport a b) (rotate a b)))
+  (lam (a b)
+    (compose Circle (hopf-transport a b)
+      (transp (i (hopf (merid base (rev i)))) bot (transp (i (hopf (merid a i))) bot b))
+      (rotate a b)
+      (inverse Circle
+        (transp (i (hopf (merid base (rev i)))) bot (transp (i (hopf (merid a i))) bot b))
+        (hopf-transport a b)
+        (transport-composite Sphere2 hopf north south north
+          (line (i) (merid a i)) (line (i) (merid base (rev i))) b))
+      (compose Circle
+        (transp (i (hopf (merid base (rev i)))) bot (transp (i (hopf (merid a i))) bot b))
+        (transp (i (hopf (merid base (rev i)))) bot (rotate a b))
+        (rotate a b)
+        (line (k) (transp (i (hopf (merid base (rev i)))) bot
+          (at (ua-transport Circle Circle (rotate-equivalence a) b) k)))
+        (ua-transport-back Circle Circle (rotate-equivalence base) (rotate a b))))))
+
+; Once around the meridians the fiber is turned once: the degree of the Hopf map.
+(def hopf-degree Int (degree (lam (a) (hopf-transport a base)) (hopf-rotates base base)))
