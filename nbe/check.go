@@ -195,6 +195,9 @@ func (c *checker) word(w *term.Written) *prims.Word {
 	word, ok := c.e.words[w.Word]
 	if !ok {
 		if c.e.notation.Taken(w.Word) {
+			if shape, ok := c.e.notation.Shape(w.Word); ok && !wellShaped(w, shape.Slots) {
+				c.Fail(w, term.Malformed, "this form does not have the shape of its head word", nil, nil)
+			}
 			return &prims.Word{}
 		}
 		c.Fail(w, term.Malformed, "there is no form with this head word", nil, w.Word)
