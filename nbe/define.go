@@ -24,6 +24,9 @@ func (e *Engine) name(name string, place term.Place) error {
 // has, and values that were stuck on it compute from then on. Errors: those of
 // checking; Duplicate.
 func (e *Engine) Define(ctx context.Context, name string, ty, t *term.Written, options ...CallOption) error {
+	if t == nil {
+		return &term.Error{Kind: term.Malformed, Message: "what is to be defined is missing", WantText: "a term"}
+	}
 	return e.global(ctx, name, ty, t, false, options)
 }
 
