@@ -223,6 +223,9 @@ func shaped(parts []term.Part, slots []term.Slot, row bool) bool {
 	for k, p := range parts {
 		slot := slots[min(k, len(slots)-1)]
 		if slot.Rows != nil {
+			if p.Body != nil {
+				return false
+			}
 			for _, r := range p.Rows {
 				if !shaped(r, slot.Rows, true) {
 					return false
@@ -230,7 +233,7 @@ func shaped(parts []term.Part, slots []term.Slot, row bool) bool {
 			}
 			continue
 		}
-		if p.Body == nil || !slot.Many && len(p.Binders) != len(slot.Binds) {
+		if p.Body == nil || p.Rows != nil || !slot.Many && len(p.Binders) != len(slot.Binds) {
 			return false
 		}
 	}
