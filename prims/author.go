@@ -1,7 +1,6 @@
 package prims
 
 import (
-	"example.com/boxwright/nbe/term"
 	"example.com/boxwright/value"
 	"example.com/boxwright/value/interval"
 )
@@ -31,20 +30,17 @@ func SameHcomp(c value.Comparer, a, base value.Value, walls value.System, base2 
 	return sameHcomp(c, a, base, walls, base2, walls2)
 }
 
-// ReadTransp is the core term of a transport along the line i.a of what has
-// been read back as v: for an elimination frame that waits for its element.
-func ReadTransp(q value.Quoter, i value.Name, a value.Value, phi interval.Face, v value.Core) value.Core {
-	line := q.Dimension("i", func(k value.Name) value.Core { return q.Type(q.Run().At(a, i, interval.Var(k))) })
-	return op(transpSig, line, &term.Face{Face: phi}, v)
+// ReadTransp reads a transport along the line i.a back as the operator transp:
+// what a former whose transports are canonical does with them.
+func ReadTransp(q value.Quoter, i value.Name, a value.Value, phi interval.Face, v value.Value) value.Core {
+	return readTransp(q, i, a, phi, v)
 }
 
-// SameLine compares the lines of types i.a and j.b.
-func SameLine(c value.Comparer, i value.Name, a value.Value, j value.Name, b value.Value) bool {
-	return sameLine(c, i, a, j, b)
+// SameTransp compares two transports.
+func SameTransp(c value.Comparer, i value.Name, a value.Value, phi interval.Face, v value.Value, j value.Name, b value.Value, psi interval.Face, w value.Value) bool {
+	return sameLine(c, i, a, j, b) && sameFace(c, phi, psi) &&
+		c.Terms("what is transported", c.Run().At(a, i, interval.Zero()), v, w)
 }
-
-// SameFace compares two faces, and records how they differ.
-func SameFace(c value.Comparer, phi, psi interval.Face) bool { return sameFace(c, phi, psi) }
 
 // TransportFrame is a transport along the line i.a, the identity on phi, that
 // waits for an element of a type whose transport looks at its element.
