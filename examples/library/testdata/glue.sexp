@@ -50,6 +50,14 @@
 (differ (Pi ((i I)) (one-end i)) b b1)
 (differ (-> I A) (lam (i) (unglue (b i))) (lam (i) (unglue (b1 i))))
 
+; Nor is it by the part on the face: over Unit the bases are equal, and the parts count.
+(assume z (Equiv T Unit)) (assume s T)
+(differ (Pi ((i I)) (Glue Unit ((= i 0) T z))) (lam (i) (glue unit ((= i 0) t))) (lam (i) (glue unit ((= i 0) s))))
+; Types glued along different equivalences differ, as do different types.
+(assume c (Equiv T A))
+(differ (-> I (U 0)) one-end (lam (i) (Glue A ((= i 0) T c))))
+(differ (-> I (U 0)) one-end (lam (i) (Glue A ((= i 1) T e))))
+
 ; hcomp in Glue A [φ ↦ (T, e)], φ = (i = 0), with one wall:
 ; glue (hcomp A (unglue u0) [ψ ↦ unglue u] [φ ↦ e.1 t(k)]) [φ ↦ t(1)],  t = hfill T u0 [ψ ↦ u].
 (assume u (Pi ((i I) (k I)) (one-end i)))
