@@ -358,10 +358,14 @@ func (c *checker) Value(core term.Core) value.Value {
 			return c.run.Folded(d)
 		}
 	}
-	env, nv, nd, e := c.env, len(c.variables), len(c.dimensions), c.e
+	env, nv, nd, e, standing := c.env, len(c.variables), len(c.dimensions), c.e, c.run.Standing
 	return c.run.Later(c.support, func(run *value.Run) value.Value {
+		outside := run.Standing
+		run.Standing = standing
 		variables, dimensions, vs := free(run, core, env, nv, nd)
-		return eval.Compile(run, e, core, nv, nd, variables, dimensions).Eval(run, vs)
+		v := eval.Compile(run, e, core, nv, nd, variables, dimensions).Eval(run, vs)
+		run.Standing = outside
+		return v
 	})
 }
 

@@ -96,7 +96,7 @@ func (s *Scope) Compare(ctx context.Context, a, b *Term, options ...CallOption) 
 		return Comparison{}, err
 	}
 	o := gather(options)
-	err = s.e.call(ctx, o, func(run *value.Run) {
+	err = s.engine().call(ctx, o.as(value.ComparingSite, &a.site), func(run *value.Run) {
 		result.Verdict = Equal
 		for k, x := range s.cases {
 			cmp := quote.NewComparer(run, x.variableNames(), x.dimensionNames(), isHole)
@@ -151,7 +151,7 @@ func (s *Scope) formed(ctx context.Context, ty *term.Written, options []CallOpti
 	if err != nil {
 		return nil, err
 	}
-	err = s.e.call(ctx, gather(options), func(run *value.Run) {
+	err = s.engine().call(ctx, gather(options), func(run *value.Run) {
 		for k, x := range s.cases {
 			if _, ok := run.Force(t.cases[k].t).(*prims.Universe); !ok {
 				c := s.e.checker(run, x.clone())

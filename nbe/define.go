@@ -13,6 +13,9 @@ import (
 // Adding to an engine: each call adds everything it says or nothing.
 
 func (e *Engine) name(name string, place term.Place) error {
+	if e.isZero() {
+		return empty()
+	}
 	if !term.IsName(name) || e.notation.Taken(name) {
 		return &term.Error{Kind: term.Malformed, Place: place, Message: "this cannot be a name", WantText: "a name", GotText: fmt.Sprintf("%q", name)}
 	}
@@ -54,8 +57,8 @@ func (e *Engine) global(ctx context.Context, name string, ty, t *term.Written, h
 	if !replaces && e.lookup(name) != nil {
 		return &term.Error{Kind: term.Duplicate, Place: place, Message: "this name is declared already", GotText: name}
 	}
-	d := &definition{name: name, place: place, hole: hole}
-	err := e.call(ctx, gather(options), func(run *value.Run) {
+	d := &definition{name: name, place: place, hole: hole, site: value.Site{Kind: value.SiteDefinition, Name: name, Place: place}}
+	err := e.call(ctx, gather(options).as(value.CheckingSite, &d.site), func(run *value.Run) {
 		c := e.checker(run, newContext())
 		d.typeCore, _ = c.Type(ty)
 		d.t = eval.Compile(run, e, d.typeCore, 0, 0, nil, nil).Eval(run, nil)
@@ -150,7 +153,8 @@ func (e *Engine) Declare(ctx context.Context, w *term.Declaration, options ...Ca
 		}
 	}
 	var d *prims.Data
-	err := e.call(ctx, gather(options), func(run *value.Run) {
+	site := &value.Site{Kind: value.SiteDefinition, Name: w.Name, Place: w.Place}
+	err := e.call(ctx, gather(options).as(value.CheckingSite, site), func(run *value.Run) {
 		d = prims.Declare(e.checker(run, newContext()), w)
 	})
 	if err != nil {

@@ -40,6 +40,7 @@ type Engine struct {
 	high     *atomic.Int32
 	solved   map[value.Global]value.Global // copied when it grows
 	nat      *prims.Data
+	title    string // in the labels of Go's profiles
 }
 
 // layer is a frozen part of an engine's entries.
@@ -62,12 +63,14 @@ type definition struct {
 	code     *eval.Abstraction
 	place    term.Place
 	arity    int
+	site     value.Site
 }
 
 func (d *definition) GlobalName() string               { return d.name }
 func (d *definition) TypeValue(*value.Run) value.Value { return d.t }
 func (d *definition) Unfold(*value.Run) value.Value    { return d.v }
 func (d *definition) Folded(*value.Run) value.Value    { return d.folded }
+func (d *definition) Site() *value.Site                { return &d.site }
 func isHole(g value.Global) bool                       { d, ok := g.(*definition); return ok && d.hole }
 
 // Option sets up an engine.
@@ -99,6 +102,9 @@ func New(options ...Option) (*Engine, error) {
 		return nil, err
 	}
 	for _, o := range options {
+		if o == nil {
+			continue
+		}
 		if err := o(e); err != nil {
 			return nil, err
 		}
@@ -146,7 +152,12 @@ func (e *Engine) register(formers []prims.Former) error {
 }
 
 // Words is the table of head words that text for this engine is read with.
-func (e *Engine) Words() *notation.Words { return e.notation }
+func (e *Engine) Words() *notation.Words {
+	if e == nil {
+		return nil
+	}
+	return e.notation
+}
 
 // maxLayers is how many layers of forks a look-up goes through before they are
 // put together.
@@ -155,6 +166,9 @@ const maxLayers = 8
 // Fork returns an engine with everything e holds. What is added to one
 // afterwards, the other does not see. It costs little, whatever e holds.
 func (e *Engine) Fork() *Engine {
+	if e == nil {
+		return nil
+	}
 	e.mu.Lock()
 	defer e.mu.Unlock()
 	if len(e.entries) > 0 {
@@ -168,7 +182,7 @@ func (e *Engine) Fork() *Engine {
 			e.base = e.base.flat()
 		}
 	}
-	return &Engine{entries: map[string]any{}, base: e.base, words: e.words, ops: e.ops, notation: e.notation, limits: e.limits, plain: e.plain, high: e.high, solved: e.solved, nat: e.nat}
+	return &Engine{entries: map[string]any{}, base: e.base, words: e.words, ops: e.ops, notation: e.notation, limits: e.limits, plain: e.plain, high: e.high, solved: e.solved, nat: e.nat, title: e.title}
 }
 
 func (l *layer) flat() *layer {
@@ -187,6 +201,9 @@ func (l *layer) flat() *layer {
 }
 
 func (e *Engine) lookup(name string) any {
+	if e == nil {
+		return nil
+	}
 	e.mu.RLock()
 	defer e.mu.RUnlock()
 	if x, ok := e.entries[name]; ok {
@@ -240,6 +257,9 @@ func (e *Engine) add(names []string, xs []any) *term.Error {
 
 // call is one call's run; everything that can leave it comes back as an error.
 func (e *Engine) call(ctx context.Context, o *callOptions, body func(run *value.Run)) (err error) {
+	if e.isZero() {
+		return empty()
+	}
 	e.mu.RLock()
 	solved := e.solved
 	e.mu.RUnlock()
@@ -248,7 +268,11 @@ func (e *Engine) call(ctx context.Context, o *callOptions, body func(run *value.
 		s.Unfold = &view{opaque: o.opaque, values: map[*definition]value.Value{}}
 	}
 	run := value.NewRun(s)
+	end := o.watch(ctx, run)
 	defer func() {
+		if end != nil {
+			end()
+		}
 		if o.stats != nil {
 			*o.stats = run.Snapshot()
 		}
@@ -257,6 +281,10 @@ func (e *Engine) call(ctx context.Context, o *callOptions, body func(run *value.
 		}
 	}()
 	run.Poll()
+	if end != nil || o.labels {
+		run.Down(func() { e.watched(ctx, o, run, body) })
+		return nil
+	}
 	run.Down(func() { body(run) })
 	return nil
 }

@@ -73,12 +73,15 @@ type callOptions struct {
 	stats     *Stats
 	inclusion bool
 	draw      *rand.Rand
+	observation
 }
 
 func gather(options []CallOption) *callOptions {
 	o := &callOptions{}
 	for _, f := range options {
-		f(o)
+		if f != nil {
+			f(o)
+		}
 	}
 	return o
 }

@@ -27,7 +27,7 @@ type Scope struct {
 func (e *Engine) Scope() *Scope { return &Scope{e: e, cases: []*scopeContext{newContext()}} }
 
 // Engine is the engine that s is a scope of.
-func (s *Scope) Engine() *Engine { return s.e }
+func (s *Scope) Engine() *Engine { return s.engine() }
 
 func (x *scopeContext) clone() *scopeContext {
 	y := *x
@@ -49,8 +49,8 @@ func (s *Scope) keep(x *scopeContext) {
 
 // Variable returns the scope with one more variable, of type ty.
 func (s *Scope) Variable(ctx context.Context, name string, ty *term.Written, options ...CallOption) (*Scope, error) {
-	out := &Scope{e: s.e, parent: s}
-	err := s.e.call(ctx, gather(options), func(run *value.Run) {
+	out := &Scope{e: s.engine(), parent: s}
+	err := s.engine().call(ctx, gather(options).as(value.CheckingSite, nil), func(run *value.Run) {
 		for _, x := range s.cases {
 			x = x.clone()
 			c := s.e.checker(run, x)
@@ -69,10 +69,10 @@ func (s *Scope) Variable(ctx context.Context, name string, ty *term.Written, opt
 
 // Dimension returns the scope with one more dimension.
 func (s *Scope) Dimension(name string) (*Scope, error) {
-	if err := s.e.name(name, term.Place{}); err != nil {
+	if err := s.engine().name(name, term.Place{}); err != nil {
 		return nil, err
 	}
-	out := &Scope{e: s.e, parent: s}
+	out := &Scope{e: s.engine(), parent: s}
 	for _, x := range s.cases {
 		x = x.clone()
 		x.pushDimension(name, interval.Var(value.Name(len(x.dimensions))))
@@ -85,8 +85,8 @@ func (s *Scope) Dimension(name string) (*Scope, error) {
 // checked and compared later must hold under each, and normalising gives one
 // form for each; under bot everything is equal and there are no forms.
 func (s *Scope) Assume(ctx context.Context, face *term.Written, options ...CallOption) (*Scope, error) {
-	out := &Scope{e: s.e, parent: s}
-	err := s.e.call(ctx, gather(options), func(run *value.Run) {
+	out := &Scope{e: s.engine(), parent: s}
+	err := s.engine().call(ctx, gather(options).as(value.CheckingSite, nil), func(run *value.Run) {
 		for index, x := range s.cases {
 			c := s.e.checker(run, x.clone())
 			f := c.Face(face)
@@ -112,6 +112,7 @@ func (s *Scope) Assume(ctx context.Context, face *term.Written, options ...CallO
 type Term struct {
 	scope *Scope
 	cases []termCase
+	site  value.Site // in profiles
 }
 
 type termCase struct {
@@ -120,8 +121,13 @@ type termCase struct {
 	v    value.Value
 }
 
-func (s *Scope) newTerm(run *value.Run, each func(c *checker) (term.Core, value.Value)) *Term {
-	out := &Term{scope: s}
+// begin is a term that is going to be made of w, and the options of that call.
+func (s *Scope) begin(w *term.Written, options []CallOption) (*Term, *callOptions) {
+	out := &Term{scope: s, site: termSite(w)}
+	return out, gather(options).as(value.CheckingSite, &out.site)
+}
+
+func (s *Scope) newTerm(run *value.Run, out *Term, each func(c *checker) (term.Core, value.Value)) *Term {
 	for _, x := range s.cases {
 		c := s.e.checker(run, x.clone())
 		core, t := each(c)
@@ -132,8 +138,9 @@ func (s *Scope) newTerm(run *value.Run, each func(c *checker) (term.Core, value.
 
 // Check elaborates w at the type ty, which is checked first.
 func (s *Scope) Check(ctx context.Context, w, ty *term.Written, options ...CallOption) (t *Term, err error) {
-	err = s.e.call(ctx, gather(options), func(run *value.Run) {
-		t = s.newTerm(run, func(c *checker) (term.Core, value.Value) {
+	out, o := s.begin(w, options)
+	err = s.engine().call(ctx, o, func(run *value.Run) {
+		t = s.newTerm(run, out, func(c *checker) (term.Core, value.Value) {
 			tc, _ := c.Type(ty)
 			tv := c.Value(tc)
 			return c.Check(w, tv), tv
@@ -147,9 +154,10 @@ func (s *Scope) CheckAt(ctx context.Context, w *term.Written, ty *Term, options 
 	if err := s.owns(ty); err != nil {
 		return nil, err
 	}
-	err = s.e.call(ctx, gather(options), func(run *value.Run) {
+	out, o := s.begin(w, options)
+	err = s.engine().call(ctx, o, func(run *value.Run) {
 		k := 0
-		t = s.newTerm(run, func(c *checker) (term.Core, value.Value) {
+		t = s.newTerm(run, out, func(c *checker) (term.Core, value.Value) {
 			tv := ty.cases[k].v
 			s.isType(run, ty.cases[k].t)
 			k++
@@ -167,8 +175,9 @@ func (s *Scope) isType(run *value.Run, t value.Value) {
 
 // Infer elaborates w and infers its type.
 func (s *Scope) Infer(ctx context.Context, w *term.Written, options ...CallOption) (t *Term, err error) {
-	err = s.e.call(ctx, gather(options), func(run *value.Run) {
-		t = s.newTerm(run, func(c *checker) (term.Core, value.Value) { return c.Infer(w) })
+	out, o := s.begin(w, options)
+	err = s.engine().call(ctx, o, func(run *value.Run) {
+		t = s.newTerm(run, out, func(c *checker) (term.Core, value.Value) { return c.Infer(w) })
 	})
 	return t, err
 }
@@ -185,7 +194,7 @@ func (s *Scope) owns(ts ...*Term) error {
 // Core is the elaborated core term; under an assumption of several
 // conjunctions that of the first, and nil under bot.
 func (t *Term) Core() term.Core {
-	if len(t.cases) == 0 {
+	if t == nil || len(t.cases) == 0 {
 		return nil
 	}
 	return t.cases[0].core
@@ -193,6 +202,9 @@ func (t *Term) Core() term.Core {
 
 // Cores are the elaborated core terms, one for each conjunction.
 func (t *Term) Cores() []term.Core {
+	if t == nil {
+		return nil
+	}
 	out := make([]term.Core, len(t.cases))
 	for k, c := range t.cases {
 		out[k] = c.core
@@ -201,7 +213,12 @@ func (t *Term) Cores() []term.Core {
 }
 
 // Scope is the scope that t belongs to.
-func (t *Term) Scope() *Scope { return t.scope }
+func (t *Term) Scope() *Scope {
+	if t == nil {
+		return nil
+	}
+	return t.scope
+}
 
 // Form is a term that was read back, with its type and the face it is under.
 type Form struct {
@@ -233,6 +250,9 @@ func (s *Scope) names(x *scopeContext, limits Limits) term.Names {
 
 // Write is a core term of this scope as a written one.
 func (s *Scope) Write(c term.Core) (*term.Written, error) {
+	if s.engine().isZero() {
+		return nil, empty()
+	}
 	if len(s.cases) == 0 {
 		return term.Write(c, term.Names{Taken: s.e.notation.Taken})
 	}
@@ -259,12 +279,17 @@ func (s *Scope) forms(ctx context.Context, t *Term, o *callOptions, read func(q 
 	if err := s.owns(t); err != nil {
 		return nil, err
 	}
-	err = s.e.call(ctx, o, func(run *value.Run) {
+	err = s.engine().call(ctx, o.as(value.ReadbackSite, &t.site), func(run *value.Run) {
 		for k, x := range s.cases {
 			c := t.cases[k]
 			v := c.v
 			if len(o.opaque) > 0 {
 				v = s.e.evaluate(run, c.core, x)
+			}
+			if o.regions && o.fold() == nil {
+				end := run.Operation(value.EvaluationSite)
+				v = run.Force(v)
+				end()
 			}
 			q := quote.NewReader(run, len(x.variables), len(x.dimensions), o.fold())
 			forms = append(forms, Form{Face: x.face, Term: read(q, c.t, v), Type: q.Type(c.t), names: s.names(x, o.limits), dims: x.dimensionNames()})
@@ -320,9 +345,10 @@ func (s *Scope) CheckLike(ctx context.Context, w *term.Written, like *Term, opti
 	if err := s.owns(like); err != nil {
 		return nil, err
 	}
-	err = s.e.call(ctx, gather(options), func(run *value.Run) {
+	out, o := s.begin(w, options)
+	err = s.engine().call(ctx, o, func(run *value.Run) {
 		k := 0
-		t = s.newTerm(run, func(c *checker) (term.Core, value.Value) {
+		t = s.newTerm(run, out, func(c *checker) (term.Core, value.Value) {
 			tv := like.cases[k].t
 			k++
 			return c.Check(w, tv), tv

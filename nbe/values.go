@@ -22,6 +22,9 @@ type valueCase struct{ t, v value.Value }
 
 // Value is the value of a term; no work is done.
 func (t *Term) Value() *Value {
+	if t == nil {
+		return nil
+	}
 	out := &Value{scope: t.scope}
 	for _, c := range t.cases {
 		out.cases = append(out.cases, valueCase{c.t, c.v})
@@ -35,6 +38,9 @@ func (t *Term) TypeValue() *Value { return t.Value().Type() }
 // Type is the type of a value. Its own type is given as the universe of the
 // highest level that can be written, which it belongs to by cumulativity.
 func (v *Value) Type() *Value {
+	if v == nil {
+		return nil
+	}
 	out := &Value{scope: v.scope}
 	for _, c := range v.cases {
 		out.cases = append(out.cases, valueCase{prims.NewUniverse(prims.MaxLevel), c.t})
@@ -43,17 +49,20 @@ func (v *Value) Type() *Value {
 }
 
 // Scope is the scope that v belongs to.
-func (v *Value) Scope() *Scope { return v.scope }
+func (v *Value) Scope() *Scope { return v.in() }
 
 // in is v's scope's engine for a call that also takes values ws of that scope.
 func (v *Value) call(ctx context.Context, options []CallOption, ws []*Value, body func(run *value.Run, k int) valueCase) (*Value, error) {
+	if v == nil {
+		return nil, empty()
+	}
 	for _, w := range ws {
 		if w == nil || w.scope != v.scope {
 			return nil, &term.Error{Kind: term.WrongScope, Message: "the value belongs to another scope"}
 		}
 	}
 	out := &Value{scope: v.scope}
-	err := v.scope.e.call(ctx, gather(options), func(run *value.Run) {
+	err := v.in().engine().call(ctx, gather(options), func(run *value.Run) {
 		for k := range v.cases {
 			out.cases = append(out.cases, body(run, k))
 		}
@@ -139,6 +148,9 @@ func (v *Value) Second(ctx context.Context, options ...CallOption) (*Value, erro
 // dimensions and assumptions; under an assumption it is the face of the value.
 // Errors: WrongScope if s was not made from v's scope.
 func (v *Value) In(ctx context.Context, s *Scope, options ...CallOption) (*Value, error) {
+	if v == nil || s == nil {
+		return nil, empty()
+	}
 	var way []*Scope
 	for x := s; x != v.scope; x = x.parent {
 		if x == nil {
@@ -147,7 +159,7 @@ func (v *Value) In(ctx context.Context, s *Scope, options ...CallOption) (*Value
 		way = append(way, x)
 	}
 	out := &Value{s, v.cases}
-	err := s.e.call(ctx, gather(options), func(run *value.Run) {
+	err := s.engine().call(ctx, gather(options), func(run *value.Run) {
 		for k := len(way) - 1; k >= 0; k-- {
 			var cases []valueCase
 			for _, from := range way[k].from {
@@ -174,8 +186,8 @@ type origin struct {
 // options are those of Scope.Normal; Opaque has no effect on values.
 func (v *Value) ReadBack(ctx context.Context, options ...CallOption) (forms []Form, err error) {
 	o := gather(options)
-	s := v.scope
-	err = s.e.call(ctx, o, func(run *value.Run) {
+	s := v.in()
+	err = s.engine().call(ctx, o.as(value.ReadbackSite, nil), func(run *value.Run) {
 		for k, x := range s.cases {
 			q := quote.NewReader(run, len(x.variables), len(x.dimensions), o.fold())
 			forms = append(forms, Form{Face: x.face, Term: q.Term(v.cases[k].t, v.cases[k].v), Type: q.Type(v.cases[k].t), names: s.names(x, o.limits), dims: x.dimensionNames()})
@@ -189,7 +201,7 @@ func (v *Value) ReadBack(ctx context.Context, options ...CallOption) (forms []Fo
 
 // Equal compares v with a value of the same scope, at the type of v.
 func (v *Value) Equal(ctx context.Context, w *Value, options ...CallOption) (result Comparison, err error) {
-	if w == nil || w.scope != v.scope {
+	if v == nil || w == nil || w.scope != v.scope {
 		return Comparison{}, &term.Error{Kind: term.WrongScope, Message: "the value belongs to another scope"}
 	}
 	a, b := &Term{scope: v.scope}, &Term{scope: v.scope}
@@ -204,7 +216,7 @@ func (v *Value) Equal(ctx context.Context, w *Value, options ...CallOption) (res
 // package value has it, with its type: for hosts that look at values
 // themselves. There is one for each conjunction.
 func (v *Value) Semantic(ctx context.Context, options ...CallOption) (types []value.Value, values []value.Value, err error) {
-	err = v.scope.e.call(ctx, gather(options), func(run *value.Run) {
+	err = v.in().engine().call(ctx, gather(options), func(run *value.Run) {
 		for _, c := range v.cases {
 			types, values = append(types, run.Force(c.t)), append(values, run.Force(c.v))
 		}

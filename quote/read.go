@@ -40,6 +40,9 @@ func NewReader(run *value.Run, variables, dimensions int, fold Fold) *Reader {
 // Run is the run that reading back is charged to.
 func (q *Reader) Run() *value.Run { return q.run }
 
+// Count counts one node of the output that a former makes by itself.
+func (q *Reader) Count() { q.count() }
+
 func (q *Reader) count() {
 	q.nodes++
 	q.run.Charge(value.PriceNode)
@@ -68,7 +71,7 @@ func (q *Reader) Type(v value.Value) (c value.Core) {
 		return c
 	}
 	if q.run.Traced() {
-		defer q.run.Out(q.run.In(value.ReadbackSite))
+		defer q.run.Operation(value.ReadbackSite)()
 	}
 	q.run.Down(func() {
 		if n := q.folded(v); n != nil {
@@ -96,7 +99,7 @@ func (q *Reader) Term(t, v value.Value) (c value.Core) {
 		return c
 	}
 	if q.run.Traced() {
-		defer q.run.Out(q.run.In(value.ReadbackSite))
+		defer q.run.Operation(value.ReadbackSite)()
 	}
 	q.run.Down(func() {
 		if n := q.folded(v); n != nil {

@@ -1,6 +1,8 @@
 package value
 
 import (
+	"context"
+	"runtime/trace"
 	"sync/atomic"
 	"time"
 
@@ -122,6 +124,9 @@ type Trace struct {
 	Exact  bool          // count exactly, not only time
 	Every  time.Duration // between samples of time; 0: no time
 	Follow *Follow       // may be nil
+	// Regions, if not nil, is the context whose execution trace gets a region
+	// for each operation of the engine.
+	Regions context.Context
 
 	root    Path
 	at      *Path
@@ -265,6 +270,24 @@ func (r *Run) Out(back *Path) {
 	if t.at != back {
 		t.settle(0)
 		t.at = back
+	}
+}
+
+// Operation enters one of the engine's operations, with a region of Go's
+// execution trace where that was asked for; the function that it returns leaves.
+func (r *Run) Operation(s *Site) func() {
+	t := r.trace
+	if t.at.Site == s {
+		return func() {}
+	}
+	back := r.In(s)
+	if t.Regions == nil {
+		return func() { r.Out(back) }
+	}
+	region := trace.StartRegion(t.Regions, s.Name)
+	return func() {
+		region.End()
+		r.Out(back)
 	}
 }
 
