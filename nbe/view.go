@@ -30,10 +30,13 @@ type View struct {
 // conjunctions the first is looked at; under bot there is nothing to see, and
 // the error has kind WrongScope.
 func (v *Value) View(ctx context.Context, options ...CallOption) (view *View, err error) {
+	if v.in().engine().isZero() {
+		return nil, empty()
+	}
 	if len(v.cases) != 1 {
 		return nil, &term.Error{Kind: term.WrongScope, Message: "a value is viewed under one conjunction", WantText: "one", GotText: big.NewInt(int64(len(v.cases))).String()}
 	}
-	err = v.scope.e.call(ctx, gather(options), func(run *value.Run) {
+	err = v.in().engine().call(ctx, gather(options), func(run *value.Run) {
 		view = v.view(run, run.Force(v.cases[0].t), run.Force(v.cases[0].v))
 	})
 	if err != nil {
@@ -132,12 +135,12 @@ func (s *Scope) Bind(ctx context.Context, name string, ty *Value, options ...Cal
 	if ty == nil || ty.scope != s {
 		return nil, nil, &term.Error{Kind: term.WrongScope, Message: "the type belongs to another scope"}
 	}
-	if err := s.e.name(name, term.Place{}); err != nil {
+	if err := s.engine().name(name, term.Place{}); err != nil {
 		return nil, nil, err
 	}
-	out := &Scope{e: s.e, parent: s}
+	out := &Scope{e: s.engine(), parent: s}
 	variable := &Value{scope: out}
-	err := s.e.call(ctx, gather(options), func(run *value.Run) {
+	err := s.engine().call(ctx, gather(options), func(run *value.Run) {
 		for k, x := range s.cases {
 			s.isType(run, ty.cases[k].t)
 			x = x.clone()
