@@ -33,11 +33,9 @@ func functions(g *Gen) Sample {
 	s := Sample{Type: fill("(Pi ((y A)) B)", "A", a.Type, "B", b(term.Name("y")))}
 	s.Element = func(g *Gen) *term.Written { return g.Variable("f", s.Type, nil) }
 	s.Eliminations = func(g *Gen) []Elimination {
-		// the argument is at the end 1 of the line: a variable of a type that is closed there
-		x := g.Over(without(g.dims, height)...).Variable("x", Replace(a.Type, map[string]*term.Written{height: oneEnd}), nil)
-		constant := !namesIn(a.Type)[height]
-		if !constant {
-			return nil // the line may be closed before its end
+		x, ok := Constant(g, a.Type)
+		if !ok {
+			return nil
 		}
 		return []Elimination{{
 			Name: "application",
@@ -53,6 +51,16 @@ func functions(g *Gen) Sample {
 	}
 	s.Expand = func(f *term.Written) *term.Written { return fill("(lam (y) (F y))", "F", f) }
 	return s
+}
+
+// Constant is a new variable of the type a for an elimination to be given,
+// where a does not vary along the line: one argument then serves base, walls
+// and lid alike.
+func Constant(g *Gen, a *term.Written) (x *term.Written, ok bool) {
+	if namesIn(a)[height] {
+		return nil, false
+	}
+	return g.Over(without(g.dims, height)...).Variable("x", a, nil), true
 }
 
 func without(names []string, name string) []string {
