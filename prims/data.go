@@ -116,7 +116,7 @@ func NewCon(run *value.Run, c *Constructor, params, args []value.Value, dims []i
 		return c.constant
 	}
 	if c.Data.Numerals {
-		return successors(c.Data, natural{small: 1}, args[0])
+		return successors(run, c.Data, natural{small: 1}, args[0])
 	}
 	if len(dims) == 0 {
 		return &Con{Of: c, Args: args, support: supportOf(args)}
@@ -196,9 +196,9 @@ func shown(run *value.Run, v value.Value) (c *Constructor, args []value.Value, o
 		if v.isZero() {
 			return v.data.Constructors[0], nil, true
 		}
-		return v.data.Constructors[1], []value.Value{v.predecessor()}, true
+		return v.data.Constructors[1], []value.Value{v.predecessor(run)}, true
 	case *Successors:
-		return v.data.Constructors[1], []value.Value{v.predecessor()}, true
+		return v.data.Constructors[1], []value.Value{v.predecessor(run)}, true
 	}
 	return nil, nil, false
 }
@@ -344,7 +344,7 @@ func (conOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 		return c.constant
 	}
 	if c.Data.Numerals {
-		return successors(c.Data, natural{small: 1}, run.Force(args[2].Eval(run, f)))
+		return successors(run, c.Data, natural{small: 1}, run.Force(args[2].Eval(run, f)))
 	}
 	vs := make([]value.Value, len(c.Args))
 	for k := range vs {

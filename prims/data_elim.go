@@ -190,7 +190,11 @@ func (e *Eliminator) eliminate(run *value.Run, v value.Value) value.Value {
 	case *Successors:
 		if e.step != nil && e.step.affine && !run.Plain.NoNumerals {
 			run.Take(value.StepNumeral)
-			return successors(e.data, e.step.count.times(v.count), run.Force(e.Eliminate(run, v.base)))
+			n, rest := counted(run, v) // all at once, since successors of successors nest
+			if rest == nil {
+				rest = newNumber(e.data, natural{})
+			}
+			return successors(run, e.data, e.step.count.times(run, n), run.Force(e.Eliminate(run, rest)))
 		}
 	}
 	c, args, ok := shown(run, v)

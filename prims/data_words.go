@@ -73,11 +73,11 @@ func (k *Constructor) Elaborate(c value.Checker, w *term.Written, args []*term.W
 	for n := range k.Dims {
 		core = append(core, term.Dimension{Dim: c.Dimension(args[len(k.Args)+n])})
 	}
-	return canonicalNumber(k, core), t
+	return canonicalNumber(c.Run(), k, core), t
 }
 
 // canonicalNumber makes numerals of constructors, suc 1 being 2.
-func canonicalNumber(k *Constructor, core []term.Arg) value.Core {
+func canonicalNumber(run *value.Run, k *Constructor, core []term.Arg) value.Core {
 	if !k.Data.Numerals {
 		return op(conSig, core...)
 	}
@@ -85,7 +85,7 @@ func canonicalNumber(k *Constructor, core []term.Arg) value.Core {
 		return readNumeral(k.Data, natural{})
 	}
 	if n, ok := core[2].(*term.Op); ok && n.Sig == numeralSig {
-		return readNumeral(k.Data, naturalOf(n.Args[0].(term.Number).Int).plus(natural{small: 1}))
+		return readNumeral(k.Data, naturalOf(n.Args[0].(term.Number).Int).plus(run, natural{small: 1}))
 	}
 	return op(conSig, core...)
 }

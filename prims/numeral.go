@@ -42,39 +42,77 @@ func (n natural) equal(m natural) bool {
 	return n.big.Cmp(m.big) == 0
 }
 
-func (n natural) plus(m natural) natural {
+// MaxNumberBits is how many bits a stored number may have: one operation on
+// such numbers, 4 MB each, takes about a millisecond, after which a run looks at
+// its context again. A larger one is over the budget for memory, whatever that is.
+const MaxNumberBits = 1 << 25
+
+// afford charges a number of the given bits before it is made.
+func afford(run *value.Run, bits int) {
+	if bits > MaxNumberBits {
+		run.Over("bits of a number", MaxNumberBits)
+	}
+	run.Charge(value.PriceNode + int64(bits/8))
+}
+
+func (n natural) plus(run *value.Run, m natural) natural {
 	if n.big == nil && m.big == nil {
 		if sum, carry := bits.Add64(n.small, m.small, 0); carry == 0 {
 			return natural{small: sum}
 		}
 	}
-	return naturalOf(new(big.Int).Add(n.Int(), m.Int()))
+	a, b := n.Int(), m.Int()
+	afford(run, max(a.BitLen(), b.BitLen())+1)
+	return naturalOf(new(big.Int).Add(a, b))
 }
 
-func (n natural) times(m natural) natural {
+// pieceBits is the size of the pieces in which long numbers are multiplied, so
+// that no one multiplication takes longer than some 100 µs.
+const pieceBits = 1 << 16
+
+func (n natural) times(run *value.Run, m natural) natural {
 	if n.big == nil && m.big == nil {
 		if high, low := bits.Mul64(n.small, m.small); high == 0 {
 			return natural{small: low}
 		}
 	}
-	return naturalOf(new(big.Int).Mul(n.Int(), m.Int()))
+	a, b := n.Int(), m.Int()
+	afford(run, a.BitLen()+b.BitLen())
+	if min(a.BitLen(), b.BitLen()) <= pieceBits/8 {
+		return naturalOf(new(big.Int).Mul(a, b))
+	}
+	product, row := new(big.Int), new(big.Int)
+	for j := (b.BitLen() - 1) / pieceBits; j >= 0; j-- { // Horner's rule, in both numbers
+		row.SetInt64(0)
+		for i := (a.BitLen() - 1) / pieceBits; i >= 0; i-- {
+			row.Lsh(row, pieceBits).Add(row, new(big.Int).Mul(piece(a, i), piece(b, j)))
+			run.Charge(pieceBits / 4)
+		}
+		product.Lsh(product, pieceBits).Add(product, row)
+	}
+	return naturalOf(product)
 }
 
-func (n natural) minus(m natural) natural {
+// piece is the k-th group of pieceBits bits of a.
+func piece(a *big.Int, k int) *big.Int {
+	const words = pieceBits / bits.UintSize
+	all := a.Bits()
+	return new(big.Int).SetBits(all[k*words : min((k+1)*words, len(all))])
+}
+
+func (n natural) minus(run *value.Run, m natural) natural {
 	if n.big == nil {
 		return natural{small: n.small - m.small}
 	}
+	afford(run, n.big.BitLen())
 	return naturalOf(new(big.Int).Sub(n.Int(), m.Int()))
 }
 
-func (n natural) less(m natural) bool { return n.Int().Cmp(m.Int()) < 0 }
-
-// price is what a number of this size is charged.
-func (n natural) price() int64 {
-	if n.big == nil {
-		return value.PriceNode
+func (n natural) less(m natural) bool {
+	if n.big == nil && m.big == nil {
+		return n.small < m.small
 	}
-	return value.PriceNode + int64(n.big.BitLen()/8)
+	return n.Int().Cmp(m.Int()) < 0
 }
 
 // Number is sucⁿ zero as a value.
@@ -109,14 +147,16 @@ func (n *Number) Int() *big.Int { return n.n.Int() }
 
 func (n *Number) isZero() bool { return n.n.isZero() }
 
-func (n *Number) predecessor() value.Value { return newNumber(n.data, n.n.minus(natural{small: 1})) }
+func (n *Number) predecessor(run *value.Run) value.Value {
+	return newNumber(n.data, n.n.minus(run, natural{small: 1}))
+}
 
 // Support is the base's.
 func (s *Successors) Support() value.Support { return s.base.Support() }
 
 // Substitute delays t over the base.
 func (s *Successors) Substitute(run *value.Run, t *value.Subst) value.Value {
-	return successors(s.data, s.count, run.Substitute(s.base, t))
+	return successors(run, s.data, s.count, run.Substitute(s.base, t))
 }
 
 // Split is the number of successors and what stands below them.
@@ -124,20 +164,20 @@ func (s *Successors) Split() (*big.Int, value.Value) {
 	return new(big.Int).Set(s.count.Int()), s.base
 }
 
-func (s *Successors) predecessor() value.Value {
-	return successors(s.data, s.count.minus(natural{small: 1}), s.base)
+func (s *Successors) predecessor(run *value.Run) value.Value {
+	return successors(run, s.data, s.count.minus(run, natural{small: 1}), s.base)
 }
 
 // successors is suc^n v, put together where v is known to be a number.
-func successors(d *Data, n natural, v value.Value) value.Value {
+func successors(run *value.Run, d *Data, n natural, v value.Value) value.Value {
 	if n.isZero() {
 		return v
 	}
 	switch v := value.Peek(v).(type) {
 	case *Number:
-		return newNumber(d, v.n.plus(n))
+		return newNumber(d, v.n.plus(run, n))
 	case *Successors:
-		return &Successors{d, v.count.plus(n), v.base}
+		return &Successors{d, v.count.plus(run, n), v.base}
 	default:
 		return &Successors{d, n, v}
 	}
@@ -148,10 +188,10 @@ func counted(run *value.Run, v value.Value) (n natural, rest value.Value) {
 	for {
 		switch w := run.Force(v).(type) {
 		case *Number:
-			return n.plus(w.n), nil
+			return n.plus(run, w.n), nil
 		case *Successors:
 			run.Take(value.StepNumeral)
-			n, v = n.plus(w.count), w.base
+			n, v = n.plus(run, w.count), w.base
 		default:
 			return n, w
 		}
@@ -170,7 +210,11 @@ func (t *DataType) readSuccessors(q value.Quoter, v *Successors) value.Core {
 	}
 	core := q.Term(t, rest)
 	suc := t.Data.Constructors[1]
-	for ; !n.isZero(); n = n.minus(natural{small: 1}) {
+	counter, _ := q.(interface{ Count() }) // each successor is a node of the output
+	for ; !n.isZero(); n = n.minus(q.Run(), natural{small: 1}) {
+		if counter != nil {
+			counter.Count()
+		}
 		q.Run().Charge(value.PriceNode)
 		core = op(conSig, suc.reference, term.Rows{}, core)
 	}
@@ -197,9 +241,9 @@ func (t *DataType) sameNumber(c value.Comparer, a, b value.Value) bool {
 	}
 	below := func(n natural, rest value.Value) value.Value {
 		if rest == nil {
-			return newNumber(t.Data, n.minus(least))
+			return newNumber(t.Data, n.minus(run, least))
 		}
-		return successors(t.Data, n.minus(least), rest)
+		return successors(run, t.Data, n.minus(run, least), rest)
 	}
 	return c.Terms("the number below the successors", t, below(m, x), below(n, y))
 }
@@ -214,7 +258,7 @@ func (o numeralOp) Eval(run *value.Run, _ eval.Frame, args []eval.Arg) value.Val
 
 func (numeralOp) Value(run *value.Run, args []eval.Arg) value.Value {
 	n := naturalOf(args[0].Payload.(term.Number).Int)
-	run.Charge(n.price())
+	afford(run, n.Int().BitLen())
 	return newNumber(args[1].Payload.(term.Reference).Target.(*Data), n)
 }
 
@@ -253,16 +297,16 @@ func (t *DataType) hcompNumbers(run *value.Run, base value.Value, walls value.Sy
 	}
 	_ = sup
 	below := func(m natural, r value.Value) value.Value {
-		m = m.minus(least)
+		m = m.minus(run, least)
 		if r == nil {
 			return &Number{t.Data, m}
 		}
-		return successors(t.Data, m, r)
+		return successors(run, t.Data, m, r)
 	}
 	for k := range walls {
 		rests[k].Body = below(counts[k], rests[k].Body)
 	}
-	return successors(t.Data, least, LaterHcomp(run, t, below(n, rest), rests)), true
+	return successors(run, t.Data, least, LaterHcomp(run, t, below(n, rest), rests)), true
 }
 
 // countedOne is v as far as it shows at once: the number, and what is below

@@ -46,7 +46,7 @@ func (elimOp) Prepare(c *term.Op, variables int) (term.Arg, bool) {
 				break
 			}
 			body = con.Args[2].(term.Core)
-			rule.count = rule.count.plus(natural{small: 1})
+			rule.count.small++
 		}
 		v, ok := body.(*term.Variable)
 		rule.affine = ok && v.Level == h
@@ -75,10 +75,9 @@ func (elimOp) Demands(args []eval.Arg) []*eval.Arg {
 func (e *Eliminator) numeral(run *value.Run, v *Number) (value.Value, bool) {
 	if e.step != nil && e.step.affine && !run.Plain.NoNumerals {
 		run.Take(value.StepNumeral)
-		n := e.step.count.times(v.n)
-		run.Charge(n.price())
+		n := e.step.count.times(run, v.n)
 		// the base is forced, so that sums of sums are numbers and no chains
-		return successors(e.data, n, run.Force(e.cases[0].ApplyAll(run, nil))), true
+		return successors(run, e.data, n, run.Force(e.cases[0].ApplyAll(run, nil))), true
 	}
 	if v.n.big != nil || v.n.small < 2 || run.Plain.NoNumerals {
 		return nil, false
