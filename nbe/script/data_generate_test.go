@@ -264,6 +264,14 @@ func (m *maker) composite(depth int) string {
 	inner := *m
 	inner.dims = append(append([]string(nil), m.dims...), i)
 	e := inner.element(depth - 1)
+	if !m.d.formal && m.pick(2) == 0 {
+		// a strict composite that waits for its walls
+		for _, a := range m.args {
+			if a.kind == "loop" {
+				e = "(at " + m.variable(a.name) + " (min {" + i + "} " + m.dim() + "))"
+			}
+		}
+	}
 	s := "(hcomp " + m.d.self(m.at) + " " + put(e, i, "0")
 	for range m.pick(3) {
 		s += " (" + m.face() + " (" + i + ") " + put(e, i, i) + ")"
@@ -307,7 +315,7 @@ func drawDeclaration(t *rapid.T) *declared {
 	}
 	d.clauses[0] += ")"
 	bound := 0
-	for n := range rapid.IntRange(0, 3).Draw(t, "paths") {
+	for n := range max(0, rapid.IntRange(-1, 3).Draw(t, "paths")) { // none in two of five, which may be strict
 		d.formal = true
 		c := con{name: fmt.Sprintf("pa%d", n), args: arguments(2), dims: rapid.IntRange(1, 2).Draw(t, "dimensions"), plain: true}
 		m := &maker{t: t, d: d, args: c.args, paths: len(d.paths), bound: &bound, noHcomp: rapid.Bool().Draw(t, "no composites")}

@@ -34,6 +34,8 @@ var substitutions = []struct {
 }{
 	{[3]string{"0", "l", "m"}, [3]interval.Dim{interval.Zero(), v(1), v(2)}},
 	{[3]string{"k", "1", "m"}, [3]interval.Dim{v(0), interval.One(), v(2)}},
+	{[3]string{"k", "0", "m"}, [3]interval.Dim{v(0), interval.Zero(), v(2)}},
+	{[3]string{"k", "l", "0"}, [3]interval.Dim{v(0), v(1), interval.Zero()}},
 	{[3]string{"1", "0", "m"}, [3]interval.Dim{interval.One(), interval.Zero(), v(2)}},
 	{[3]string{"l", "k", "m"}, [3]interval.Dim{v(1), v(0), v(2)}},
 	{[3]string{"l", "l", "m"}, [3]interval.Dim{v(1), v(1), v(2)}},

@@ -52,6 +52,13 @@
 (same (-> I (P 1)) (carried-on 1) (lam (k) (push (transp (i (C i)) bot c) k)))
 (same (-> I (P 1)) (carried-on 0) carried)
 (same (-> I (P 1)) (lam (l) (carried-on l 0)) (lam (l) (left (transp (i (A (max i l))) (= l 1) (f l (transp (i (C (min i l))) (= l 0) c))))))
+(normal carried-on (lam (l k) (hcomp (Pushout (A 1) (B 1) (C 1) (lam (x) (f 1 x)) (lam (x) (g 1 x)))
+  (push (transp (i (C (max i l))) (= l 1) (transp (i (C (min i l))) (= l 0) c)) k)
+  ((= l 1) (j) (push (transp (i (C i)) bot c) k))
+  ((= k 0) (j) (left (transp (i (A (max i (rev j) l))) (or (= l 1) (= j 0)) (f (max (rev j) l)
+    (transp (i (C (max (min i (rev j)) l))) (or (= l 1) (= j 1)) (transp (i (C (min i l))) (= l 0) c))))))
+  ((= k 1) (j) (right (transp (i (B (max i (rev j) l))) (or (= l 1) (= j 0)) (g (max (rev j) l)
+    (transp (i (C (max (min i (rev j)) l))) (or (= l 1) (= j 1)) (transp (i (C (min i l))) (= l 0) c)))))))))
 ; also along a line that does not vary: nothing is regular
 (differ (-> I (P 0)) (lam (k) (transp (_ (P 0)) bot (ann (push c k) (P 0)))) (lam (k) (push c k)))
 ; the correction does not depend on what f happens to be, only on the declaration
