@@ -171,6 +171,14 @@ func accepted(t *testing.T, text string) {
 	}
 }
 
+// where is the law with a name written out.
+func (l law) where(name, text string) law {
+	for _, side := range []*string{&l.ty, &l.left, &l.right} {
+		*side = strings.ReplaceAll(*side, " "+name, " "+text)
+	}
+	return l
+}
+
 // lines are types and families that nothing computes at, over no dimension,
 // one and two.
 const lines = `

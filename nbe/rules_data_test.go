@@ -19,6 +19,8 @@ func TestRuleStrictHcomp(t *testing.T) {
 			left: "(hcomp Nat (suc x) ((= k 0) (i) (suc (at xy i))))", right: "(suc (hcomp Nat x ((= k 0) (i) (at xy i))))"},
 		law{name: "several successors, of which some are common", source: source, dims: "k", ty: "Nat", given: "(assume f (-> Nat Nat)) (assume z (Path Nat (f 0) (f 0)))",
 			left: "(hcomp Nat (suc (suc (f 0))) ((= k 0) (i) (suc (suc (at z i)))))", right: "(suc (suc (hcomp Nat (f 0) ((= k 0) (i) (at z i)))))"},
+		law{name: "as many successors as all show", source: source, dims: "k", ty: "Nat", given: "(assume z (Path Nat 1 1))",
+			left: "(hcomp Nat 2 ((= k 0) (i) (suc (at z i))))", right: "(suc (hcomp Nat 1 ((= k 0) (i) (at z i))))"},
 		law{name: "a variable alone is not the base", source: "no regularity", ty: "Nat", differ: true, left: "(hcomp Nat x)", right: "x"},
 		law{name: "what is pushed stays a composite below", source: source, dims: "k", ty: "Nat", differ: true,
 			left: "(hcomp Nat (suc x) ((= k 0) (_) (suc x)))", right: "(suc x)"},
@@ -50,6 +52,14 @@ func TestRuleStrictHcompArguments(t *testing.T) {
 			left: "(hcomp (Crate A B) (crate a b) ((= k 0) (i) (crate (at p i) (at pb i))))",
 			right: `(crate (hcomp A a ((= k 0) (i) (at p i)))
 				(comp (i (B (hfill A a i ((= k 0) (i) (at p i))))) b ((= k 0) (i) (at pb i))))`},
+		law{name: "an argument over two earlier ones", source: source, dims: "k", ty: "(Nest A B D)",
+			given: `(data Nest ((A (U 0)) (B (-> A (U 0))) (D (Pi ((a A)) (-> (B a) (U 0))))) (point nest ((a A) (b (B a)) (d (D a b)))))
+				(assume D (Pi ((a A)) (-> (B a) (U 0)))) (assume d (D a b)) (assume d2 (D a2 b2)) (assume pd (PathOver (i (D (at p i) (at pb i))) d d2))`,
+			left: "(hcomp (Nest A B D) (nest a b d) ((= k 0) (i) (nest (at p i) (at pb i) (at pd i))))",
+			right: `(nest (hcomp A a ((= k 0) (i) (at p i)))
+				(comp (i (B (hfill A a i ((= k 0) (i) (at p i))))) b ((= k 0) (i) (at pb i)))
+				(comp (i (D (hfill A a i ((= k 0) (i) (at p i))) (fill (i (B (hfill A a i ((= k 0) (i) (at p i))))) b i ((= k 0) (i) (at pb i))))) d
+					((= k 0) (i) (at pd i))))`},
 		law{name: "an argument that mentions none by hcomp", source: source, dims: "k", ty: "(Two A C)",
 			left:  "(hcomp (Two A C) (two a c) ((= k 0) (i) (two (at p i) (at pc i))))",
 			right: "(two (hcomp A a ((= k 0) (i) (at p i))) (hcomp C c ((= k 0) (i) (at pc i))))"},

@@ -68,6 +68,9 @@ func TestRuleTranspPath(t *testing.T) {
 			left: "(transp (i (PathOver (j (M (min i k) j)) (e0 (min i k)) (e1 (min i k)))) (= k 0) mp)",
 			right: `(line (j) (comp (i (M (min i k) j)) (at mp j)
 				((= k 0) (_) (at mp j)) ((= j 0) (i) (e0 (min i k))) ((= j 1) (i) (e1 (min i k)))))`},
+		law{name: "a path that depends on the face", source: source, dims: "k", ty: "(Path A (at r k) b)", given: "(assume r (Path A a c))",
+			left:  "(transp (i (Path A (at r (min i k)) b)) (= k 0) (at q k))",
+			right: `(line (j) (comp (_ A) (at q k j) ((= k 0) (_) (at p j)) ((= j 0) (i) (at r (min i k))) ((= j 1) (_) b)))`},
 		law{name: "not over", source: source, ty: "(Path A c b)", given: "(assume r (Path A a c))",
 			left:  "(transp (i (Path A (at r i) b)) bot p)",
 			right: "(line (j) (comp (_ A) (at p j) ((= j 0) (i) (at r i)) ((= j 1) (_) b)))"},

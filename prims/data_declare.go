@@ -46,8 +46,8 @@ func declare(c value.Checker, w *term.Declaration, formal bool, level int) *Data
 		x := &declaring{c: c, run: c.Run(), d: d}
 		for _, p := range w.Params {
 			core, _ := c.Type(p.Type)
+			d.Params = append(d.Params, x.argument(p.Name, core)) // in the scope that core speaks of
 			x.params = append(x.params, b.Variable(term.Binder{Name: p.Name, Place: p.Place}, c.Value(core)))
-			d.Params = append(d.Params, x.argument(p.Name, core))
 		}
 		for k := range w.Constructors {
 			con := x.constructor(&w.Constructors[k])
