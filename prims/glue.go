@@ -57,6 +57,17 @@ func (ps glueParts) faces() (sup value.Support) {
 	return sup
 }
 
+// top reports whether one of the parts holds: then the type glued on, which may
+// be a Glue type itself, is the whole.
+func (ps glueParts) top() bool {
+	for _, p := range ps {
+		if p.Cube.IsTop() {
+			return true
+		}
+	}
+	return false
+}
+
 func (ps glueParts) substitute(run *value.Run, s *value.Subst) glueParts {
 	if s == nil {
 		return ps
@@ -157,7 +168,7 @@ func Unglue(run *value.Run, parts []GluePart, b value.Value) value.Value {
 
 // LaterUnglue is Unglue in a cell.
 func LaterUnglue(run *value.Run, parts []GluePart, b value.Value) value.Value {
-	if b, ok := value.Peek(b).(*GlueElement); ok {
+	if b, ok := value.Peek(b).(*GlueElement); ok && !glueParts(parts).top() {
 		return b.Base
 	}
 	return run.Later(glueParts(parts).support()|b.Support(), func(run *value.Run) value.Value { return Unglue(run, parts, b) })

@@ -90,3 +90,13 @@
 ; hcomp in a composite of types.
 (normal (unglue (hcomp (hcomp (U 0) Bool) (ann (glue true) (Glue Bool)))) true)
 (normal (hcomp (box2 0) (pos 3)) (pos 3))
+
+; What is glued on may be a glued type itself: where its face holds, unglue is the
+; equivalence's map, not the base of the element.
+(def negated-base (Equiv (Glue Bool) Bool)
+  (quasi-inverse (Glue Bool) Bool (lam (b) (not (unglue b))) (lam (b) (glue (not b)))
+    not-not (lam (g) (line (i) (glue (at (not-not (unglue g)) i))))))
+(def on-glued (-> I (U 0)) (lam (i) (Glue Bool ((= i 0) (Glue Bool) negated-base))))
+(normal (unglue (transp (i (on-glued i)) bot (ann (glue true) (Glue Bool)))) false)
+(normal (unglue (transp (i (on-glued (rev i))) bot (ann (glue true) (Glue Bool)))) false)
+(normal (unglue (hcomp (on-glued 0) (ann (glue true) (Glue Bool)))) true)
