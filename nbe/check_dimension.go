@@ -52,6 +52,8 @@ func (c *checker) Dimension(w *term.Written) (d interval.Dim) {
 			c.run.Down(func() {
 				d = c.Dimension(w.Parts[0].Body)
 				for _, p := range w.Parts[1:] {
+					c.run.Work(1)
+					c.run.Dimension(d)
 					if w.Word == "min" {
 						d = d.Min(c.Dimension(p.Body))
 					} else {
@@ -108,6 +110,8 @@ func (c *checker) Face(w *term.Written) (f interval.Face) {
 		c.run.Down(func() {
 			f = c.Face(w.Parts[0].Body)
 			for _, p := range w.Parts[1:] {
+				c.run.Work(1)
+				c.run.Face(f)
 				if w.Word == "and" {
 					f = f.And(c.Face(p.Body))
 				} else {

@@ -197,7 +197,7 @@ func (r *Run) Substitute(v Value, s *Subst) Value {
 		return v
 	}
 	if d, ok := v.(*Dimension); ok {
-		return DimensionOf(d.Dim.Subst(s))
+		return r.Dimension(d.Dim.Subst(s))
 	}
 	if !r.Plain.NoSupport {
 		if s = s.RestrictTo(support); s == nil {

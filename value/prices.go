@@ -18,13 +18,15 @@ import (
 
 // Prices of memory, in bytes.
 const (
-	PriceLazy    = 160  // a cell (48) with the work that waits in it (up to 112)
-	PriceClosure = 96   // a closure with four captured values
-	PriceNode    = 80   // a core term, a frame of a neutral, an entry of a memo
-	PriceSlot    = 16   // one more value in a closure, a frame or a list
-	PriceWall    = 64   // a wall: its face, its name, its body
-	PriceSubst   = 112  // a substitution of one dimension; PriceSlot for each further word
-	PriceLevel   = 1024 // a level of nesting, the first time that the stack gets that deep
+	PriceLazy    = 160 // a cell (48) with the work that waits in it (up to 112)
+	PriceClosure = 96  // a closure with four captured values
+	PriceNode    = 80  // a core term, a frame of a neutral, an entry of a memo
+	PriceSlot    = 16  // one more value in a closure, a frame or a list
+	PriceWall    = 64  // a wall: its face, its name, its body
+	// a conjunction of an interval expression or a face that has more than four;
+	// high, for the time that it takes
+	PriceConjunction = 64
+	PriceLevel       = 1024 // a level of nesting, the first time that the stack gets that deep
 )
 
 // Cost is what something has cost.
@@ -67,21 +69,20 @@ func (s *Spent) String() string {
 func (r *Run) attribute() {
 	n := r.Steps - r.sample
 	r.sample = r.Steps
-	if n == 0 || r.owner == nil {
+	if n == 0 || r.owner == nil || r.owner.Kind != SiteDefinition {
 		return
 	}
 	if r.spent == nil {
-		r.spent = map[Global]int64{}
+		r.spent = map[*Site]int64{}
 	}
 	r.spent[r.owner] += n
 }
 
-// Own makes g the definition whose code is running and returns the one before,
-// to be given back when that code has returned.
-func (r *Run) Own(g Global) Global {
-	old := r.owner
-	r.owner = g
-	return old
+// Own says that the code of a definition, or of a term, is running.
+func (r *Run) Own(s *Site) {
+	if r.owner != s {
+		r.owner = s
+	}
 }
 
 // Over leaves the run: it would use more of what than the limit allows.
@@ -91,21 +92,21 @@ func (r *Run) over(what string, limit int64) {
 	r.attribute()
 	s := &Spent{Stats: r.Snapshot(), What: what, Limit: limit}
 	s.Deepest = max(s.Deepest, r.depth)
-	for g, n := range r.spent {
-		s.Definitions = append(s.Definitions, Cost{g.GlobalName(), n})
+	for site, n := range r.spent {
+		s.Definitions = append(s.Definitions, Cost{site.Name, n})
 	}
 	byCost := func(a, b Cost) int {
 		return cmp.Or(cmp.Compare(b.Steps, a.Steps), cmp.Compare(a.Name, b.Name))
 	}
 	slices.SortFunc(s.Definitions, byCost)
 	s.Definitions = s.Definitions[:min(3, len(s.Definitions))]
-	for _, c := range []Cost{
-		{"functions and eliminations", r.Steps - r.Composites - r.Transports - r.Unfolded}, {"hcomp", r.Composites}, {"transp", r.Transports},
-		{"unfolding", r.Unfolded}, {"substitution", r.Pushed},
-	} {
-		if c.Steps > 0 {
-			s.Operations = append(s.Operations, c)
+	for k, n := range r.ByRule {
+		if n > 0 {
+			s.Operations = append(s.Operations, Cost{StepKind(k).String(), n})
 		}
+	}
+	if r.Pushed > 0 {
+		s.Operations = append(s.Operations, Cost{"substitution", r.Pushed})
 	}
 	slices.SortFunc(s.Operations, byCost)
 	r.Fail(&term.Error{Kind: term.OutOfBudget, Message: "out of budget", WantText: fmt.Sprintf("at most %d %s", limit, what), GotText: "more", Detail: s})

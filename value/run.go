@@ -59,10 +59,10 @@ type Run struct {
 	bytes    int64     // the memory at which to look at them again
 	work     int       // other work since the last look
 	depth    int64
-	limit    int64            // the depth at which to hop or stop
-	owner    Global           // the definition whose code is running, nil outside of definitions
-	spent    map[Global]int64 // steps by definition, by samples
-	sample   int64            // the steps at the last sample
+	limit    int64           // the depth at which to hop or stop
+	owner    *Site           // the definition whose code is running, nil outside of definitions
+	spent    map[*Site]int64 // steps by definition, by samples
+	sample   int64           // the steps at the last sample
 	high     *atomic.Int32
 	draw     *rand.Rand // names drawn at random, a hook for tests
 	unfold   Unfolder

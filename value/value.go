@@ -105,6 +105,23 @@ func DimensionOf(d interval.Dim) *Dimension {
 	return &Dimension{d}
 }
 
+// Dimension is d as a value, charged where it is long: the work on it grows
+// with the square of its length.
+func (r *Run) Dimension(d interval.Dim) Value {
+	if n := d.Len(); n > 4 {
+		r.Charge(int64(n) * PriceConjunction)
+	}
+	return DimensionOf(d)
+}
+
+// Face charges f where it is long.
+func (r *Run) Face(f interval.Face) interval.Face {
+	if n := f.Len(); n > 4 {
+		r.Charge(int64(n) * PriceConjunction)
+	}
+	return f
+}
+
 // DimensionName is the dimension n as a value.
 func DimensionName(n Name) *Dimension {
 	if int(n) < len(literals) {

@@ -36,7 +36,8 @@ func (s System) FaceSupport() (sup Support) {
 func (s System) Substitute(run *Run, t *Subst) System {
 	out := make(System, 0, len(s))
 	for _, w := range s {
-		face := w.Cube.Subst(t)
+		face := run.Face(w.Cube.Subst(t))
+		run.Charge(PriceWall)
 		if face.IsBot() {
 			run.Dropped++
 		}

@@ -109,6 +109,7 @@ func (c *closure) ApplyAll(run *value.Run, args []value.Value) value.Value {
 
 // OpenAll is the body under all its arguments, in a cell.
 func (c *closure) OpenAll(run *value.Run, args []value.Value) value.Value {
+	run.Charge(int64(len(args)+len(c.env)) * value.PriceSlot)
 	env := make([]value.Value, len(args)+len(c.env))
 	copy(env, args)
 	copy(env[len(args):], c.env)

@@ -64,6 +64,7 @@ type opCode struct {
 }
 
 func (c *opCode) Eval(run *value.Run, f Frame) value.Value {
+	run.Own(c.site)
 	if run.Enter() {
 		return c.hop(run, f)
 	}
@@ -125,7 +126,7 @@ func (a *Arg) Eval(run *value.Run, f Frame) value.Value {
 		return a.code.Eval(run, f)
 	}
 	if a.dim != nil {
-		return value.DimensionOf(a.dim.eval(f))
+		return run.Dimension(a.dim.eval(f))
 	}
 	n := len(a.abs.captures)
 	frame := run.Frame(n)
@@ -141,7 +142,7 @@ func (a *Arg) Delay(run *value.Run, f Frame) value.Value {
 	case a.code != nil:
 		return delay(run, a.code, f)
 	case a.dim != nil:
-		return value.DimensionOf(a.dim.eval(f))
+		return run.Dimension(a.dim.eval(f))
 	}
 	if len(a.abs.captures) == 0 {
 		return a.abs.thunk(run, nil, nil)
@@ -206,7 +207,7 @@ func (a *Arg) Walls(run *value.Run, f Frame) value.System {
 // Restricted calls yield with each conjunction of the row's face (its argument
 // 0) and with the frame restricted to it, for the row's other arguments.
 func Restricted(run *value.Run, f Frame, row []Arg, yield func(cube interval.Cube, f Frame)) {
-	face := row[0].Face(f)
+	face := run.Face(row[0].Face(f))
 	for k := range face.Len() {
 		cube := face.Cube(k)
 		if cube.IsTop() {
@@ -228,6 +229,7 @@ func restrict(run *value.Run, abs *Abstraction, f Frame, cube interval.Cube) Fra
 	if cube.IsTop() {
 		return f
 	}
+	run.Charge(int64(len(f)) * value.PriceSlot)
 	g := make(Frame, len(f))
 	for _, slot := range abs.captures {
 		g[slot] = run.Restrict(f[slot], cube)
