@@ -27,9 +27,9 @@ import (
 // that is called, not to the caller.
 //
 // Paths are kept whole up to MaxPath sites. A longer one, as recursion makes
-// it, goes back to the nearest place on it where the same site stands: counts
-// stay exact, and the tree stays small. Beyond MaxPaths paths in one run, every
-// recursion is folded like that.
+// it, goes back to the nearest place on it where the same site was entered from
+// the same one: counts stay exact, also by caller, and the tree stays small.
+// Beyond MaxPaths paths in one run, every recursion is folded like that.
 //
 // A run without a trace pays one nil test at each hook.
 
@@ -317,8 +317,8 @@ func (t *Trace) find(from *Path, s *Site) *Path {
 		}
 	}
 	if from.depth >= MaxPath || t.paths >= MaxPaths {
-		for p := from; p != nil; p = p.Parent {
-			if p.Site == s {
+		for p := from; p.Parent != nil; p = p.Parent {
+			if p.Site == s && (p.Parent.Site == from.Site || from.depth >= 4*MaxPath) {
 				if t.paths < MaxPaths {
 					from.next = append(from.next, link{s, p})
 				}
