@@ -51,6 +51,7 @@ type settings struct {
 	timeout time.Duration
 	times   bool
 	verbose bool
+	watch   watching
 }
 
 const usage = `Usage: script [flags] FILE…
@@ -62,8 +63,8 @@ not, 2 if something could not be read.
 `
 
 // parse reads the command line.
-func parse(args []string, stderr io.Writer) (settings, error) {
-	var s settings
+func parse(args []string, stderr io.Writer) (*settings, error) {
+	s := &settings{}
 	flags := flag.NewFlagSet("script", flag.ContinueOnError)
 	flags.SetOutput(stderr)
 	flags.Usage = func() {
@@ -78,6 +79,7 @@ func parse(args []string, stderr io.Writer) (settings, error) {
 	flags.Int64Var(&s.limits.Memory, "memory", 0, fmt.Sprintf("bytes a call may be charged (0: %d)", nbe.DefaultMemory))
 	flags.Int64Var(&s.limits.Output, "output", 0, fmt.Sprintf("nodes of a normal form, shared ones counted once (0: %d)", nbe.DefaultOutput))
 	flags.Int64Var(&s.limits.Text, "text", 0, fmt.Sprintf("nodes of a term that is written out (0: %d)", nbe.DefaultText))
+	s.watch.flags(flags)
 	if err := flags.Parse(args); err != nil {
 		return s, err
 	}
@@ -119,9 +121,10 @@ func run(ctx context.Context, args []string, stdin io.Reader, stdout, stderr io.
 	r := &reporter{out: stdout, set: set, progress: newProgress(stdout, stderr)}
 	defer r.progress.stop()
 
+	watch := set.watch.options(stdout)
 	status := good
 	for _, file := range set.files {
-		session := &script.Session{Engine: engine.Fork(), Begin: r.begin, Report: r.report}
+		session := &script.Session{Engine: engine.Fork(), Begin: r.begin, Report: r.report, Options: watch}
 		if err := handle(ctx, session, file, stdin); err != nil {
 			r.progress.clear()
 			fmt.Fprintln(stderr, err)
@@ -134,6 +137,10 @@ func run(ctx context.Context, args []string, stdin io.Reader, stdout, stderr io.
 		}
 	}
 	r.summary()
+	if err := set.watch.write(); err != nil {
+		fmt.Fprintln(stderr, "script:", err)
+		status = unreadable
+	}
 	if status == good && (r.failed > 0 || ctx.Err() != nil) {
 		status = bad
 	}

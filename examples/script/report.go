@@ -17,7 +17,7 @@ import (
 // reporter prints outcomes and counts them.
 type reporter struct {
 	out      io.Writer
-	set      settings
+	set      *settings
 	progress *progress
 	forms    int
 	failed   int
