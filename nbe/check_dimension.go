@@ -1,6 +1,8 @@
 package nbe
 
 import (
+	"fmt"
+
 	"example.com/boxwright/nbe/term"
 	"example.com/boxwright/value"
 	"example.com/boxwright/value/interval"
@@ -139,7 +141,9 @@ func (c *checker) resolve(parts []term.Part) {
 		}
 	}
 	push(parts)
+	nesting, most := int64(0), c.run.Budget().Depth
 	for len(stack) > 0 {
+		c.run.Step()
 		s := stack[len(stack)-1]
 		stack = stack[:len(stack)-1]
 		for _, b := range s.part.Binders {
@@ -150,7 +154,11 @@ func (c *checker) resolve(parts []term.Part) {
 			}
 		}
 		if s.leave {
+			nesting--
 			continue
+		}
+		if nesting++; nesting > most {
+			c.Fail(s.part.Body, term.OutOfBudget, "out of budget", fmt.Sprintf("at most %d levels of nesting", most), "more")
 		}
 		stack = append(stack, step{s.part, true})
 		for k := len(s.part.Rows) - 1; k >= 0; k-- {
