@@ -203,7 +203,9 @@ func (w *Written) isPlain(word string) bool {
 
 func (p *printer) nestedNames(w *Written) {
 	word, before := w.Word, " ("
-	for w.isChain(word, 1, 0) && !p.watch.Ended(1) {
+	// Every piece is a character or more: beyond the limit nothing is printed,
+	// and a host may have tied a term into a knot.
+	for w.isChain(word, 1, 0) && len(p.pieces) <= p.limit && !p.watch.Ended(1) {
 		p.text(before)
 		p.text(w.Parts[0].Binders[0].Name)
 		before, w = " ", w.Parts[0].Body
@@ -251,7 +253,7 @@ func (p *printer) follow(word string, w *Written) {
 
 func (p *printer) nestedAt(w *Written) {
 	var dimensions []*Written
-	for w.isPlain("at") && !p.watch.Ended(1) {
+	for w.isPlain("at") && len(dimensions) <= p.limit && !p.watch.Ended(1) {
 		dimensions = append(dimensions, w.Parts[1].Body)
 		w = w.Parts[0].Body
 	}
