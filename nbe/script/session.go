@@ -160,20 +160,20 @@ func (s *Session) handle(ctx context.Context, e *nbe.Engine, f *notation.Form) (
 	if err == nil || isUnreadable(err) {
 		return text, err
 	}
-	place := f.Place
-	if term.KindOf(err) == term.Duplicate {
-		place = f.NamePlace
-		if f.Kind == notation.Declare {
-			place = term.Place{} // the declaration knows which of its names it is
-		}
+	if f.NamePlace.Known() {
+		err = blame(f, err)
 	}
-	return text, at(place, err)
+	return text, at(f.Place, err)
 }
 
 func (s *Session) do(ctx context.Context, e *nbe.Engine, f *notation.Form) (string, error) {
 	scope := e.Scope()
 	switch f.Kind {
 	case notation.Define:
+		// A host may put a definition in the place of an assumption; a script declares a name once.
+		if e.Global(f.Name) != nil {
+			return "", &term.Error{Kind: term.Duplicate, Message: "this name is declared already", GotText: f.Name}
+		}
 		return "", e.Define(ctx, f.Name, f.Type, f.Term, s.Options...)
 	case notation.Assume:
 		return "", e.Assume(ctx, f.Name, f.Type, s.Options...)
@@ -210,13 +210,24 @@ func (s *Session) do(ctx context.Context, e *nbe.Engine, f *notation.Form) (stri
 	return "", &term.Error{Kind: term.Internal, Message: "a form of a script of no known kind", GotText: f.Kind.String()}
 }
 
-// at gives an error the place p if it has none. A name that is declared twice
-// is at fault itself, not the type that stands beside it.
+// at gives an error the place p if it has none.
 func at(p term.Place, err error) error {
 	var e *term.Error
-	if errors.As(err, &e) && (!e.Place.Known() || e.Kind == term.Duplicate && p.Known()) {
+	if errors.As(err, &e) && !e.Place.Known() {
 		c := *e
 		c.Place = p
+		return &c
+	}
+	return err
+}
+
+// blame puts the error of a name that is declared twice on the name itself,
+// unless it is that of a constructor, which has a place of its own.
+func blame(f *notation.Form, err error) error {
+	var e *term.Error
+	if errors.As(err, &e) && e.Kind == term.Duplicate && (f.Kind != notation.Declare || e.Place == f.Place) {
+		c := *e
+		c.Place = f.NamePlace
 		return &c
 	}
 	return err
