@@ -219,5 +219,12 @@ func TestRuleTranspPathConstructor(t *testing.T) {
 				((= m 0) (_) (glued l0 k))
 				((= k 0) (j) (transp (i (Push (LA (min (max i (rev j)) m)) (LC (min (max i (rev j)) m)) (LF (min (max i (rev j)) m)))) (or (= m 0) (= j 0))
 					(at-b (LF (min (rev j) m) (tfill (i (LA (min i m))) (= m 0) l0 (rev j)))))))`},
+		law{name: "one that needs correcting, of an argument that depends on the face", source: source, dims: "k m", ty: "(Push (LA m) (LC m) (LF m))",
+			given: "(assume l1 (LA 0)) (assume pl (Path (LA 0) l0 l1))",
+			left:  "(transp (i (Push (LA (min i m)) (LC (min i m)) (LF (min i m)))) (= m 0) (glued (at pl m) k))",
+			right: `(hcomp (Push (LA m) (LC m) (LF m)) (glued (transp (i (LA (min i m))) (= m 0) (at pl m)) k)
+				((= m 0) (_) (glued l0 k))
+				((= k 0) (j) (transp (i (Push (LA (min (max i (rev j)) m)) (LC (min (max i (rev j)) m)) (LF (min (max i (rev j)) m)))) (or (= m 0) (= j 0))
+					(at-b (LF (min (rev j) m) (tfill (i (LA (min i m))) (= m 0) (at pl m) (rev j)))))))`},
 	)
 }

@@ -1,6 +1,13 @@
 package nbe_test
 
-import "testing"
+import (
+	"context"
+	"testing"
+
+	"github.com/stretchr/testify/require"
+
+	"example.com/boxwright/value/interval"
+)
 
 // What is neutral, and normal forms: the order of walls, what a substitution
 // may not skip, and what the comparison may not remember.
@@ -108,6 +115,63 @@ func TestRuleFrontier(t *testing.T) {
 		law{name: "a transport's face", source: source, dims: "k", ty: "C",
 			left: "((ann (lam (k l) (transp (_ C) (or (and (= k 0) (= l 1)) (and (= k 1) (= l 0))) c)) (-> I I C)) k k)", right: "(transp (_ C) bot c)"},
 	)
+}
+
+// The same on values: the term is evaluated and read, and only then are
+// dimensions put into its value.
+func TestRuleFrontierOfValues(t *testing.T) {
+	k, l, m := interval.Var(0), interval.Var(1), interval.Var(2)
+	put := func(pairs ...any) *interval.Subst {
+		var names []interval.Name
+		var dims []interval.Dim
+		for n := 0; n < len(pairs); n += 2 {
+			names, dims = append(names, interval.Name(pairs[n].(int))), append(dims, pairs[n+1].(interval.Dim))
+		}
+		return interval.NewSubst(names, dims)
+	}
+	const stuck = "(hcomp Nat 0 ((and (= k 0) (= l 1)) (i) (at e i)))"
+	for _, c := range []struct {
+		name, ty, term string
+		s              *interval.Subst
+		want           string
+	}{
+		{"a wall moves to another face", "Nat", "(hcomp Nat 0 ((= k 0) (i) (at s l i)))", put(0, l), "0"},
+		{"a dimension of a wall moves to its face", "Nat", "(hcomp Nat 0 ((= k 0) (i) (at s l i)))", put(1, k), "0"},
+		{"an end inside a wall", "Nat", "(hcomp Nat 0 ((= k 0) (i) (at s l i)))", put(1, interval.One()), "0"},
+		{"a face becomes bot", "Nat", "(hcomp Nat 0 ((= k 1) (i) (at e i)))", put(0, l.Min(l.Rev())), "0"},
+		{"a wall becomes impossible", "Nat", stuck, put(1, k), "0"},
+		{"a wall becomes impossible, the other way", "Nat", stuck, put(0, l), "0"},
+		{"a wall becomes impossible, both to a third", "Nat", stuck, put(0, m, 1, m), "0"},
+		{"a wall becomes impossible by reversal", "Nat", "(hcomp Nat 0 ((and (= k 0) (= l 0)) (i) (at e i)))", put(1, k.Rev()), "0"},
+		{"an exchange leaves it stuck", "Nat", stuck, put(0, l, 1, k), "(hcomp Nat 0 ((and (= k 1) (= l 0)) (i) (at e i)))"},
+		{"inside the base", "Nat", "(hcomp Nat " + stuck + " ((= m 0) (_) " + stuck + "))", put(1, k), "0"},
+		{"inside a successor", "Nat", "(suc " + stuck + ")", put(1, k), "1"},
+		{"inside an elimination", "C", "(elim (_ C) " + stuck + " (zero c) ((suc n h) d))", put(1, k), "c"},
+		{"inside the argument of a variable", "C", "(f " + stuck + ")", put(1, k), "(f 0)"},
+		{"inside a path", "(Path Nat 0 0)", "(hcomp (Path Nat 0 0) (line (_) 0) ((and (= k 0) (= l 1)) (i) (at s i)))", put(1, k), "(line (_) 0)"},
+		{"the face of a transport", "C", "(transp (_ C) (and (= k 0) (= l 1)) c)", put(1, k), "(transp (_ C) bot c)"},
+		{"the face of a transport holds", "C", "(transp (_ C) (and (= k 0) (= l 1)) c)", put(0, interval.Zero(), 1, interval.One()), "c"},
+		{"the face of a formal composite", "Circle", "(hcomp Circle base ((and (= k 0) (= l 1)) (i) (loop i)))", put(1, k), "(hcomp Circle base)"},
+		{"a constructor at an end", "Circle", "(loop k)", put(0, interval.One()), "base"},
+		{"a constructor at an expression", "Circle", "(loop (max k (min l m)))", put(0, m, 1, m.Rev()), "(loop (max m (min m (rev m))))"},
+		{"walls that come to the same face", "C", "(hcomp C c ((= k 0) (i) (at q i)) ((= l 0) (i) (at q i)))", put(1, k), "(hcomp C c ((= k 0) (i) (at q i)))"},
+		{"walls in another order", "C", "(hcomp C c ((and (= k 0) (= l 1)) (i) (at q i)) ((and (= k 1) (= l 0)) (i) (at r i)))", put(0, l, 1, k), "(hcomp C c ((and (= k 0) (= l 1)) (i) (at r i)) ((and (= k 1) (= l 0)) (i) (at q i)))"},
+		{"a path at an end", "C", "(at q (max k l))", put(0, l, 1, interval.One()), "c"},
+	} {
+		t.Run(c.name, func(t *testing.T) {
+			for _, b := range builds() {
+				e := b.engine(t, stuckCounts+"(assume f (-> Nat C)) (assume q (Path C c c)) (assume r (Path C c c))")
+				p := &prover{t: t, s: scopeOf(t, e), call: b.call, what: b.name}
+				x := p.check(read(t, c.term), read(t, c.ty))
+				want := p.normal(p.check(read(t, c.want), read(t, c.ty)))
+				p.normal(x)
+				y, err := p.s.SubstituteValue(context.Background(), x, c.s, b.call...)
+				require.NoError(t, err)
+				p.same(want, p.normal(y), c.term)
+				require.True(t, p.equal(y, p.check(read(t, c.want), read(t, c.ty))))
+			}
+		})
+	}
 }
 
 // E : Path (U 0) Nat Unit. The walls of the two composites are equal, at Unit;

@@ -79,6 +79,9 @@ func (g *Generator) Dimension() *term.Written {
 	literal := func() *term.Written {
 		d := term.Name(g.dims[g.pick(len(g.dims))])
 		if g.maybe(3) {
+			d = term.Name(g.dims[len(g.dims)-1]) // the innermost, which a composite is about
+		}
+		if g.maybe(3) {
 			return term.Rev(d)
 		}
 		return d
@@ -197,7 +200,8 @@ func (g *Generator) leaf(t *Type) *term.Written {
 	at := func(p string, rs ...*term.Written) *term.Written { return term.At(term.Name(p), rs...) }
 	switch t.Kind {
 	case Nat:
-		return g.one(term.Numeral(uint64(g.pick(3))), term.Name("n0"), at("pN", g.Dimension()), at("zN", g.Dimension()), at("sN", g.Dimension(), g.Dimension()))
+		return g.one(term.Numeral(uint64(g.pick(3))), term.Name("n0"), at("pN", g.Dimension()), at("zN", g.Dimension()), at("sN", g.Dimension(), g.Dimension()),
+			at("rN", g.Dimension(), g.Dimension()), at("rN", g.Dimension(), g.Dimension()), call("suc", at("rN", g.Dimension(), g.Dimension())))
 	case Bool:
 		return g.one(term.Name("true"), term.Name("false"), term.Name("q0"))
 	case Unit:

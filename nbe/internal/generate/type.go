@@ -58,7 +58,7 @@ const Given = `
 	(assume E (Path (U 0) Nat Unit)) (assume xE (Pi ((i I)) (at E i)))
 	(assume FN (-> Nat (U 0))) (assume fN (Pi ((n Nat)) (FN n))) (assume fz (FN 0)) (assume fs (Pi ((n Nat)) (-> (FN n) (FN (suc n)))))
 	(assume FC (-> Circle (U 0))) (assume cb (FC base)) (assume cl (PathOver (i (FC (loop i))) cb cb))
-	(assume n0 Nat) (assume n1 Nat) (assume pN (Path Nat n0 n1)) (assume zN (Path Nat 0 0)) (assume sN (Path (Path Nat 0 0) zN zN))
+	(assume n0 Nat) (assume n1 Nat) (assume pN (Path Nat n0 n1)) (assume zN (Path Nat 0 0)) (assume sN (Path (Path Nat 0 0) zN zN)) (assume rN (Path (Path Nat 0 0) (line (_) 0) (line (_) 0)))
 	(assume c0 Circle) (assume pC (Path Circle base c0)) (assume t0 Tally) (assume pT (Path Tally t0 none))
 	(assume q0 Bool) (assume u0 Unit)
 `
