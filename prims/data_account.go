@@ -264,6 +264,46 @@ func (x *accountant) constructors() AccountSection {
 	return out
 }
 
+// others are the constructors that the boundary of k, and the ends of the paths
+// among its arguments, come down to, in the order of the declaration.
+func (k *Constructor) others() (out []*Constructor) {
+	seen := map[*Constructor]bool{k: true}
+	work := []*Constructor{k}
+	for len(work) > 0 {
+		c := work[len(work)-1]
+		work = work[:len(work)-1]
+		visit := func(a term.Arg) bool {
+			if r, ok := a.(term.Reference); ok {
+				if other, ok := r.Target.(*Constructor); ok && other.Data == k.Data && !seen[other] {
+					seen[other] = true
+					out = append(out, other)
+					work = append(work, other)
+				}
+			}
+			return true
+		}
+		for _, b := range c.Boundary {
+			term.Walk(b.Core, visit)
+		}
+		for _, a := range c.Args {
+			term.Walk(a.Core, visit)
+		}
+	}
+	slices.SortFunc(out, func(a, b *Constructor) int { return a.Index - b.Index })
+	return out
+}
+
+// binds is how many names the case of k binds.
+func (k *Constructor) binds() int {
+	n := len(k.Args) + len(k.Dims)
+	for _, a := range k.Args {
+		if a.Recursive != nil {
+			n++
+		}
+	}
+	return n
+}
+
 // form is the constructor at the variables and dimensions bound last.
 func (k *Constructor) form(x *accountant, variables int) string {
 	args := append([]string(nil), x.variables[len(x.variables)-variables:]...)
@@ -307,9 +347,21 @@ func (x *accountant) elimination() AccountSection {
 	out := AccountSection{"elimination into any family " + p + " of types over " + x.own(), [][]string{rule}}
 
 	e := newEliminator(x.d, &value.Captured{Rule: applyFamily, Values: []value.Value{family}}, make([]value.Case, len(x.d.Constructors)), nil)
-	for n, k := range x.d.Constructors {
+	for _, k := range x.d.Constructors {
 		var rule []string
 		x.under(func() {
+			// what the boundary does with other cases is written as functions of their names
+			others := k.others()
+			for _, c := range others {
+				f := x.Variable(c.Name+"-case", x.caseType(e, c, params, nil, nil, nil))
+				e.cases[c.Index] = valueOfCase{f, c.binds()}
+			}
+			defer func() {
+				for _, c := range others {
+					e.cases[c.Index] = nil
+				}
+			}()
+			first := len(x.variables)
 			args, _, _ := x.argumentsOnly(k, params)
 			at, hypotheses := e, []string{}
 			for m, a := range k.Args {
@@ -319,7 +371,7 @@ func (x *accountant) elimination() AccountSection {
 				ht := at.hypothesisType(x.run, a.Recursive, a.At(x.run, params, args), args[m])
 				text := x.typeText(ht)
 				h := x.Variable("h"+k.Args[m].Name, ht)
-				hypotheses = append(hypotheses, "for "+x.last()+" : "+text+", the hypothesis of "+x.variables[len(params)+1+n+m])
+				hypotheses = append(hypotheses, "for "+x.last()+" : "+text+", the hypothesis of "+x.variables[first+m])
 				at = at.assuming(args[m], h)
 			}
 			dims := x.dims(k)
@@ -334,15 +386,6 @@ func (x *accountant) elimination() AccountSection {
 			})
 		})
 		out.Rules = append(out.Rules, rule)
-		// what later boundaries do with this case is written as a function of that name
-		bound := len(k.Args) + len(k.Dims)
-		for _, a := range k.Args {
-			if a.Recursive != nil {
-				bound++
-			}
-		}
-		f := x.Variable(k.Name+"-case", x.caseType(e, k, params, nil, nil, nil))
-		e.cases[n] = valueOfCase{f, bound}
 	}
 	return out
 }
