@@ -130,6 +130,9 @@ func (r *Run) forceChain(first *Lazy) Value {
 			break
 		}
 		r.Forced++
+		if r.Traced() {
+			r.trace.at.Counts.Forced++
+		}
 		v = p.work.Do(r)
 		next, ok := v.(*Lazy)
 		if !ok {

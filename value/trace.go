@@ -21,9 +21,9 @@ import (
 // that was running when it was made. A definition's work is therefore charged
 // to it, below whoever asked for it.
 //
-// Counts are taken as differences when the path changes, so a hook is the
-// entering and leaving of a site and nothing else is counted twice; the counts
-// of all paths add up to the run's exactly. A β-step belongs to the function
+// Steps and memory are taken as differences when the path changes, so a hook is
+// the entering and leaving of a site and nothing else is counted twice; the
+// counts of all paths add up to the run's exactly. A β-step belongs to the function
 // that is called, not to the caller.
 //
 // Paths are kept whole up to MaxPath sites. A longer one, as recursion makes
@@ -131,8 +131,8 @@ type Trace struct {
 	root    Path
 	at      *Path
 	run     *Run
-	base    Counts
-	called  int64 // β-steps that have been given to the function called
+	steps   int64 // of the run, when the path last changed
+	memory  int64
 	paths   int
 	due     atomic.Bool // a sample of time is due
 	sampled time.Time
@@ -187,8 +187,7 @@ func (t *Trace) End() {
 
 func (t *Trace) rebase() {
 	r := t.run
-	t.base = Counts{Steps: r.Steps, Pushed: r.Pushed, Forced: r.Forced, Memory: r.Memory}
-	t.called = r.ByRule[StepApply] + r.ByRule[StepAt]
+	t.steps, t.memory = r.Steps, r.Memory
 }
 
 // settle charges what was done since it was last called to the present path,
@@ -200,14 +199,11 @@ func (t *Trace) settle(calls int64) {
 	if !t.Exact {
 		return
 	}
-	r, c, b := t.run, &t.at.Counts, &t.base
+	r, c := t.run, &t.at.Counts
 	steps := r.Steps - calls
-	c.Steps += steps - b.Steps
-	c.Pushed += r.Pushed - b.Pushed
-	c.Forced += r.Forced - b.Forced
-	c.Memory += r.Memory - b.Memory
-	b.Steps, b.Pushed, b.Forced, b.Memory = steps, r.Pushed, r.Forced, r.Memory
-	t.called = r.ByRule[StepApply] + r.ByRule[StepAt]
+	c.Steps += steps - t.steps
+	c.Memory += r.Memory - t.memory
+	t.steps, t.memory = steps, r.Memory
 }
 
 //go:noinline
@@ -224,53 +220,59 @@ func (r *Run) Traced() bool { return hooks && r.trace != nil }
 // In enters a site and returns where the run was, for Out. It does nothing where
 // the run is there already. Only a run that is traced may call it.
 func (r *Run) In(s *Site) *Path {
-	t := r.trace
-	from := t.at
-	if s == nil || from.Site == s {
-		return from
+	from := r.trace.at
+	if from.Site != s {
+		r.trace.enter(from, s)
 	}
-	t.settle(0)
-	t.step(from, s)
 	return from
 }
 
 // Called is In for the code of a function: the β-step that was taken just
 // before is the function's.
 func (r *Run) Called(s *Site) *Path {
-	t := r.trace
-	from := t.at
-	if s == nil || from.Site == s {
-		return from
+	from := r.trace.at
+	if from.Site != s {
+		r.trace.call(from, s)
 	}
-	if r.ByRule[StepApply]+r.ByRule[StepAt] > t.called {
-		t.settle(1)
-	} else {
-		t.settle(0)
-	}
-	t.step(from, s)
 	return from
 }
 
 // Resume is In for a cell that a rule made while s was running: it does nothing
 // where the run stands in s already, at whatever operation.
 func (r *Run) Resume(s *Site) *Path {
-	t := r.trace
-	from := t.at
-	if s == nil || from.owner == s {
-		return from
+	from := r.trace.at
+	if from.owner != s {
+		r.trace.enter(from, s)
 	}
-	t.settle(0)
-	t.step(from, s)
 	return from
 }
 
 // Out leaves what In, Called or Resume entered.
 func (r *Run) Out(back *Path) {
-	t := r.trace
-	if t.at != back {
-		t.settle(0)
-		t.at = back
+	if t := r.trace; t.at != back {
+		t.leave(back)
 	}
+}
+
+func (t *Trace) enter(from *Path, s *Site) {
+	if s == nil {
+		return
+	}
+	t.settle(0)
+	t.step(from, s)
+}
+
+func (t *Trace) call(from *Path, s *Site) {
+	if s == nil {
+		return
+	}
+	t.settle(min(1, t.run.Steps-t.steps)) // code is called right after its β-step
+	t.step(from, s)
+}
+
+func (t *Trace) leave(back *Path) {
+	t.settle(0)
+	t.at = back
 }
 
 // Operation enters one of the engine's operations, with a region of Go's
@@ -420,6 +422,7 @@ func (w *foldWork) doTraced(run *Run, n *Neutral) Value {
 func (w *substituted) doTraced(run *Run, v Value) Value {
 	back := run.In(SubstitutionSite)
 	run.Pushed++
+	run.trace.at.Counts.Pushed++
 	v = run.push(v, w.s)
 	run.Out(back)
 	return v

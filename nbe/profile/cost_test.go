@@ -1,0 +1,167 @@
+package profile_test
+
+import (
+	"context"
+	"fmt"
+	"os"
+	"os/exec"
+	"path/filepath"
+	"runtime"
+	"slices"
+	"strings"
+	"syscall"
+	"testing"
+
+	"github.com/stretchr/testify/require"
+
+	"example.com/boxwright/nbe"
+	"example.com/boxwright/nbe/profile"
+	"example.com/boxwright/nbe/script"
+)
+
+// What watching costs: nothing when it is off, at most a tenth for exact counts
+// and three in a hundred for time.
+
+const drums = `
+(load "../../examples/library/equivalences.sexp")
+(load "../../examples/library/univalence.sexp")
+(data Turns () (point forth ((n Nat))) (point back ((n Nat))))
+(def wind-on (-> Turns Turns) (lam (z) (elim (x Turns) z ((forth n) (forth (suc n)))
+  ((back n) (elim (y Turns) n (zero (forth 0)) ((suc k h) (back k)))))))
+(def wind-off (-> Turns Turns) (lam (z) (elim (x Turns) z ((back n) (back (suc n)))
+  ((forth n) (elim (y Turns) n (zero (back 0)) ((suc k h) (forth k)))))))
+(def on-off (Pi ((z Turns)) (Path Turns (wind-on (wind-off z)) z))
+  (lam (z) (elim (x (Path Turns (wind-on (wind-off x)) x)) z
+    ((forth n) (elim (m (Path Turns (wind-on (wind-off (forth m))) (forth m))) n (zero (line (i) (forth 0))) ((suc k h) (line (i) (forth (suc k))))))
+    ((back n) (line (i) (back n))))))
+(def off-on (Pi ((z Turns)) (Path Turns (wind-off (wind-on z)) z))
+  (lam (z) (elim (x (Path Turns (wind-off (wind-on x)) x)) z
+    ((forth n) (line (i) (forth n)))
+    ((back n) (elim (m (Path Turns (wind-off (wind-on (back m))) (back m))) n (zero (line (i) (back 0))) ((suc k h) (line (i) (back (suc k)))))))))
+(def winding-on (Equiv Turns Turns) (quasi-inverse Turns Turns wind-on wind-off on-off off-on))
+(def cable (-> Circle (U 0)) (lam (x) (elim (y (U 0)) x (base Turns) ((loop i) (at (ua Turns Turns winding-on) i)))))
+(def after (-> (Path Circle base base) (Path Circle base base) (Path Circle base base))
+  (lam (p q) (line (i) (hcomp Circle (at p i) ((= i 0) (j) base) ((= i 1) (j) (at q j))))))
+(def turns (-> (Path Circle base base) Turns) (lam (p) (transp (i (cable (at p i))) bot (forth 0))))
+(def drum (-> Nat (Path Circle base base))
+  (lam (n) (elim (x (Path Circle base base)) n (zero (line (i) base)) ((suc k h) (after h (line (i) (loop i)))))))
+(def N (U 1) (Pi ((A (U 0))) (-> (-> A A) A A)))
+(def two N (lam (A f x) (f (f x))))
+(def times (-> N N N) (lam (m n A f) (m A (n A f))))
+(def square (-> N N) (lam (m) (times m m)))
+(def ack (-> Nat Nat Nat) (lam (m) (elim (x (-> Nat Nat)) m (zero (lam (n) (suc n)))
+  ((suc k h) (lam (n) (elim (y Nat) n (zero (h 1)) ((suc l g) (h g))))))))
+`
+
+func drumEngine(tb testing.TB) *nbe.Engine {
+	e, err := nbe.New()
+	require.NoError(tb, err)
+	s := script.Session{Engine: e, Report: func(r script.Result) { require.NoError(tb, r.Err) }}
+	require.NoError(tb, s.Source(context.Background(), []byte(drums), "drums.sexp"))
+	return e
+}
+
+var works = []struct{ name, text, small string }{
+	{"winding", "(turns (drum 2000))", "(turns (drum 30))"},
+	{"church", "(square (square (square (square two))) Nat (lam (x) (suc x)) 0)", "(square (square two) Nat (lam (x) (suc x)) 0)"},
+	{"ackermann", "(ack 2 400)", "(ack 2 9)"},
+}
+
+// processor is the processor time that the process has used, in nanoseconds. It
+// does not depend on what else the machine does, as the time of day would.
+func processor() int64 {
+	var u syscall.Rusage
+	if err := syscall.Getrusage(syscall.RUSAGE_SELF, &u); err != nil {
+		return 0
+	}
+	return u.Utime.Nano() + u.Stime.Nano()
+}
+
+// BenchmarkWatching gives the processor time with exact counts, and with time
+// alone, over the time without, as medians of rounds that alternate.
+func BenchmarkWatching(b *testing.B) {
+	e := drumEngine(b)
+	for _, w := range works {
+		b.Run(w.name, func(b *testing.B) {
+			var p profile.Profile
+			modes := [][]nbe.CallOption{nil, {nbe.Profile(&p)}, {nbe.ProfileTime(&p)}}
+			var times [3][]float64
+			rounds := 0
+			for b.Loop() {
+				rounds++
+				for k := range modes {
+					m := (k + rounds) % len(modes)
+					total := int64(0)
+					for range 2 {
+						t, err := e.Scope().Infer(context.Background(), written(b, e, w.text))
+						require.NoError(b, err)
+						runtime.GC()
+						before := processor()
+						_, _, err = normalTerm(b, t, context.Background(), modes[m]...)
+						total += processor() - before
+						require.NoError(b, err)
+					}
+					times[m] = append(times[m], float64(total))
+				}
+			}
+			for m := range times {
+				slices.Sort(times[m])
+			}
+			median := func(ts []float64) float64 { return ts[len(ts)/2] }
+			b.ReportMetric(median(times[1])/median(times[0]), "exact/off")
+			b.ReportMetric(median(times[2])/median(times[0]), "time/off")
+			b.ReportMetric(0, "ns/op")
+		})
+	}
+}
+
+// Counters are the same with and without a profile.
+func TestWatchingChangesNothing(t *testing.T) {
+	e := drumEngine(t)
+	for _, w := range works {
+		_, _, err := normal(t, e, w.small) // what is shared is forced now
+		require.NoError(t, err)
+		text, off, err := normal(t, e, w.small)
+		require.NoError(t, err)
+		for _, option := range []nbe.CallOption{nbe.Profile(new(profile.Profile)), nbe.ProfileTime(new(profile.Profile)), nbe.Labels(), nbe.Regions(),
+			nbe.Following(&nbe.Follow{Results: true, Event: func(e *nbe.Event) { _, _ = e.Before(), e.After() }})} {
+			again, on, err := normal(t, e, w.small, option)
+			require.NoError(t, err)
+			require.Equal(t, text, again)
+			off.Deepest, on.Deepest = 0, 0 // a watched call begins a few levels deeper
+			require.Equal(t, off, on, "%s", w.name)
+		}
+	}
+}
+
+// TestCountersAndAllocations prints what TestOffIsFree compares.
+func TestCountersAndAllocations(t *testing.T) {
+	e := drumEngine(t)
+	for _, w := range works {
+		_, _, err := normal(t, e, w.small)
+		require.NoError(t, err)
+		_, stats, err := normal(t, e, w.small)
+		require.NoError(t, err)
+		x := testing.AllocsPerRun(5, func() { _, _, _ = normal(t, e, w.small) })
+		fmt.Printf("MEASURED %s %v allocations %v\n", w.name, x, stats)
+	}
+}
+
+// A call that nobody watches allocates and counts what it does in a build
+// without any hooks.
+func TestOffIsFree(t *testing.T) {
+	if testing.Short() {
+		t.Skip("builds the tests twice")
+	}
+	measured := func(tags string) string {
+		dir, err := filepath.Abs(".")
+		require.NoError(t, err)
+		c := exec.Command("go", "test", "-count=1", "-run", "^TestCountersAndAllocations$", "-v", "-tags", tags, ".")
+		c.Dir, c.Env = dir, append(os.Environ(), "GOFLAGS=")
+		out, err := c.CombinedOutput()
+		require.NoError(t, err, "%s", out)
+		text := string(out)
+		return text[strings.Index(text, "MEASURED"):strings.LastIndex(text, "--- PASS")]
+	}
+	require.Equal(t, measured("boxwright_nohooks"), measured(""))
+}
