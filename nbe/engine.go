@@ -62,7 +62,6 @@ type definition struct {
 	hole     bool
 	code     *eval.Abstraction
 	place    term.Place
-	arity    int
 	site     value.Site
 }
 

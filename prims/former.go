@@ -71,10 +71,9 @@ func hint(names ...string) string {
 	return "_"
 }
 
-// plain is an argument slot that holds a term; silent one that is not written.
+// slots of arguments: a term, the rest of the terms, a dimension
 var (
 	plainSlot  = term.CoreSlot{}
-	silentSlot = term.CoreSlot{Silent: true}
 	restSlot   = term.CoreSlot{Slot: term.Slot{Rest: true}}
 	dimSlot    = term.CoreSlot{Slot: term.Slot{Sort: term.DimensionSort}}
 )
