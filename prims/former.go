@@ -73,7 +73,7 @@ func hint(names ...string) string {
 
 // slots of arguments: a term, the rest of the terms, a dimension
 var (
-	plainSlot  = term.CoreSlot{}
-	restSlot   = term.CoreSlot{Slot: term.Slot{Rest: true}}
-	dimSlot    = term.CoreSlot{Slot: term.Slot{Sort: term.DimensionSort}}
+	plainSlot = term.CoreSlot{}
+	restSlot  = term.CoreSlot{Slot: term.Slot{Rest: true}}
+	dimSlot   = term.CoreSlot{Slot: term.Slot{Sort: term.DimensionSort}}
 )
