@@ -28,6 +28,7 @@ func Declare(c value.Checker, w *term.Declaration) *Data {
 	}
 	d := declare(c, w, formal, 0)
 	if d.raised > d.Level {
+		c.Declare(w.Name, nil)
 		for _, k := range w.Constructors {
 			c.Declare(k.Name, nil)
 		}
@@ -41,7 +42,6 @@ func Declare(c value.Checker, w *term.Declaration) *Data {
 func declare(c value.Checker, w *term.Declaration, formal bool, level int) *Data {
 	d := &Data{Name: w.Name, Formal: formal, Level: level, label: value.NewLabel(w.Name, w.Place)}
 	d.eliminator = term.Reference{Name: d.Name, Index: -1, Target: d}
-	c.Declare(d.Name, d)
 	c.Binders(func(b value.CheckerBinding) value.Core {
 		x := &declaring{c: c, run: c.Run(), d: d}
 		for _, p := range w.Params {
@@ -49,6 +49,7 @@ func declare(c value.Checker, w *term.Declaration, formal bool, level int) *Data
 			d.Params = append(d.Params, x.argument(p.Name, core)) // in the scope that core speaks of
 			x.params = append(x.params, b.Variable(term.Binder{Name: p.Name, Place: p.Place}, c.Value(core)))
 		}
+		c.Declare(d.Name, d) // the types of parameters may not mention it
 		for k := range w.Constructors {
 			con := x.constructor(&w.Constructors[k])
 			con.Index = len(d.Constructors)

@@ -111,6 +111,8 @@ var refusals = []refused{
 	{"an argument of no type", term.IllTyped, "(data D () (point c ((x @0))))", []string{"no type"}},
 	{"a parameter of no type", term.IllTyped, "(data D ((x @zero)) (point c ()))", []string{"no type"}},
 	{"an element of a universe that it is too large for", term.IllTyped, "(data D () (point c ((A (U 0)))) (path p () (i) ((= i 0) (c @D)) ((= i 1) (c Nat))))", []string{"expected (U 0), found (U 1)", "on the face (= i 0)"}},
+	{"itself in the type of a parameter", term.NotFound, "(data D ((x @D)) (point c ()))", []string{"found D"}},
+	{"itself at a parameter in the type of another", term.NotFound, "(data D ((A (U 0)) (x (@D A))) (point c ((B (U 0)))))", []string{"found D"}},
 	// boundaries
 	{"an element of another type", term.IllTyped, "(data D () (point c ()) (path p () (i) ((= i 0) @true)))", []string{"expected D, found an element of Bool", "on the face (= i 0)"}},
 	{"a constructor of another type", term.IllTyped, "(data D ((A (U 0))) (point c ()) (path p () (i) ((= i 0) @nil)))", []string{"does not make an element of this type"}},
