@@ -59,7 +59,7 @@ var mutations = []mutation{
 	{"pairs: the second part is not over the filler", "prims/sigma.go",
 		"LaterComp(run, i, t.Second.Open(run, ⟦a⟧), p2", "p1", "HcompSigma"},
 	{"pairs: the first part loses its walls", "prims/sigma.go",
-		"&Pair{LaterHcomp(run, t.First, p1, ⟦firsts⟧)", "firsts[:0]", "HcompSigma"},
+		"NewPair(LaterHcomp(run, t.First, p1, ⟦firsts⟧)", "firsts[:0]", "HcompSigma"},
 	{"pairs: the second part loses its walls", "prims/sigma.go",
 		"Open(run, a), p2, ⟦seconds⟧)", "seconds[:0]", "HcompSigma"},
 	{"pairs: the second part's transport forgets its face", "prims/sigma.go",
@@ -67,7 +67,7 @@ var mutations = []mutation{
 	{"pairs: the second part's transport is not over the filler", "prims/sigma.go",
 		"LaterTransp(run, i, t.Second.Open(run, ⟦a⟧)", "p1", "TranspSigma"},
 	{"pairs: the first part's transport forgets its face", "prims/sigma.go",
-		"&Pair{LaterTransp(run, i, t.First, ⟦phi⟧, p1)", "interval.Bot()", "TranspSigma"},
+		"NewPair(LaterTransp(run, i, t.First, ⟦phi⟧, p1)", "interval.Bot()", "TranspSigma"},
 	// paths
 	{"paths: no wall at 0", "prims/path.go",
 		"us = us.Constant(run, ⟦interval.Eq0(j)⟧, t.A0)", "interval.Bot()", "HcompPath"},

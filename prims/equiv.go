@@ -66,10 +66,10 @@ var contractibleFiber = &value.Rule{Name: "y", Apply: func(run *value.Run, c *va
 //	                                                                    [(k=0) ↦ i. b l i] [(k=1) ↦ i. w l (~i)]))
 func LineEquiv(run *value.Run, i value.Name, l value.Value) value.Value {
 	lines := []value.Value{l}
-	return &Pair{
+	return NewPair(
 		&Lam{value.NewCaptured(run, value.Captured{Rule: alongLine, I: i, Line: lines})},
 		&Lam{value.NewCaptured(run, value.Captured{Rule: lineFibers, I: i, Line: lines})},
-	}
+	)
 }
 
 var alongLine = &value.Rule{Name: "x", Apply: func(run *value.Run, c *value.Captured, x value.Value) value.Value {
@@ -81,8 +81,8 @@ var lineFibers = &value.Rule{Name: "y", Apply: func(run *value.Run, c *value.Cap
 	l := run.Fresh(line.Support() | y.Support() | interval.Single(i))
 	v0 := Backward(run, i, line, interval.Bot(), y)
 	end := lineFiberPath(run, i, line, y, v0, l)
-	center := &Pair{v0, over(l, run.At(end, i, interval.One()))}
-	return &Pair{center, &Lam{value.NewCaptured(run, value.Captured{Rule: lineContraction, Values: []value.Value{y}, I: i, Line: c.Line})}}
+	center := NewPair(v0, over(l, run.At(end, i, interval.One())))
+	return NewPair(center, &Lam{value.NewCaptured(run, value.Captured{Rule: lineContraction, Values: []value.Value{y}, I: i, Line: c.Line})})
 }}
 
 // lineFiberPath is b l i, at l and i.
@@ -114,5 +114,5 @@ var lineContraction = &value.Rule{Name: "p", Apply: func(run *value.Run, c *valu
 		Line(run, interval.Eq0(k), i, lineFiberPath(run, i, line, y, v0, l)).
 		Line(run, interval.Eq1(k), i, run.Substitute(run.Substitute(w, interval.Assign(k, atL)), flip))
 	square := LaterComp(run, i, line, run.At(alpha, k, atK.Min(atL)), walls)
-	return over(k, &Pair{alpha, over(l, square)})
+	return over(k, NewPair(alpha, over(l, square)))
 }}

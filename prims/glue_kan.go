@@ -102,7 +102,7 @@ func extendFiber(run *value.Run, p GluePart, a, a1 value.Value, done []GlueValue
 			cube := face.Cube(k)
 			t := run.Restrict(run.Substitute(d.T, cut), cube)
 			here, center := run.Restrict(a1, cube), run.Restrict(c, cube)
-			point := &Pair{t, &PathLam{value.Constant{V: here}}}
+			point := NewPair(t, &PathLam{value.Constant{V: here}})
 			i := run.Fresh(center.Support() | point.Support() | cube.Support())
 			walls = append(walls, value.Wall{Cube: cube, I: i, Body: run.Later(center.Support()|point.Support()|interval.Single(i), func(run *value.Run) value.Value {
 				return At(run, Apply(run, Second(run, center), point), interval.Var(i))

@@ -18,8 +18,15 @@ type Sigma struct {
 	Second value.Closure
 }
 
-// Pair is a pair as a value.
-type Pair struct{ A, B value.Value }
+// Pair is a pair as a value. Its support is found once, from its parts': pairs of
+// pairs that share are large as trees.
+type Pair struct {
+	A, B    value.Value
+	support value.Support
+}
+
+// NewPair is the pair of a and b.
+func NewPair(a, b value.Value) *Pair { return &Pair{a, b, a.Support() | b.Support()} }
 
 // Support is the union of the parts'.
 func (t *Sigma) Support() value.Support { return t.First.Support() | t.Second.Support() }
@@ -30,11 +37,11 @@ func (t *Sigma) Substitute(run *value.Run, s *value.Subst) value.Value {
 }
 
 // Support is the union of the parts'.
-func (p *Pair) Support() value.Support { return p.A.Support() | p.B.Support() }
+func (p *Pair) Support() value.Support { return p.support }
 
 // Substitute delays s over the parts.
 func (p *Pair) Substitute(run *value.Run, s *value.Subst) value.Value {
-	return &Pair{run.Substitute(p.A, s), run.Substitute(p.B, s)}
+	return NewPair(run.Substitute(p.A, s), run.Substitute(p.B, s))
 }
 
 // Hcomp composes the second parts over the filler of the first, also where the
@@ -45,14 +52,14 @@ func (t *Sigma) Hcomp(run *value.Run, p value.Value, walls value.System) value.V
 	p1, p2 := LaterFirst(run, p), LaterSecond(run, p)
 	i := run.Fresh(t.Support() | p.Support() | walls.Support())
 	a := Hfill(run, i, t.First, p1, firsts)
-	return &Pair{LaterHcomp(run, t.First, p1, firsts), LaterComp(run, i, t.Second.Open(run, a), p2, seconds)}
+	return NewPair(LaterHcomp(run, t.First, p1, firsts), LaterComp(run, i, t.Second.Open(run, a), p2, seconds))
 }
 
 // Transp transports the second part over the filler of the first.
 func (t *Sigma) Transp(run *value.Run, i value.Name, phi interval.Face, p value.Value) value.Value {
 	p1, p2 := LaterFirst(run, p), LaterSecond(run, p)
 	a := Tfill(run, i, t.First, phi, p1)
-	return &Pair{LaterTransp(run, i, t.First, phi, p1), LaterTransp(run, i, t.Second.Open(run, a), phi, p2)}
+	return NewPair(LaterTransp(run, i, t.First, phi, p1), LaterTransp(run, i, t.Second.Open(run, a), phi, p2))
 }
 
 // First is p.1, on demand.
@@ -192,9 +199,9 @@ func (pairOp) Canonical([]eval.Arg) bool { return true }
 func (pairOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 	a := args[0].Delay(run, f)
 	if args[0].Shares(&args[1]) {
-		return &Pair{a, a}
+		return NewPair(a, a)
 	}
-	return &Pair{a, args[1].Delay(run, f)}
+	return NewPair(a, args[1].Delay(run, f))
 }
 
 type projectionOp struct{ frame *projection }

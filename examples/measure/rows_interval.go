@@ -71,7 +71,7 @@ func intervalRow(name string, kind gauge.Kind, target float64, conjunctions int,
 
 // unrelated is a value without the dimension that is substituted.
 func unrelated() value.Value {
-	return &prims.Pair{A: value.DimensionName(1), B: value.DimensionName(2)}
+	return prims.NewPair(value.DimensionName(1), value.DimensionName(2))
 }
 
 func endpointCase() *gauge.Case {

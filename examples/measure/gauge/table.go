@@ -109,8 +109,8 @@ func (t *Table) writeRow(w io.Writer, r *Result) {
 	if r.Error != "" {
 		met, note = "failed", ": "+r.Error
 	}
-	fmt.Fprintf(w, "%d %s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t  %s%s\n", p.Size, r.Unit, nanos(p.CPU), nanos(p.Wall), count(p.Allocs), bytes(p.Bytes),
-		nanos(p.BaseCPU), count(p.BaseAllocs), figure(p.Ratio()), bytes(float64(p.Peak)), bytes(float64(p.Left)), r.found(), r.target(), met, r.Name, note)
+	fmt.Fprintf(w, "%d %s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t  %s%s\n", p.Size, r.Unit, nanos(p.CPU), nanos(p.Wall), count(p.Allocs), memory(p.Bytes),
+		nanos(p.BaseCPU), count(p.BaseAllocs), figure(p.Ratio()), memory(float64(p.Peak)), memory(float64(p.Left)), r.found(), r.target(), met, r.Name, note)
 }
 
 func (r *Result) found() string { return r.say(r.Value) }
@@ -130,7 +130,7 @@ func (r *Result) say(v float64) string {
 	case Allocations:
 		return fmt.Sprintf("%.3g allocs", v)
 	case Heap:
-		return bytes(v)
+		return memory(v)
 	}
 	return "×" + figure(v)
 }
@@ -155,7 +155,7 @@ func nanos(v float64) string {
 	return fmt.Sprintf("%.3g ns", v)
 }
 
-func bytes(v float64) string {
+func memory(v float64) string {
 	sign := ""
 	if v < 0 {
 		sign, v = "-", -v
