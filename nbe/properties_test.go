@@ -259,6 +259,60 @@ func TestSubstitutingDimensionsCommutes(t *testing.T) {
 	})
 }
 
+// A term under the assumption of a face is the term with the face put into its
+// value.
+func TestAssumingAFaceSubstitutes(t *testing.T) {
+	property(t, 2, func(t *rapid.T, x sample) {
+		p := proverOf(t, fast, x)
+		ctx := context.Background()
+		source := draw(t)
+		k, end := source.Intn(3), uint64(source.Intn(2))
+		d := interval.Zero()
+		if end == 1 {
+			d = interval.One()
+		}
+		a := p.check(x.a, x.ty)
+		p.normal(a)
+		late, err := p.s.SubstituteValue(ctx, a, interval.Assign(interval.Name(k), d), p.call...)
+		p.no(err, "substituting")
+		want := p.normal(late)
+		s, err := p.s.Assume(ctx, term.Eq(term.Name(dimensionNames[k]), end), p.call...)
+		p.no(err, "assuming")
+		p.s = s
+		p.same(want, p.normal(p.check(x.a, x.ty)), fmt.Sprintf("on the face %s = %d", dimensionNames[k], end))
+	})
+}
+
+// What is written in other words for the same is equal: through a function that
+// gives its argument back, a wall on top, a transport on top, a path at an end.
+func TestDetoursAreEqual(t *testing.T) {
+	property(t, 3, func(t *rapid.T, x sample) {
+		p := proverOf(t, fast, x)
+		other := detour(draw(t), x.a, x.ty)
+		a, b := p.check(x.a, x.ty), p.check(other, x.ty)
+		require.True(t, p.equal(a, b) && p.equal(b, a), "%s\nand %s", x.subject, other)
+		p.same(p.normal(a), p.normal(b), "by a detour")
+	})
+}
+
+func detour(s generate.Source, a, ty *term.Written) *term.Written {
+	switch s.Intn(7) {
+	case 0:
+		return term.Apply(term.Ann(term.Lam(term.Name("given"), "given"), term.Arrow(ty, ty)), a)
+	case 1:
+		return term.Hcomp(ty, a, term.Wall(term.Top(), "top-line", a))
+	case 2:
+		return term.Transp("top-line", ty, term.Top(), a)
+	case 3:
+		return term.At(term.Ann(term.Line(a, "flat"), term.Path(ty, a, a)), term.Name("k"))
+	case 4:
+		return term.Snd(term.Ann(term.Pair(term.UnitElement(), a), term.Product(term.UnitType(), ty)))
+	case 5:
+		return term.Hfill(ty, a, term.Numeral(0))
+	}
+	return term.Let("held", ty, a, term.Name("held"))
+}
+
 func someDimension(s generate.Source) (*term.Written, interval.Dim) {
 	k, l := s.Intn(3), s.Intn(3)
 	x, y := interval.Var(interval.Name(k)), interval.Var(interval.Name(l))

@@ -102,7 +102,7 @@ func (g *Generator) Dimension() *term.Written {
 // Type is a type; size bounds its depth.
 func (g *Generator) Type(size int) *Type {
 	var base = []Kind{Nat, Circle, Variable, Line, NatLine, Bool, Unit, Tally, Push}
-	var more = []Kind{Pi, Sigma, Path, PiI, Family, OverNat, OverRing, Sum, List, Susp, Crate, Path, Sigma, Pi}
+	var more = []Kind{Glued, Pi, Sigma, Path, PiI, Family, OverNat, OverRing, Sum, List, Susp, Crate, Path, Sigma, Pi}
 	if size <= 0 || g.maybe(4) {
 		return g.Of(base[g.pick(len(base))], size)
 	}
@@ -115,6 +115,9 @@ func (g *Generator) Of(kind Kind, size int) *Type {
 	switch t.Kind {
 	case Line, NatLine, Push:
 		t.Args = []*term.Written{g.Dimension()}
+	case Glued:
+		face, _ := g.face()
+		t.Args = []*term.Written{face}
 	case Family:
 		t.Args = []*term.Written{g.Term(&Type{Kind: Variable}, size-1)}
 	case OverNat:
@@ -222,8 +225,16 @@ func (g *Generator) leaf(t *Type) *term.Written {
 		return call("fN", t.Args[0])
 	case OverRing:
 		return g.overRing(t)
+	case Glued:
+		return g.glued(t, g.leaf(&Type{Kind: Variable}))
 	}
 	return g.intro(t, 0)
+}
+
+// glued brings an element of A into a composite of types that A is the base of.
+func (g *Generator) glued(t *Type, a *term.Written) *term.Written {
+	i, j := g.fresh("i"), g.fresh("i")
+	return term.Transp(j, term.Hfill(term.Universe(0), term.Name("A"), term.Name(j), t.typeWall(i)), term.Bot(), a)
 }
 
 func (g *Generator) overRing(t *Type) *term.Written {
@@ -281,6 +292,8 @@ func (g *Generator) intro(t *Type, size int) (out *term.Written) {
 		return term.Line(Replace(t.Args[0], one(t.Name, term.Name(i))), i)
 	case Variable:
 		return term.At(term.Name("pA"), g.Dimension())
+	case Glued:
+		return g.glued(t, g.Term(&Type{Kind: Variable}, size))
 	case Bool, Unit, Line, NatLine, Family, OverNat, OverRing:
 		return g.leaf(t)
 	}

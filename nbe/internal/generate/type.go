@@ -35,6 +35,7 @@ const (
 	List     Kind = "List"
 	Susp     Kind = "Susp"  // a path constructor that commutes with transport
 	Push     Kind = "Push"  // one that does not
+	Glued    Kind = "Glued" // a composite of types
 	Crate    Kind = "Crate" // a constructor with a dependent argument
 	Pi       Kind = "Pi"
 	PiI      Kind = "PiI"
@@ -43,7 +44,7 @@ const (
 )
 
 // Kinds are all of them.
-var Kinds = []Kind{Nat, Bool, Unit, Circle, Tally, Variable, Line, Family, NatLine, OverNat, OverRing, Sum, List, Susp, Push, Crate, Pi, PiI, Sigma, Path}
+var Kinds = []Kind{Nat, Bool, Unit, Circle, Tally, Variable, Line, Family, NatLine, OverNat, OverRing, Glued, Sum, List, Susp, Push, Crate, Pi, PiI, Sigma, Path}
 
 // Given is the script of what the generated terms mention.
 const Given = `
@@ -54,6 +55,7 @@ const Given = `
 	(data Crate ((A (U 0)) (B (-> A (U 0)))) (point crate ((a A) (b (B a)))))
 	(assume A (U 0)) (assume a0 A) (assume a1 A) (assume pA (Path A a0 a1)) (assume sA (Path (Path A a0 a1) pA pA))
 	(assume LA (-> I (U 0))) (assume la (Pi ((i I)) (LA i))) (assume LC (-> I (U 0))) (assume LF (Pi ((i I)) (-> (LA i) (LC i))))
+	(assume A2 (U 0)) (assume PU (Path (U 0) A A2))
 	(assume B (-> A (U 0))) (assume b (Pi ((x A)) (B x)))
 	(assume E (Path (U 0) Nat Unit)) (assume xE (Pi ((i I)) (at E i)))
 	(assume FN (-> Nat (U 0))) (assume fN (Pi ((n Nat)) (FN n))) (assume fz (FN 0)) (assume fs (Pi ((n Nat)) (-> (FN n) (FN (suc n)))))
@@ -82,6 +84,8 @@ func (t *Type) Written() *term.Written {
 		return term.At(name, t.Args[0])
 	case Unit:
 		return term.UnitType()
+	case Glued:
+		return term.Hcomp(term.Universe(0), term.Name("A"), t.typeWall("i"))
 	case Sum:
 		return term.Apply(name, t.A.Written(), t.B.Written())
 	case List, Susp:
@@ -101,6 +105,11 @@ func (t *Type) Written() *term.Written {
 		return term.PathOver(t.Name, t.A.Written(), t.end(0), t.end(1))
 	}
 	return name
+}
+
+// typeWall is the wall of a composite of types.
+func (t *Type) typeWall(i string) term.Row {
+	return term.Wall(t.Args[0], i, term.At(term.Name("PU"), term.Name(i)))
 }
 
 func (t *Type) end(r uint64) *term.Written {
