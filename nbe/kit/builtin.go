@@ -176,7 +176,7 @@ func unit() Sample {
 }
 
 func types() Sample {
-	s := Sample{Type: universe}
+	s := Sample{Type: universe, Shallow: true}
 	s.Element = func(g *Gen) *term.Written { return Base(g).Type }
 	return s
 }
@@ -297,7 +297,7 @@ func gluing(g *Gen) Sample {
 	t := Base(g).Type
 	e := g.Variable("e", fill("(Equiv T A)", "T", t, "A", a), nil)
 	r := g.Dimension()
-	s := Sample{Type: term.Glue(a, term.GlueType(term.Eq(r, 0), t, e))}
+	s := Sample{Type: term.Glue(a, term.GlueType(term.Eq(r, 0), t, e)), Shallow: true}
 	s.Element = func(g *Gen) *term.Written {
 		if g.Choose(2) == 1 {
 			return fill("(hoist A T E R X)", "A", a, "T", t, "E", e, "R", r, "X", g.Variable("t", t, nil))

@@ -25,7 +25,7 @@ type Failure struct {
 	Err         error
 	Seed        uint64 // of the trial
 	Drawn       int    // how many choices the trial drew, and how many were left of them
-	Left1       int
+	Kept        int
 	build       build
 }
 
@@ -96,7 +96,7 @@ func (f *Failure) Report() string {
 		b.WriteString(f.Drawing())
 	}
 	if f.Former != "" {
-		line("again with kit.Seed(%d), kit.Trials(1); %d choices drawn, %d left after shrinking; %s", f.Seed, f.Drawn, f.Left1, f.build.name)
+		line("again with kit.Seed(%d), kit.Trials(1); %d choices drawn, %d left after shrinking; %s", f.Seed, f.Drawn, f.Kept, f.build.name)
 	}
 	if s := f.Script(); s != "" {
 		line("as a script\n%s", strings.TrimRight(indented(s, "  "), "\n "))

@@ -183,6 +183,9 @@ type Sample struct {
 	Element func(g *Gen) *term.Written
 	// Eliminations, if not nil, are eliminations of elements of Type.
 	Eliminations func(g *Gen) []Elimination
+	// Shallow keeps composites from being drawn as elements, for types whose
+	// composites of composites are large.
+	Shallow bool
 	// Expand, if not nil, is the η-expansion of an element.
 	Expand func(x *term.Written) *term.Written
 }
@@ -190,10 +193,28 @@ type Sample struct {
 // Variable is an element of s that is a new variable.
 func (s Sample) Variable(g *Gen) *term.Written { return g.Variable("x", s.Type, s.Element) }
 
-// Any is an element of s: a variable, or what Element draws.
+// Any is an element of s: what Element draws, a variable, or a composite.
 func (s Sample) Any(g *Gen) *term.Written {
-	if g.Choose(3) == 1 || s.Element == nil {
+	if s.Element == nil {
 		return s.Variable(g)
 	}
+	switch g.Choose(7) {
+	case 1, 2:
+		return s.Variable(g)
+	case 3:
+		if !s.Shallow && !g.Small() && len(g.dims) > 0 {
+			return s.Composed(g.Deeper())
+		}
+	}
 	return s.Element(g)
+}
+
+// Composed is an element of s that is a composite with one wall, on the face
+// where a dimension in scope is 0.
+func (s Sample) Composed(g *Gen) *term.Written {
+	d, z := g.dims[g.Choose(len(g.dims))], g.Name("z")
+	u := s.Element(g.With(z))
+	wall := Replace(u, map[string]*term.Written{d: zero})
+	return term.Form("hcomp", term.Plain(s.Type), term.Plain(Replace(u, map[string]*term.Written{z: zero})),
+		term.RowsPart(term.Row{term.Plain(term.Eq(term.Name(d), 0)), term.Under(wall, z)}))
 }

@@ -57,7 +57,7 @@ func Laws() []Law {
 		{LawSystems, "the order of walls, and walls that others imply, make no difference", (*trial).systems},
 		{LawEta, "an element equals its η-expansion", (*trial).eta},
 		{LawOrder, "evaluation order, sharing and the choice of names make no difference", (*trial).order},
-		{LawAgreement, "two elements are equal by comparison exactly when their normal forms are the same", func(*trial) *Failure { return nil }},
+		{LawAgreement, "two elements are equal by comparison exactly when their normal forms are the same", (*trial).agreement},
 	}
 }
 
@@ -353,6 +353,37 @@ func (t *trial) dimensions() *Failure {
 				f.Kind = sub.Kind
 				return f
 			}
+		}
+	}
+	return nil
+}
+
+// agreement: two elements that need not be equal are so by comparison exactly
+// when their normal forms are the same.
+func (t *trial) agreement() *Failure {
+	at := t.x.TypeAt(oneEnd)
+	others := []*term.Written{Replace(t.x.Base, map[string]*term.Written{t.x.Dimensions[0]: zero})}
+	if t.x.Op == Hcomp {
+		others = append(others, t.x.Base)
+	}
+	if len(t.x.Walls) > 0 {
+		y := *t.x
+		y.Walls = y.Walls[1:]
+		others = append(others, y.Term())
+		y.Walls = nil
+		others = append(others, y.Term())
+	}
+	x, err := t.value(t.x.Term())
+	if err != nil {
+		return t.failure(LawAgreement, "", err)
+	}
+	for _, w := range others {
+		y, err := t.w.check(w, at)
+		if err != nil {
+			continue // of another type: the line varies
+		}
+		if f := t.agree(LawAgreement, t.w, x.t, x.v, y.v, "the "+t.x.Op.String()+", beside another element", "", ""); f != nil && f.Made != "" {
+			return f
 		}
 	}
 	return nil

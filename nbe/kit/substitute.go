@@ -216,3 +216,14 @@ func substitutions(dims []string, fresh string) []Substitution {
 	}
 	return out
 }
+
+// Mentions reports whether one of the names occurs in w.
+func Mentions(w *term.Written, names ...string) bool {
+	in := namesIn(w)
+	for _, n := range names {
+		if in[n] {
+			return true
+		}
+	}
+	return false
+}

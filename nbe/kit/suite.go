@@ -91,7 +91,7 @@ func FindFailure(f Former, options ...Option) (*Failure, error) {
 		if again == nil || again.Law != failure.Law {
 			again = failure
 		}
-		again.Former, again.Seed, again.Drawn, again.Left1 = f.Name, seed, len(drawn), len(small)
+		again.Former, again.Seed, again.Drawn, again.Kept = f.Name, seed, len(drawn), len(small)
 		return again, nil
 	}
 	return nil, nil

@@ -35,7 +35,7 @@ var (
 )
 
 // limits bound every call of the suite: a wrong rule may well not end.
-var limits = nbe.Limits{Steps: 3_000_000, Depth: 50_000, Memory: 1 << 30, Output: 300_000}
+var limits = nbe.Limits{Steps: 100_000, Depth: 20_000, Memory: 64 << 20, Output: 20_000}
 
 // world is a scope with its names.
 type world struct {
