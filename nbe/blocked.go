@@ -3,17 +3,22 @@ package nbe
 import (
 	"context"
 	"fmt"
+	"path/filepath"
 	"strings"
 
 	"example.com/boxwright/nbe/eval"
 	"example.com/boxwright/nbe/term"
+	"example.com/boxwright/quote"
+	"example.com/boxwright/value"
 	"example.com/boxwright/value/interval"
 )
 
 // Why a term does not compute further. The account is read off the normal
 // form: each stuck part has at its head a variable, an assumption, a hole, or
 // an operation of the theory that waits itself, and above it the eliminations
-// that wait for it.
+// that wait for it. In which definition an operation stands, the normal form
+// does not say; the run that makes it keeps that (value/stuck.go), with nothing
+// taken over from runs that did not.
 
 // Blockage is the account of what keeps a term from computing further: one
 // entry for each stuck part, outermost first. A term whose normal form is built
@@ -28,10 +33,30 @@ type Block struct {
 	Part    *term.Written // the stuck part itself
 	Head    HeadKind      // what stands at its head
 	Name    string        // the head's name, where it has one
-	Waiting []string      // the operations that wait for the head, innermost first
+	Waiting []Waiting     // the operations that wait for the head, innermost first
+	Stands  Waiting       // of a composite or a transport at the head: where that stands
 	Face    string        // the face the part stands under
 	Release []string      // what would let it go on: faces, or an element for the head
 	Walls   []string      // of a composite that does not push: which wall does not show the constructor, under which face
+}
+
+// Waiting is an operation that waits, and where it stands.
+type Waiting struct {
+	Operation  string     // "an elimination of Nat", "an application"
+	Definition string     // the definition in which it is written; empty for the term itself
+	Place      term.Place // of that definition, or of the term
+}
+
+// String is the operation with the definition it stands in and that one's place.
+func (w Waiting) String() string {
+	if w.Definition == "" {
+		return w.Operation
+	}
+	text := w.Operation + " in " + w.Definition
+	if w.Place.Line > 0 {
+		text += fmt.Sprintf(" (%s:%d)", filepath.Base(w.Place.File), w.Place.Line)
+	}
+	return text
 }
 
 // HeadKind says what stands at the head of a stuck part.
@@ -67,9 +92,19 @@ func (b *Blockage) String() string {
 		if p.Name != "" {
 			line += " " + p.Name
 		}
-		if len(p.Waiting) > 0 {
-			line += " keeps " + strings.Join(p.Waiting, ", ") + " waiting"
-		} else {
+		if p.Stands.Definition != "" {
+			line += p.Stands.String()
+		}
+		var waiting []string
+		for _, w := range p.Waiting {
+			waiting = append(waiting, w.String())
+		}
+		switch {
+		case len(waiting) > 0:
+			line += " keeps " + strings.Join(waiting, ", ") + " waiting"
+		case p.Head == HeadComposite || p.Head == HeadTransport || p.Head == HeadOther:
+			line += " waits itself"
+		default:
 			line += " has no value"
 		}
 		for _, w := range p.Walls {
@@ -91,13 +126,15 @@ func (b *Blockage) String() string {
 
 // Blocked tells what keeps t from computing further. The options are those of Normal.
 func (s *Scope) Blocked(ctx context.Context, t *Term, options ...CallOption) (*Blockage, error) {
-	forms, err := s.Normal(ctx, t, options...)
+	o := gather(options)
+	o.stuck = true
+	forms, err := s.forms(ctx, t, o, func(q *quote.Reader, t, v value.Value) term.Core { return q.Term(t, v) })
 	if err != nil {
 		return nil, err
 	}
 	b := &Blockage{}
 	for k := range forms {
-		w := &blockWalk{s: s, out: b, seen: map[*term.Op]bool{}}
+		w := &blockWalk{s: s, out: b, seen: map[*term.Op]bool{}, trace: o.trace}
 		w.visit(forms[k].Term, blockScope{names: forms[k].names.Variables, dims: forms[k].dims, face: forms[k].Face})
 	}
 	return b, nil
@@ -113,6 +150,20 @@ type blockWalk struct {
 	s    *Scope
 	out  *Blockage
 	seen map[*term.Op]bool
+	// trace knows in which definitions the parts got stuck
+	trace *value.Trace
+}
+
+// waiting is an operation that waits, with where it stands.
+func (w *blockWalk) waiting(operation string, c term.Core) Waiting {
+	out := Waiting{Operation: operation}
+	if s := w.trace.StuckAt(c); s != nil {
+		out.Place = s.Place
+		if s.Kind == value.SiteDefinition {
+			out.Definition = s.Name
+		}
+	}
+	return out
 }
 
 type blockTask struct {
@@ -251,7 +302,7 @@ func (w *blockWalk) stuck(c term.Core, x blockScope) {
 	b := Block{Face: faceText(x.face, x.dims)}
 	b.Part = w.write(c, x)
 	release := interval.Bot()
-	var waiting []string
+	var waiting []Waiting
 	for {
 		o, ok := c.(*term.Op)
 		if !ok {
@@ -262,7 +313,7 @@ func (w *blockWalk) stuck(c term.Core, x blockScope) {
 			release = release.Or(o.Args[1].(*term.Face).Face)
 			line := o.Args[0].(*term.Bound)
 			if !w.isData(line.Body) {
-				b.Head = HeadTransport
+				b.Head, b.Stands = HeadTransport, w.waiting("", o)
 				b.Release = append(b.Release, "a type for its line "+w.write(line.Body, x.under(line, o.Sig.Slots[0].Slot)).String())
 				break
 			}
@@ -277,7 +328,7 @@ func (w *blockWalk) stuck(c term.Core, x blockScope) {
 		if r, ok := o.Args[0].(term.Reference); ok {
 			name = "an elimination of " + r.Name
 		}
-		waiting = append(waiting, name)
+		waiting = append(waiting, w.waiting(name, o))
 		if d, ok := o.Args[len(o.Args)-1].(term.Dimension); ok && o.Sig.Name == "at" {
 			release = release.Or(d.Is0()).Or(d.Is1())
 		}
@@ -331,7 +382,7 @@ func (w *blockWalk) head(b *Block, c term.Core, x blockScope, release *interval.
 		if h.Sig.Name != "hcomp" {
 			return
 		}
-		b.Head = HeadComposite
+		b.Head, b.Stands = HeadComposite, w.waiting("", h)
 		w.composite(b, h, x, release)
 	}
 }
@@ -343,7 +394,9 @@ func (w *blockWalk) composite(b *Block, h *term.Op, x blockScope, release *inter
 		*release = release.Or(row[0].(*term.Face).Face)
 	}
 	if !w.isData(h.Args[0].(term.Core)) {
-		b.Walls = append(b.Walls, "its type "+w.write(h.Args[0].(term.Core), x).String()+" shows no former")
+		t := w.write(h.Args[0].(term.Core), x).String()
+		b.Walls = append(b.Walls, "its type "+t+" shows no former")
+		b.Release = append(b.Release, "a type for "+t)
 		return
 	}
 	shows := func(c term.Core) string {

@@ -263,8 +263,12 @@ func (e *Engine) call(ctx context.Context, o *callOptions, body func(run *value.
 	solved := e.solved
 	e.mu.RUnlock()
 	s := value.Settings{Context: ctx, Budget: o.limits.or(e.limits).budget(), Plain: e.plain, High: e.high, Solutions: solved, Draw: o.draw}
-	if len(o.opaque) > 0 {
-		s.Unfold = &view{opaque: o.opaque, values: map[*definition]value.Value{}}
+	if len(o.opaque) > 0 || o.stuck {
+		v := &view{opaque: o.opaque, values: map[*definition]value.Value{}}
+		if o.stuck {
+			v.folded = map[*definition]value.Value{}
+		}
+		s.Unfold = v
 	}
 	run := value.NewRun(s)
 	end := o.watch(ctx, run)
@@ -296,6 +300,9 @@ func (e *Engine) checker(run *value.Run, x *scopeContext) *checker {
 type view struct {
 	opaque map[string]bool
 	values map[*definition]value.Value
+	// folded, if not nil, are the run's own folded forms: nothing of a definition
+	// is taken over that other runs have evaluated.
+	folded map[*definition]value.Value
 }
 
 func (u *view) Unfold(run *value.Run, g value.Global) value.Value {
@@ -319,6 +326,14 @@ func (u *view) Unfold(run *value.Run, g value.Global) value.Value {
 func (u *view) Folded(run *value.Run, g value.Global) value.Value {
 	if d, ok := g.(*definition); ok && u.opaque[d.name] {
 		return u.Unfold(run, g)
+	}
+	if d, ok := g.(*definition); ok && u.folded != nil && d.core != nil {
+		v, ok := u.folded[d]
+		if !ok {
+			v = run.Fold(value.NewNeutral(&value.GlobalHead{Global: d}))
+			u.folded[d] = v
+		}
+		return v
 	}
 	return g.Folded(run)
 }

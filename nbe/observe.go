@@ -27,8 +27,10 @@ type observation struct {
 	follow    *Follow
 	labels    bool
 	regions   bool
-	operation *value.Site // what the call does
-	subject   *value.Site // the definition or term it does it with; nil if there is none
+	stuck     bool         // keep where computing got stuck, in trace
+	trace     *value.Trace // of the call, while it lasts and afterwards
+	operation *value.Site  // what the call does
+	subject   *value.Site  // the definition or term it does it with; nil if there is none
 }
 
 // Profile adds what the call is charged for to p, by definition and operation:
@@ -82,7 +84,7 @@ func termSite(w *term.Written) value.Site {
 // watch begins what was asked for; the function that it returns ends it.
 func (o *callOptions) watch(ctx context.Context, run *value.Run) (end func()) {
 	run.Standing = o.subject
-	if o.profile == nil && o.follow == nil && !o.regions {
+	if o.profile == nil && o.follow == nil && !o.regions && !o.stuck {
 		return nil
 	}
 	began := time.Now()
@@ -93,6 +95,10 @@ func (o *callOptions) watch(ctx context.Context, run *value.Run) (end func()) {
 	if o.regions {
 		t.Regions = ctx
 	}
+	if o.stuck {
+		t.KeepStuck()
+	}
+	o.trace = t
 	run.Begin(t)
 	if run.Traced() && o.subject != nil {
 		run.In(o.subject)

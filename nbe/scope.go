@@ -283,7 +283,7 @@ func (s *Scope) forms(ctx context.Context, t *Term, o *callOptions, read func(q 
 		for k, x := range s.cases {
 			c := t.cases[k]
 			v := c.v
-			if len(o.opaque) > 0 {
+			if len(o.opaque) > 0 || o.stuck {
 				v = s.e.evaluate(run, c.core, x)
 			}
 			if o.regions && o.fold() == nil {

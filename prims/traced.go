@@ -54,6 +54,9 @@ func hcompTraced(run *value.Run, t, base value.Value, walls value.System) value.
 		})
 	}
 	v := hcompAt(run, t, base, walls)
+	if n, ok := v.(*value.Neutral); ok && n.Length() == 0 {
+		run.Stuck(n)
+	}
 	run.Ends(e, v)
 	run.Out(back)
 	return v
@@ -69,6 +72,9 @@ func transpTraced(run *value.Run, i value.Name, t value.Value, phi interval.Face
 		})
 	}
 	w := transpAt(run, i, t, phi, v)
+	if n, ok := w.(*value.Neutral); ok && n.Length() == 0 {
+		run.Stuck(n)
+	}
 	run.Ends(e, w)
 	run.Out(back)
 	return w

@@ -128,13 +128,23 @@ func (q *Reader) Term(t, v value.Value) (c value.Core) {
 func (q *Reader) Neutral(n *value.Neutral) value.Core {
 	c := n.Head().ReadBack(q)
 	if n.Length() == 0 {
+		if q.run.Traced() {
+			q.run.ReadStuck(n, c)
+		}
 		return c
 	}
 	t := n.Head().Type(q.run)
-	for _, p := range n.Prefixes()[1:] {
+	prefixes := n.Prefixes()
+	if q.run.Traced() {
+		q.run.ReadStuck(prefixes[0], c)
+	}
+	for _, p := range prefixes[1:] {
 		q.count()
 		before, f := p.Split()
 		c = f.ReadBack(q, c, t)
+		if q.run.Traced() {
+			q.run.ReadStuck(p, c)
+		}
 		t = f.Type(q.run, t, before)
 	}
 	return c

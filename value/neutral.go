@@ -63,7 +63,11 @@ func NewNeutral(h Head) *Neutral {
 func (n *Neutral) Eliminate(run *Run, f Frame) *Neutral {
 	run.Charge(PriceNode)
 	frontier, faces := f.Frontier()
-	return &Neutral{head: n.head, prev: n, frame: f, length: n.length + 1, support: n.support | f.Support(), frontier: n.frontier | frontier, faces: n.faces | faces}
+	out := &Neutral{head: n.head, prev: n, frame: f, length: n.length + 1, support: n.support | f.Support(), frontier: n.frontier | frontier, faces: n.faces | faces}
+	if run.Traced() {
+		run.Stuck(out)
+	}
+	return out
 }
 
 // Head is the head of the spine.
@@ -107,6 +111,9 @@ func (n *Neutral) Substitute(run *Run, s *Subst) Value {
 		run.Relabelled++
 		return n.relabel(run, s)
 	}
+	if run.Traced() && run.trace.stuck != nil {
+		return n.recomputeTraced(run, s)
+	}
 	// The deepest part of the spine that stays stuck is found by going through
 	// it from the head: each elimination is resumed on what came before.
 	var v Value = n.head.Recompute(run, s)
@@ -123,6 +130,9 @@ func (n *Neutral) relabel(run *Run, s *Subst) *Neutral {
 	out := NewNeutral(n.head.Relabel(run, s))
 	for _, f := range n.Frames() {
 		out = out.Eliminate(run, f.Relabel(run, s))
+	}
+	if run.Traced() {
+		run.sameStuck(out, n)
 	}
 	return out
 }

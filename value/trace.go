@@ -136,6 +136,7 @@ type Trace struct {
 	paths   int
 	due     atomic.Bool // a sample of time is due
 	sampled time.Time
+	stuck   *stuckAt // nil where nobody is going to ask
 	stop    chan struct{}
 	stopped bool
 }
