@@ -93,6 +93,7 @@ func newTrial(es *engines, x *Instance, b build) (*trial, *Failure) {
 // failure is a failure with an error, nil for what says nothing.
 func (t *trial) failure(law, where string, err error) *Failure {
 	if !broken(err) {
+		t.es.spent[law]++
 		return nil
 	}
 	return &Failure{Law: law, Instance: t.x, Where: where, Err: err}

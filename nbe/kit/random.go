@@ -94,7 +94,7 @@ func FuzzLaws(f *testing.F, former Former, options ...Option) {
 	for _, o := range options {
 		o(&c)
 	}
-	es := &engines{former: former, made: map[string]*nbe.Engine{}}
+	es := newEngines(former)
 	f.Fuzz(func(t *testing.T, data []byte) {
 		if failure, _ := c.try(es, &recorder{source: FromBytes(data)}, nil); failure != nil {
 			failure.Former = former.Name

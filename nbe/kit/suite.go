@@ -1,7 +1,9 @@
 package kit
 
 import (
+	"flag"
 	"fmt"
+	"strings"
 	"testing"
 
 	"example.com/boxwright/nbe"
@@ -9,6 +11,12 @@ import (
 
 // The law suite: trials, one after the other, each with every law, and the
 // smallest failing input of the first law that is broken.
+
+// Flags of go test, for longer runs than a package's tests ask for.
+var (
+	moreTrials = flag.Int("law-trials", 0, "how many inputs the law suite tries, instead of what the test says")
+	otherSeed  = flag.Uint64("law-seed", 0, "the seed of the law suite's first input, beyond what the test says")
+)
 
 // Option is an option of the suite.
 type Option func(*config)
@@ -50,7 +58,14 @@ func Without(laws ...string) Option {
 // the smallest input that breaks one.
 func CheckLaws(t testing.TB, f Former, options ...Option) bool {
 	t.Helper()
-	failure, err := FindFailure(f, options...)
+	if *moreTrials > 0 {
+		options = append(options[:len(options):len(options)], Trials(*moreTrials))
+	}
+	if *otherSeed > 0 {
+		options = append(options[:len(options):len(options)], Seed(*otherSeed))
+	}
+	failure, tried, err := find(f, options)
+	t.Log(tried)
 	if err != nil {
 		t.Errorf("kit: the laws of %s cannot be tried: %v", f.Name, err)
 		return false
@@ -66,13 +81,19 @@ func CheckLaws(t testing.TB, f Former, options ...Option) bool {
 // smaller, or nil. The error is that of setting up an engine. It is
 // deterministic: the same former and options give the same failure.
 func FindFailure(f Former, options ...Option) (*Failure, error) {
+	failure, _, err := find(f, options)
+	return failure, err
+}
+
+// find also tells how often each law was tried, and how often a budget ran out.
+func find(f Former, options []Option) (*Failure, string, error) {
 	c := config{trials: 60, shrink: 500, skip: map[string]bool{}}
 	for _, o := range options {
 		o(&c)
 	}
-	es := &engines{former: f, made: map[string]*nbe.Engine{}}
+	es := newEngines(f)
 	if _, err := es.of(fast); err != nil {
-		return nil, err
+		return nil, "", err
 	}
 	for k := range c.trials {
 		seed := c.seed + uint64(k)
@@ -92,9 +113,26 @@ func FindFailure(f Former, options ...Option) (*Failure, error) {
 			again = failure
 		}
 		again.Former, again.Seed, again.Drawn, again.Kept = f.Name, seed, len(drawn), len(small)
-		return again, nil
+		return again, es.account(), nil
 	}
-	return nil, nil
+	return nil, es.account(), nil
+}
+
+func newEngines(f Former) *engines {
+	return &engines{former: f, made: map[string]*nbe.Engine{}, tried: map[string]int{}, spent: map[string]int{}}
+}
+
+// account tells how often each law was tried, and how often a budget ran out.
+func (es *engines) account() string {
+	var parts []string
+	for _, l := range Laws() {
+		text := fmt.Sprintf("%s %d", l.Name, es.tried[l.Name])
+		if n := es.spent[l.Name]; n > 0 {
+			text += fmt.Sprintf(" (%d out of budget)", n)
+		}
+		parts = append(parts, text)
+	}
+	return "laws tried: " + strings.Join(parts, ", ")
 }
 
 // try draws an instance and tries the laws on it, or one of them.
@@ -123,6 +161,7 @@ func (c *config) try(es *engines, source Source, via *Law) (failure *Failure, by
 		if c.skip[l.Name] || c.only != nil && !c.only[l.Name] {
 			continue
 		}
+		es.tried[l.Name]++
 		if f := l.check(t); f != nil {
 			f.build = b
 			return f, &l

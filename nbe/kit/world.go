@@ -50,6 +50,8 @@ type world struct {
 type engines struct {
 	former Former
 	made   map[string]*nbe.Engine
+	tried  map[string]int // by law: how often it was tried
+	spent  map[string]int // and how often a budget ran out
 }
 
 func (es *engines) of(b build) (*nbe.Engine, error) {
