@@ -365,6 +365,46 @@ func TestSubstitutingVariablesCommutes(t *testing.T) {
 		p.normal(x)
 		plain.no(e.Define(ctx, "y", s.Written(), v, small), "defining")
 		p.same(want, p.normal(x), "by a definition in the assumption's place")
+
+		// as a definition from the start, unfolded, folded and compared
+		f2 := engineOf(t, fast)
+		plain.no(f2.Define(ctx, "y", s.Written(), v, small), "defining")
+		q := &prover{t: t, s: scopeOf(t, f2), call: []nbe.CallOption{small}, what: what}
+		d := q.check(a, ty.Written())
+		unfolded := q.check(generate.Replace(a, put), ty.Written())
+		require.True(t, q.equal(d, unfolded) && q.equal(unfolded, d), "%s", what)
+		folded, err := q.s.Normal(ctx, d, small, nbe.AllFolded())
+		q.no(err, "normalising folded")
+		w, wt := q.written(folded[0])
+		again := q.check(w, wt)
+		require.True(t, q.equal(d, again), "folded %s\n%s", w, what)
+		q.same(want, q.normal(d), "by a definition")
+		q.same(want, q.normal(again), "by a folded normal form")
+	})
+}
+
+// With more dimensions in scope than a word holds, the same comes out.
+func TestManyDimensionsChangeNothing(t *testing.T) {
+	property(t, 1, func(t *rapid.T, x sample) {
+		p := proverOf(t, fast, x)
+		w, ty := p.written(p.normal(p.check(x.a, x.ty)))
+		e := engineOf(t, fast)
+		s := e.Scope()
+		for n := range 70 {
+			var err error
+			s, err = s.Dimension(fmt.Sprintf("d%d", n))
+			require.NoError(t, err)
+		}
+		for _, d := range dimensionNames {
+			var err error
+			s, err = s.Dimension(d)
+			require.NoError(t, err)
+		}
+		q := &prover{t: t, s: s, call: p.call, what: p.what}
+		a := q.check(x.a, x.ty)
+		n := q.normal(a)
+		q.same(n, q.normal(q.check(w, ty)), "beside many dimensions")
+		require.True(t, term.Same(n.Term, q.check(w, ty).Core()), "%s\n%s\n%s", &n, w, p.what)
 	})
 }
 
