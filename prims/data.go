@@ -257,12 +257,22 @@ func (t *DataType) readCon(q value.Quoter, v *Con) value.Core {
 		args[1] = term.Rows{row}
 	}
 	for k, a := range v.Args {
-		args = append(args, q.Term(v.Of.Args[k].At(q.Run(), t.Params, v.Args), a))
+		args = append(args, q.Term(t.argument(q.Run(), v, k), a))
 	}
 	for _, d := range v.Dims {
 		args = append(args, term.Dimension{Dim: d})
 	}
 	return op(conSig, args...)
+}
+
+// argument is the type of argument k of v, an element of t. Where that is t
+// again it is the same value, so that what is remembered of elements at t holds
+// for it too: without that, a graph of constructors would be read as a tree.
+func (t *DataType) argument(run *value.Run, v *Con, k int) value.Value {
+	if r := v.Of.Args[k].Recursive; r != nil && r.shape == recursionSelf {
+		return t
+	}
+	return v.Of.Args[k].At(run, t.Params, v.Args)
 }
 
 // SameElement compares constructors, numbers and formal composites.
@@ -283,7 +293,7 @@ func (t *DataType) SameElement(c value.Comparer, a, b value.Value) bool {
 			return false
 		}
 		for k := range x.Args {
-			if !c.Terms("the argument "+x.Of.Args[k].Name+" of "+x.Of.Name, x.Of.Args[k].At(run, t.Params, x.Args), x.Args[k], y.Args[k]) {
+			if !c.Terms("the argument "+x.Of.Args[k].Name+" of "+x.Of.Name, t.argument(run, x, k), x.Args[k], y.Args[k]) {
 				return false
 			}
 		}

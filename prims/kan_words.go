@@ -206,7 +206,7 @@ func boundedLine(c value.Checker, line *term.Bound, r interval.Dim) *term.Bound 
 // moved is x moved by m, charged by the node.
 func moved(c value.Checker, m term.Move, x value.Core) value.Core {
 	run := c.Run()
-	m.Each = func() { run.Charge(value.PriceNode) }
+	m.Each = func() { run.Charge(3 * value.PriceNode) } // with its arguments and a body
 	return m.Apply(x)
 }
 
