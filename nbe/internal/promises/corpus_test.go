@@ -8,6 +8,7 @@ package promises
 import (
 	"context"
 	"os"
+	"runtime/debug"
 	"strings"
 	"testing"
 
@@ -191,3 +192,7 @@ func numberPrograms() []program {
 		say("composites that nest", "(-> I A)", "(lam (i) (elim (x A) ", " (zero a) ((suc k h) (hcomp A h ((= i 0) (j) h)))))", true),
 	}
 }
+
+func readQuiet(text string) (*term.Written, error) { return notation.ReadTerm(text, "", nil) }
+
+func setGC(percent int) int { return debug.SetGCPercent(percent) }
