@@ -68,7 +68,7 @@ func former(w *notation.Words) kit.Former {
 	}
 }
 
-func TestLaws(t *testing.T) { kit.CheckLaws(t, former(words(t)), kit.Trials(60)) }
+func TestLaws(t *testing.T) { kit.CheckLaws(t, former(words(t)), kit.Trials(30)) }
 
 func TestScripts(t *testing.T) { kit.Scripts(t, "testdata/*.txtar", with) }
 

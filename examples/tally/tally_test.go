@@ -71,7 +71,7 @@ func former(w *notation.Words) kit.Former {
 func TestLaws(t *testing.T) {
 	e, err := nbe.New(with)
 	require.NoError(t, err)
-	kit.CheckLaws(t, former(e.Words()), kit.Trials(60))
+	kit.CheckLaws(t, former(e.Words()), kit.Trials(30))
 }
 
 func TestScripts(t *testing.T) { kit.Scripts(t, "testdata/*.txtar", with) }

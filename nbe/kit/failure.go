@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"strings"
 
+	"example.com/boxwright/nbe"
 	"example.com/boxwright/nbe/term"
 )
 
@@ -13,6 +14,7 @@ import (
 // Failure is a law that is broken, on the smallest input that was found.
 type Failure struct {
 	Former   string
+	Options  []nbe.Option // of an engine that has the former
 	Law      string
 	Instance *Instance
 	What     string        // the term that is wrong
@@ -22,11 +24,15 @@ type Failure struct {
 	Made     string        // how the left side came about
 	// Left and Right are the two sides as normal forms; nil where there is an error instead.
 	Left, Right *term.Written
-	Err         error
-	Seed        uint64 // of the trial
-	Drawn       int    // how many choices the trial drew, and how many were left of them
-	Kept        int
-	build       build
+	// Type is the type of both sides, over the dimensions Over.
+	Type  *term.Written
+	Over  []string
+	right *term.Written // what Right is the normal form of, where it is at hand
+	Err   error
+	Seed  uint64 // of the trial
+	Drawn int    // how many choices the trial drew, and how many were left of them
+	Kept  int
+	build build
 }
 
 // Internal reports whether the failure is a fault inside the former or the engine.
@@ -127,7 +133,7 @@ func (x *Instance) used() []Variable {
 
 // Script is the failing input as a script that can be pasted: the variables as
 // assumptions, the operation as a definition that is shown, and, where there
-// are two sides, the equation that should hold between them.
+// are two sides, the equation between them, which fails.
 func (f *Failure) Script() string {
 	x := f.Instance
 	if x == nil {
@@ -135,10 +141,14 @@ func (f *Failure) Script() string {
 	}
 	p := Paste{Variables: x.used(), Dimensions: x.Dimensions}
 	p.Define("subject", x.TypeAt(oneEnd), x.Term())
-	if f.Left != nil && f.Right != nil && f.Law != LawVariables {
-		p.Comment("to be equal, and they are not:")
-		p.Comment(f.Left.String())
-		p.Comment(f.Right.String())
+	if f.Type != nil && f.Law != LawVariables {
+		p.Dimensions = f.Over
+		right := f.right
+		if right == nil {
+			right = f.Right
+		}
+		p.Comment(f.What + ", " + f.Where + ": left is " + f.Made)
+		p.Same(f.Type, f.Left, right)
 	}
 	return p.String()
 }

@@ -117,7 +117,10 @@ func (t *trial) agree(law string, w *world, ty, left, right value.Value, what, w
 	if equal && same {
 		return nil
 	}
-	f := &Failure{Law: law, Instance: t.x, What: what, Where: where, Made: made, Left: w.write(l), Right: w.write(r)}
+	f := &Failure{Law: law, Instance: t.x, What: what, Where: where, Made: made, Left: w.write(l), Right: w.write(r), Over: w.dims}
+	if u, err := w.normalType(element{ty, left}); err == nil {
+		f.Type = w.write(u)
+	}
 	if equal != same {
 		f.Law = LawAgreement
 		if equal {
@@ -188,6 +191,7 @@ func (t *trial) substituted(law string, from *world, x element, s Substitution, 
 		return t.failure(law, where, err)
 	}
 	if f := t.agree(law, to, r.t, l.v, r.v, what, where, "the value, substituted"); f != nil {
+		f.right = right
 		return f
 	}
 	n, err := from.normal(x)
@@ -198,7 +202,11 @@ func (t *trial) substituted(law string, from *world, x element, s Substitution, 
 	if err != nil {
 		return t.failure(law, where, err)
 	}
-	return t.agree(law, to, r.t, v, r.v, what, where, "the normal form, substituted")
+	f := t.agree(law, to, r.t, v, r.v, what, where, "the normal form, substituted")
+	if f != nil {
+		f.right = right
+	}
+	return f
 }
 
 func endsOf(kind string, at []End) Substitution {

@@ -65,8 +65,10 @@ func TestReportsOfFailures(t *testing.T) {
 	require.Equal(t, f.Report(), broken(t).Report())
 	require.LessOrEqual(t, f.Kept, f.Drawn)
 
-	// the script is one that an engine with the former handles
-	kit.Engine(t, f.Script(), nbe.WithFormers(duoFormer(rightDuo())))
+	// the script can be pasted, and its last form fails
+	report, failed := kit.RunArchive(t, kit.ParseArchive("-- main.sexp --\n"+f.Script()), f.Options...)
+	require.Len(t, failed, 1, report)
+	kit.ErrorIs(t, failed[0], term.Unequal)
 
 	// the SVG is well formed and marks the face in another colour
 	svg := f.SVG()

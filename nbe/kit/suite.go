@@ -112,6 +112,7 @@ func find(f Former, options []Option) (*Failure, string, error) {
 		if again == nil || again.Law != failure.Law {
 			again = failure
 		}
+		again.Options = f.Options
 		again.Former, again.Seed, again.Drawn, again.Kept = f.Name, seed, len(drawn), len(small)
 		return again, es.account(), nil
 	}

@@ -167,7 +167,7 @@ func WayTo(a, b *term.Written) Way {
 				differing = append(differing, p)
 			}
 		}
-		if len(differing) > 1 && len(at.a.Text(shortPart))+len(at.b.Text(shortPart)) < 2*shortPart {
+		if len(differing) > 1 && max(len(at.a.Text(shortPart)), len(at.b.Text(shortPart))) <= shortPart {
 			break
 		}
 		way.More += len(differing) - 1

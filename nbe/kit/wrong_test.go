@@ -17,7 +17,7 @@ func TestRightFormersPass(t *testing.T) {
 	strictRules := rightTag()
 	strictRules.hcomp = strict
 	for _, f := range []kit.Former{duos("duos", rightDuo()), tags("formal tags", rightTag(), true), tags("strict tags", strictRules, false)} {
-		t.Run(f.Name, func(t *testing.T) { kit.CheckLaws(t, f, kit.Trials(40)) })
+		t.Run(f.Name, func(t *testing.T) { kit.CheckLaws(t, f, kit.Trials(24)) })
 	}
 }
 
