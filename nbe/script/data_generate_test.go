@@ -11,6 +11,7 @@ package script_test
 
 import (
 	"fmt"
+	"slices"
 	"strings"
 
 	"pgregory.net/rapid"
@@ -52,6 +53,8 @@ func (d *declared) typeOf(kind, at string) string {
 		return "(-> I " + self + ")"
 	case "loop":
 		return "(Path " + self + " pt0 pt0)"
+	case "pair":
+		return d.label(at)
 	}
 	panic(kind)
 }
@@ -62,6 +65,22 @@ func (d *declared) label(at string) string {
 	}
 	return d.param("A", at)
 }
+
+// over is the type of the second part of a pair of arguments, whose first is x.
+func (d *declared) over(at, x string) string {
+	switch {
+	case len(d.params) == 0: // a family that recursion over a number makes
+		return "(elim (_ (U 0)) " + x + " (zero Nat) ((suc k h) Bool))"
+	case !d.has("B"):
+		return "Nat"
+	}
+	if at == "" {
+		return "(B " + x + ")"
+	}
+	return "(B " + at + " " + x + ")"
+}
+
+func (d *declared) has(param string) bool { return slices.Contains(d.params, param) }
 
 // param is a parameter, or the line of it at a dimension.
 func (d *declared) param(name, at string) string {
@@ -149,7 +168,7 @@ func (m *maker) variable(name string) string {
 func (m *maker) label() string {
 	var all []string
 	for _, a := range m.args {
-		if a.kind == "label" {
+		if a.kind == "label" || a.kind == "pair" {
 			all = append(all, m.variable(a.name))
 		}
 	}
@@ -160,7 +179,7 @@ func (m *maker) label() string {
 		return ""
 	}
 	x := all[m.pick(len(all))]
-	if len(m.d.params) > 1 && m.pick(3) == 0 {
+	if m.d.has("f") && m.pick(3) == 0 {
 		return "(" + m.d.param("f", m.at) + " " + x + ")"
 	}
 	return x
@@ -226,6 +245,12 @@ func (m *maker) apply(c con, depth int) string {
 			x = m.label()
 		case "nat":
 			x = fmt.Sprint(m.pick(3))
+		case "pair": // both from one variable, since the second is over the first
+			for _, v := range m.args {
+				if v.kind == "pair" {
+					x = m.variable(v.name) + " " + m.variable(v.name+"b")
+				}
+			}
 		case "self":
 			x = m.element(depth)
 		case "function":
@@ -283,11 +308,11 @@ func (m *maker) composite(depth int) string {
 func put(e, dim, r string) string { return strings.ReplaceAll(e, "{"+dim+"}", r) }
 
 // kinds of arguments that a declaration may have.
-var kinds = []string{"label", "self", "nat", "function", "interval", "loop"}
+var kinds = []string{"label", "self", "nat", "function", "interval", "loop", "pair"}
 
 func drawDeclaration(t *rapid.T) *declared {
 	d := &declared{}
-	d.params = [][]string{nil, {"A"}, {"A", "f"}}[rapid.IntRange(0, 2).Draw(t, "parameters")]
+	d.params = [][]string{nil, {"A"}, {"A", "f"}, {"A", "B"}}[rapid.IntRange(0, 3).Draw(t, "parameters")]
 	names := 0
 	arguments := func(most int) (args []arg) {
 		for range rapid.IntRange(0, most).Draw(t, "arguments") {
@@ -302,6 +327,9 @@ func drawDeclaration(t *rapid.T) *declared {
 				clause += " "
 			}
 			clause += "(" + a.name + " " + d.typeOf(a.kind, "") + ")"
+			if a.kind == "pair" {
+				clause += " (" + a.name + "b " + d.over("", a.name) + ")"
+			}
 		}
 		d.clauses = append(d.clauses, clause+")")
 	}
@@ -356,7 +384,7 @@ func drawDeclaration(t *rapid.T) *declared {
 func (d *declared) text() string {
 	s := "(data D ("
 	for _, p := range d.params {
-		s += map[string]string{"A": "(A (U 0))", "f": "(f (-> A A))"}[p]
+		s += map[string]string{"A": "(A (U 0))", "f": "(f (-> A A))", "B": "(B (-> A (U 0)))"}[p]
 	}
 	s += ")"
 	if d.formal && len(d.paths) == 0 {
@@ -370,7 +398,8 @@ func (d *declared) text() string {
 func (d *declared) scope() (string, []arg) {
 	s := ""
 	for _, p := range d.params {
-		s += map[string]string{"A": "(assume A (-> I (U 0)))", "f": "(assume f (Pi ((r I)) (-> (A r) (A r))))"}[p]
+		s += map[string]string{"A": "(assume A (-> I (U 0)))", "f": "(assume f (Pi ((r I)) (-> (A r) (A r))))",
+			"B": "(assume B (Pi ((r I)) (-> (A r) (U 0))))"}[p]
 	}
 	var args []arg
 	for k, kind := range kinds {
@@ -384,6 +413,13 @@ func (d *declared) scope() (string, []arg) {
 			t = d.typeOf(kind, "r")
 		}
 		s += fmt.Sprintf("(assume %s (Pi ((r I)) %s))\n", name, t)
+		if kind == "pair" {
+			at := "r"
+			if len(d.params) == 0 {
+				at = ""
+			}
+			s += fmt.Sprintf("(assume %sb (Pi ((r I)) %s))\n", name, d.over(at, "("+name+" r)"))
+		}
 	}
 	return s, args
 }
@@ -400,11 +436,16 @@ func (d *declared) identity(at, e string) string {
 		binds, body := "", ""
 		for _, a := range c.args {
 			binds += " " + a.name
+			if a.kind == "pair" {
+				binds += " " + a.name + "b"
+			}
 		}
 		for _, a := range c.args {
 			switch a.kind {
 			case "label", "nat":
 				body += " " + a.name
+			case "pair":
+				body += " " + a.name + " " + a.name + "b"
 			default:
 				binds += " h" + a.name
 				body += " h" + a.name
