@@ -55,7 +55,7 @@ var (
 func newHost(text string) (*host, error) {
 	enginesLock.Lock()
 	defer enginesLock.Unlock()
-	h := &host{options: []nbe.CallOption{nbe.Within(deep)}, counts: map[string]float64{}}
+	h := &host{options: append([]nbe.CallOption{nbe.Within(deep)}, watched...), counts: map[string]float64{}}
 	if e := engines[text]; e != nil {
 		h.e = e.Fork()
 		return h, nil

@@ -6,6 +6,7 @@
 //	go run ./examples/measure -json -o run.json    a table for machines
 //	go run ./examples/measure -svg growth.svg      the growth curves as a drawing
 //	go run ./examples/measure -against run.json    compared with a saved run
+//	go run ./examples/measure -profiles DIR        where each row spends its steps, for go tool pprof
 //	go run ./examples/measure -mechanisms          what each mechanism of the evaluator buys
 //
 // Rows are data, in the files rows_*.go; package gauge measures them. The exit
@@ -59,6 +60,7 @@ func run(args []string, stdout, stderr io.Writer) int {
 	largest := f.Int("largest", 0, "leave out the sizes above this `size`, 0: none")
 	list := f.Bool("list", false, "list the rows")
 	mechanisms := f.Bool("mechanisms", false, "measure what each mechanism of the evaluator buys")
+	profiles := f.String("profiles", "", "measure nothing: write profiles of the rows, by definition and operation, into `directory`")
 	profile := f.String("cpuprofile", "", "write a processor profile to `file`")
 	if err := f.Parse(args); err != nil {
 		return 2
@@ -99,6 +101,12 @@ func run(args []string, stdout, stderr io.Writer) int {
 	if *list {
 		for _, r := range chosen {
 			fmt.Fprintf(stdout, "%s: %s, sizes %d\n", r.Group, r.Name, r.Sizes)
+		}
+		return 0
+	}
+	if *profiles != "" {
+		if err := writeProfiles(*profiles, chosen, stderr); err != nil {
+			return fail(err)
 		}
 		return 0
 	}
