@@ -83,7 +83,16 @@ func WithLimits(l Limits) Option {
 // WithFormers registers formers of the host's beside the built-in ones. A word
 // or a signature that is taken is refused with kind Duplicate.
 func WithFormers(formers ...prims.Former) Option {
-	return func(e *Engine) error { return e.register(formers) }
+	return func(e *Engine) error {
+		for _, f := range formers {
+			for _, w := range f.Words {
+				if term.IsHeadWord(w.Word) { // of dimensions, faces and scripts too, which no former brings
+					return &term.Error{Kind: term.Duplicate, Message: "the former " + f.Name + " brings a word that is taken", GotText: w.Word}
+				}
+			}
+		}
+		return e.register(formers)
+	}
 }
 
 // WithPlain switches shortcuts of the evaluator off, for testing the fast

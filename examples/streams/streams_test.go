@@ -10,6 +10,7 @@ import (
 	"example.com/boxwright/nbe/kit"
 	"example.com/boxwright/nbe/notation"
 	"example.com/boxwright/nbe/term"
+	"example.com/boxwright/prims"
 )
 
 var with = nbe.WithFormers(streams.Former())
@@ -88,8 +89,18 @@ func TestUnfoldings(t *testing.T) {
 	kit.RefusedAs(t, s, term.IllTyped, nil, "(head 3)")
 }
 
-// Words that are taken are refused.
+// Words that are taken are refused: by another former, by the notation, by scripts.
 func TestWordsClash(t *testing.T) {
-	_, err := nbe.New(with, with)
+	for _, word := range []string{"Stream", "lam", "hcomp", "min", "def"} {
+		other := prims.Former{Name: "another", Words: []prims.Word{{Shape: term.Shape{Word: word}}}}
+		_, err := nbe.New(with, nbe.WithFormers(other))
+		kit.ErrorIs(t, err, term.Duplicate, "%s", word)
+	}
+	_, err := nbe.New(nbe.WithFormers(prims.Table()...))
 	kit.ErrorIs(t, err, term.Duplicate)
+	_, err = nbe.New(with)
+	require.NoError(t, err)
+	// and a word is no name
+	e := kit.Engine(t, "", with)
+	kit.ErrorIs(t, e.Assume(t.Context(), "Stream", term.Universe(0)), term.Malformed)
 }

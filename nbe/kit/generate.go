@@ -69,7 +69,7 @@ func (g *Gen) Small() bool { return g.depth >= 2 }
 func (g *Gen) Choose(n int) int { return g.source.Next(max(n, 1)) }
 
 // reserved are the dimensions that instances and laws use.
-var reserved = map[string]bool{direction: true, height: true, fresh: true, point: true, "k": true, "l": true, "j": true}
+var reserved = map[string]bool{direction: true, height: true, fresh: true, point: true, "k": true, "l": true, "j": true, "z": true}
 
 // Name is a name that nothing in scope has, beginning with the stem.
 func (g *Gen) Name(stem string) string {
