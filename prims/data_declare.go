@@ -8,6 +8,11 @@ import (
 	"example.com/boxwright/value/interval"
 )
 
+// Checking declarations (CHM 3): telescopes, strict positivity, universes, the
+// boundaries of path constructors and whether these commute with transport. All
+// that evaluation needs to know of a declaration is decided here, once, so that
+// no instance of it can choose another rule.
+
 // Declare checks a data declaration in an empty scope. Decisions about it
 // ("mentions", "built from", "free of") are taken on normal forms, where the
 // η-expansion of a variable counts as that variable.
