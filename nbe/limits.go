@@ -62,6 +62,9 @@ func (l Limits) budget() value.Budget {
 // Stats is what a call did.
 type Stats = value.Stats
 
+// FormerStats are the composites and transports of one former.
+type FormerStats = value.FormerStats
+
 // CallOption is an option of one call.
 type CallOption func(*callOptions)
 

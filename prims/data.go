@@ -125,6 +125,9 @@ func NewCon(run *value.Run, c *Constructor, params, args []value.Value, dims []i
 	for _, b := range c.Boundary {
 		if b.Cube.Subst(s).IsTop() {
 			run.Take(value.StepBoundary)
+			if run.Followed() {
+				return boundaryFollowed(run, &Con{Of: c, Args: args, Dims: dims}, b.Element.OpenAll(run, environment(params, args, dims)))
+			}
 			return b.Element.OpenAll(run, environment(params, args, dims))
 		}
 	}

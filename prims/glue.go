@@ -148,6 +148,9 @@ func Unglue(run *value.Run, parts []GluePart, b value.Value) value.Value {
 	for _, p := range parts {
 		if p.Cube.IsTop() {
 			run.Take(value.StepUnglue)
+			if run.Followed() {
+				return unglueFaceFollowed(run, p.E, b)
+			}
 			return Apply(run, First(run, p.E), b)
 		}
 	}

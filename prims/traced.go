@@ -122,3 +122,17 @@ func unglueFollowed(run *value.Run, g *GlueElement) value.Value {
 	})
 	return run.Ends(e, g.Base)
 }
+
+func unglueFaceFollowed(run *value.Run, equivalence, b value.Value) value.Value {
+	e := run.Begins(value.StepUnglue, value.StepUnglue.String(), func(s *value.Sketch) *term.Written {
+		return term.Unglue(s.Value(b))
+	})
+	return run.Ends(e, Apply(run, First(run, equivalence), b))
+}
+
+func boundaryFollowed(run *value.Run, c *Con, v value.Value) value.Value {
+	e := run.Begins(value.StepBoundary, value.StepBoundary.String(), func(s *value.Sketch) *term.Written {
+		return s.Value(c)
+	})
+	return run.Ends(e, v)
+}
