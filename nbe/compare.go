@@ -2,6 +2,7 @@ package nbe
 
 import (
 	"context"
+	"fmt"
 	"strings"
 
 	"example.com/boxwright/nbe/term"
@@ -64,6 +65,7 @@ func (e *Engine) difference(run *value.Run, d *quote.Difference) *Difference {
 	if d == nil {
 		return nil
 	}
+	d.Names, d.DimensionNames = apart(d.Names, "x", nil), apart(d.DimensionNames, "i", d.Names)
 	out := &Difference{Way: d.Way, Face: faceText(d.Face, d.DimensionNames), Variables: d.Names, Dimensions: d.DimensionNames, LeftText: d.LeftText, RightText: d.RightText, face: d.Face}
 	if d.Left == nil {
 		return out
@@ -83,6 +85,28 @@ func (e *Engine) difference(run *value.Run, d *quote.Difference) *Difference {
 		return w
 	}
 	out.Left, out.Right = read(d.Left), read(d.Right)
+	return out
+}
+
+// apart are names for what is in scope of a difference, each another: binders
+// that the terms leave without a name get one, for nobody could tell them apart.
+func apart(names []string, standard string, others []string) []string {
+	taken := make(map[string]bool, len(names)+len(others))
+	for _, n := range others {
+		taken[n] = true
+	}
+	out := make([]string, len(names))
+	for k, n := range names {
+		if n == "_" {
+			n = standard
+		}
+		free := n
+		for j := 1; taken[free]; j++ {
+			free = fmt.Sprint(n, j)
+		}
+		taken[free] = true
+		out[k] = free
+	}
 	return out
 }
 
