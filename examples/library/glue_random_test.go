@@ -195,9 +195,9 @@ var substitutions = []struct {
 func TestGlueIsStableUnderSubstitution(t *testing.T) {
 	library := withLibrary(t, "integers")
 	r := rand.New(rand.NewPCG(6, 2))
-	rounds := 24
+	rounds := 10
 	if testing.Short() {
-		rounds = 6
+		rounds = 3
 	}
 	for n := range rounds {
 		e := library.Fork()

@@ -24,8 +24,7 @@ func written(t testing.TB, e *nbe.Engine, src string) *term.Written {
 	return w
 }
 
-// normal is the normal form of a term in a scope, which must check again at
-// the term's type and be its own normal form.
+// normal is the normal form of a term in a scope.
 func normal(t testing.TB, s *nbe.Scope, e *nbe.Engine, src string, options ...nbe.CallOption) string {
 	t.Helper()
 	ctx := context.Background()
@@ -40,40 +39,12 @@ func normal(t testing.TB, s *nbe.Scope, e *nbe.Engine, src string, options ...nb
 	return forms[0].String()
 }
 
-// rechecks requires the normal form of a term to check at its type and to be
-// its own normal form.
+// rechecks requires the normal form of a term to check at its type, to be its own
+// normal form, and to be equal to the term.
 func rechecks(t testing.TB, s *nbe.Scope, e *nbe.Engine, src string) {
 	t.Helper()
-	ctx := context.Background()
-	x, err := s.Infer(ctx, written(t, e, src))
-	if err != nil {
-		t.Fatalf("%v in %s", clip(err), clip(src))
-	}
-	forms, err := s.Normal(ctx, x)
-	if err != nil {
-		t.Fatalf("%v in %s", clip(err), clip(src))
-	}
-	w, err := forms[0].Written()
-	if err != nil {
-		t.Fatal(err)
-	}
-	again, err := s.CheckLike(ctx, w, x)
-	if err != nil {
-		t.Fatalf("the normal form %s does not check: %v", clip(w), clip(err))
-	}
-	if !term.Same(again.Core(), forms[0].Term) {
-		t.Fatalf("what is printed reads back as another term: %s", clip(w))
-	}
-	twice, err := s.Normal(ctx, again)
-	if err != nil {
-		t.Fatal(clip(err))
-	}
-	if !term.Same(twice[0].Term, forms[0].Term) {
-		t.Fatalf("normalising twice gives another form: %s", clip(w))
-	}
-	c, err := s.Compare(ctx, x, again)
-	if err != nil || c.Verdict != nbe.Equal {
-		t.Fatalf("a term is not equal to its normal form: %s (%v)", clip(src), err)
+	if ok, err := checksAgain(s, written(t, e, src), nbe.Limits{}); !ok {
+		t.Fatalf("%v: %s", clip(err), clip(src))
 	}
 }
 

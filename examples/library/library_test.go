@@ -36,7 +36,7 @@ var modes = []struct {
 }
 
 // quick are the scripts for the slow evaluator.
-var quick = map[string]bool{"univalence.sexp": true, "glue.sexp": true}
+var quick = map[string]bool{"equivalences.sexp": true, "glue.sexp": true}
 
 func newEngine(t testing.TB, options ...nbe.Option) *nbe.Engine {
 	t.Helper()

@@ -1,6 +1,6 @@
 ; Gluing, rule by rule (CCHM 2015, section 6; the operations in the form of CHM,
 ; LICS 2018): each right side is written out from the paper's rule.
-(load "univalence.sexp")
+(load "equivalences.sexp")
 
 (assume A (U 0)) (assume T (U 0)) (assume e (Equiv T A))
 (assume R (U 0)) (assume d (Equiv R A))
@@ -53,6 +53,11 @@
 ; Nor is it by the part on the face: over Unit the bases are equal, and the parts count.
 (assume z (Equiv T Unit)) (assume s T)
 (differ (Pi ((i I)) (Glue Unit ((= i 0) T z))) (lam (i) (glue unit ((= i 0) t))) (lam (i) (glue unit ((= i 0) s))))
+; Nor by the part alone: off the face the bases count.
+(assume a2 A)
+(differ (Glue A) (glue a) (glue a2))
+(differ (Pi ((i I)) (one-end i)) element
+  (lam (i) (glue (hcomp A ((fst e) t) ((= i 0) (k) ((fst e) t))) ((= i 0) t))))
 ; Types glued along different equivalences differ, as do different types.
 (assume c (Equiv T A))
 (differ (-> I (U 0)) one-end (lam (i) (Glue A ((= i 0) T c))))
