@@ -358,16 +358,64 @@ func (c *checker) Value(core term.Core) value.Value {
 			return c.run.Folded(d)
 		}
 	}
-	env, nv, nd, e, standing := c.env, len(c.variables), len(c.dimensions), c.e, c.run.Standing
-	return c.run.Later(c.support, func(run *value.Run) value.Value {
-		outside := run.Standing
-		run.Standing = standing
-		variables, dimensions, vs := free(run, core, env, nv, nd)
-		v := eval.Compile(run, e, core, nv, nd, variables, dimensions).Eval(run, vs)
-		run.Standing = outside
-		return v
-	})
+	d := &delayed{c.e, core, c.env, len(c.variables), len(c.dimensions), c.run.Standing}
+	if c.folds(core) {
+		return c.run.FoldLater(c.support, d)
+	}
+	return c.run.Later(c.support, d.Unfolded)
 }
+
+// folds reports whether core is a definition under eliminations, so that it has
+// a folded form to be compared by.
+func (c *checker) folds(core term.Core) bool {
+	for {
+		switch x := core.(type) {
+		case *term.Global:
+			d, ok := c.e.lookup(x.Name).(*definition)
+			return ok && d.core != nil
+		case *term.Op:
+			e, ok := c.e.ops[x.Sig].(eval.Eliminator)
+			if !ok {
+				return false
+			}
+			if core, ok = x.Args[e.Principal()].(term.Core); !ok {
+				return false
+			}
+		default:
+			return false
+		}
+	}
+}
+
+// delayed is a core term in a scope, not compiled yet.
+type delayed struct {
+	e        *Engine
+	core     term.Core
+	env      *environment
+	nv, nd   int
+	standing *value.Site
+}
+
+// Unfolded compiles the term; no work is done beyond that.
+func (d *delayed) Unfolded(run *value.Run) value.Value {
+	outside := run.Standing
+	run.Standing = d.standing
+	variables, dimensions, vs := free(run, d.core, d.env, d.nv, d.nd)
+	v := eval.Compile(run, d.e, d.core, d.nv, d.nd, variables, dimensions).Eval(run, vs)
+	run.Standing = outside
+	return v
+}
+
+// Fold is the folded form.
+func (d *delayed) Fold(run *value.Run) *value.Neutral {
+	if l, ok := d.Unfolded(run).(*value.Lazy); ok {
+		return l.Fold(run)
+	}
+	return nil
+}
+
+// Site is the definition or term that it stands in.
+func (d *delayed) Site() *value.Site { return d.standing }
 
 // free are the levels that core mentions, with their values.
 func free(run *value.Run, core term.Core, env *environment, nv, nd int) (variables, dimensions []int, vs []value.Value) {
