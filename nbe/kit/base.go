@@ -98,6 +98,3 @@ func Family(g *Gen, stem string, a *term.Written) func(x *term.Written) *term.Wr
 	f := g.Variable(stem, term.Arrow(a, universe), func(g *Gen) *term.Written { return term.Lam(Concrete(g), "_") })
 	return func(x *term.Written) *term.Written { return term.Apply(f, x) }
 }
-
-// Opaque is a type of which only variables are elements.
-func Opaque(ty *term.Written) Sample { return abstract(ty) }

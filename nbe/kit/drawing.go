@@ -3,8 +3,6 @@ package kit
 import (
 	"fmt"
 	"strings"
-
-	"example.com/boxwright/nbe/term"
 )
 
 // Drawings of a box: one panel for each dimension, seen from the side. The
@@ -217,5 +215,3 @@ func (f *Failure) SVG() string {
 func escape(s string) string {
 	return strings.NewReplacer("&", "&amp;", "<", "&lt;", ">", "&gt;").Replace(s)
 }
-
-var _ = term.Bot

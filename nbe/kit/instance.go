@@ -1,8 +1,6 @@
 package kit
 
 import (
-	"fmt"
-
 	"example.com/boxwright/nbe/term"
 )
 
@@ -372,9 +370,4 @@ next:
 		out = append(out, f)
 	}
 	return out
-}
-
-// String is the instance in a few lines.
-func (x *Instance) String() string {
-	return fmt.Sprintf("%s over %v", x.Op, x.Dimensions)
 }

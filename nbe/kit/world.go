@@ -11,7 +11,6 @@ import (
 	"example.com/boxwright/nbe/term"
 	"example.com/boxwright/quote"
 	"example.com/boxwright/value"
-	"example.com/boxwright/value/interval"
 )
 
 // Worlds: an engine in one of its builds with a scope, in which laws look at
@@ -241,5 +240,3 @@ func stuck(v value.Value) bool { _, ok := v.(*value.Neutral); return ok }
 func broken(err error) bool {
 	return err != nil && !errors.Is(err, term.OutOfBudget) && !errors.Is(err, term.Cancelled)
 }
-
-var _ = interval.Top
