@@ -54,7 +54,7 @@ func Example() {
 	}
 	same, err := scope.CompareAt(ctx, nat, term.Numeral(5), term.Apply(term.Name("put"), term.Numeral(1), term.Numeral(3)))
 	fmt.Println(forms[0].String(), same.Verdict, same.Difference, err)
-	// Output: 5 different 5 is not 4 <nil>
+	// Output: 5 different 5 is not (put 1 3) <nil>
 }
 
 // Terms are built with functions of package term, or read from text; both give
