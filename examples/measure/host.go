@@ -48,6 +48,7 @@ var plain []nbe.Option
 var (
 	enginesLock sync.Mutex
 	engines     = map[string]*nbe.Engine{}
+	failures    = map[string]error{}
 )
 
 // newHost returns an engine that has handled the text, whose loads are files of the
@@ -60,12 +61,16 @@ func newHost(text string) (*host, error) {
 		h.e = e.Fork()
 		return h, nil
 	}
+	if err := failures[text]; err != nil {
+		return nil, err
+	}
 	e, err := nbe.New(plain...)
 	if err != nil {
 		return nil, err
 	}
 	h.e = e
 	if err := h.handle(text); err != nil {
+		failures[text] = err
 		return nil, err
 	}
 	engines[text] = h.e
@@ -74,7 +79,7 @@ func newHost(text string) (*host, error) {
 }
 
 // forget drops the engines, after plain has been set.
-func forget() { engines = map[string]*nbe.Engine{} }
+func forget() { engines, failures = map[string]*nbe.Engine{}, map[string]error{} }
 
 func (h *host) handle(text string) error {
 	var first error
@@ -83,7 +88,9 @@ func (h *host) handle(text string) error {
 			first = r.Err
 		}
 	}, ReadFile: library.ReadFile}
-	if err := s.Source(background, []byte(text), "rows.sexp"); err != nil {
+	ctx, cancel := limited()
+	defer cancel()
+	if err := s.Source(ctx, []byte(text), "rows.sexp"); err != nil {
 		return err
 	}
 	return first

@@ -55,6 +55,7 @@ func run(args []string, stdout, stderr io.Writer) int {
 	from := f.String("from", "", "measure nothing: take the table saved in `file`")
 	rounds := f.Int("rounds", 10, "rounds for each row and size")
 	round := f.Duration("round", 20*time.Millisecond, "how long a round of one side lasts at least")
+	patience := f.Duration("patience", time.Minute, "the `time` after which three rounds of a size are enough, 0: never")
 	repeat := f.Int("repeat", 0, "repeat each operation so often and report what that leaves on the heap")
 	f.DurationVar(&longest, "limit", longest, "the longest time one call of the engine may take")
 	largest := f.Int("largest", 0, "leave out the sizes above this `size`, 0: none")
@@ -82,7 +83,7 @@ func run(args []string, stdout, stderr io.Writer) int {
 		defer pprof.StopCPUProfile()
 	}
 	s := settings(*rounds, *round)
-	s.Repeat = *repeat
+	s.Repeat, s.Patience = *repeat, *patience
 	if *mechanisms {
 		if err := writeMechanisms(stdout, stderr, name); err != nil {
 			return fail(err)

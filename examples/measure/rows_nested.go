@@ -13,19 +13,13 @@ import (
 // that turns along the line of types of its successor. With "all", the type of a
 // component depends on the sum of all the components before it.
 
-const nestedText = `
-(load "integers.sexp")
+const formersText = `
 (def plus (-> Nat Nat Nat) (lam (m n) (elim (x Nat) m (zero n) ((suc k h) (suc h)))))
 (def Berth (-> Nat (U 0)) (lam (n) (elim (x (U 0)) n (zero Nat) ((suc k h) h))))
 (def number (Pi ((n Nat)) (-> (Berth n) Nat))
   (lam (n) (elim (x (-> (Berth x) Nat)) n (zero (lam (y) y)) ((suc k h) h))))
 (def berth (Pi ((n Nat)) (-> Nat (Berth n)))
   (lam (n) (elim (x (-> Nat (Berth x))) n (zero (lam (y) y)) ((suc k h) h))))
-
-(def start (Pi ((i I)) (-> (at turn i) Nat))
-  (lam (i z) (elim (x Nat) (unglue z) ((pos n) n) ((negsuc n) n))))
-(def first (Pi ((i I)) (at turn i))
-  (lam (i) (glue (pos 2) ((= i 0) (pos 1)) ((= i 1) (pos 2)))))
 
 (def Pairs (-> Nat Nat (U 0))
   (lam (n) (elim (x (-> Nat (U 0))) n (zero (lam (m) Unit))
@@ -67,6 +61,19 @@ const nestedText = `
   (lam (n) (elim (x (Pi ((l List)) (-> (FunctionsAll x l) Nat))) n (zero (lam (l f) f))
     ((suc k h) (lam (l f) (h (cons (number (sum l) (berth (sum l) 1)) l) (f (berth (sum l) 1))))))))
 
+(def two (Path Nat 2 2) (line (i) (hcomp Nat 2 ((= i 0) (j) 2) ((= i 1) (j) 2))))
+`
+
+// nestedText has the lines of types, their elements, and what is asked of an
+// element at 1.
+const nestedText = `
+(load "integers.sexp")
+` + formersText + `
+(def start (Pi ((i I)) (-> (at turn i) Nat))
+  (lam (i z) (elim (x Nat) (unglue z) ((pos n) n) ((negsuc n) n))))
+(def first (Pi ((i I)) (at turn i))
+  (lam (i) (glue (pos 2) ((= i 0) (pos 1)) ((= i 1) (pos 2)))))
+
 ; The lines of types, their elements, and what is asked of an element at 1.
 (def P (-> I Nat (U 0)) (lam (i n) (Sigma ((z (at turn i))) (Pairs n (start i z)))))
 (def p (Pi ((i I) (n Nat)) (P i n)) (lam (i n) (pair (first i) (pairs n (start i (first i))))))
@@ -80,8 +87,11 @@ const nestedText = `
 (def FA (-> I Nat (U 0)) (lam (i n) (Pi ((z (at turn i))) (FunctionsAll n (cons (start i z) nil)))))
 (def fA (Pi ((i I) (n Nat)) (FA i n)) (lam (i n z) (functionsAll n (cons (start i z) nil))))
 (def askFA (Pi ((n Nat)) (-> (FA 1 n) Nat)) (lam (n f) (appliedAll n (cons (start 1 (pos 2)) nil) (f (pos 2)))))
+` + quaysText
 
-; n nested path types over a line, with the constant path of constant paths.
+// quaysText has n nested path types over a line, with the constant path of
+// constant paths.
+const quaysText = `
 (assume Quay (-> I (U 0))) (assume crane (Pi ((i I)) (Quay i)))
 (def Nested (-> Nat (Pi ((i I)) (Sigma ((A (U 0))) A)))
   (lam (n) (elim (x (Pi ((i I)) (Sigma ((A (U 0))) A))) n

@@ -18,8 +18,11 @@ type Settings struct {
 	Round  time.Duration // how long a round of one side lasts at least
 	Unit   func()        // one operation of the common unit
 	Units  float64       // parts of it
-	Repeat int           // how often an operation is repeated to see what it leaves on the heap; 0: not at all
-	NoHeap bool          // no extra run for the peak of the live heap
+	// Patience is for how long a size is measured: when it is over, three rounds are
+	// enough. 0: until all rounds are done.
+	Patience time.Duration
+	Repeat   int  // how often an operation is repeated to see what it leaves on the heap; 0: not at all
+	NoHeap   bool // no extra run for the peak of the live heap
 }
 
 // Point is a row at one size, as measured. Times are in nanoseconds.
@@ -133,7 +136,11 @@ func measure(row Row, size int, s Settings) (*Point, error) {
 	n, m := often(first, s.Round), often(firstBase, s.Round)
 	p := &Point{Size: size, Parts: parts(c.Parts)}
 	var wall, cpu, baseCPU []float64
+	begin := time.Now()
 	for round := range max(s.Rounds, 1) {
+		if s.Patience > 0 && round >= 3 && time.Since(begin) > s.Patience {
+			break
+		}
 		var e, b times
 		// The order alternates: neither side always runs on the other's garbage.
 		if round%2 == 0 {

@@ -106,6 +106,9 @@ func (t *Table) writeRow(w io.Writer, r *Result) {
 	if !r.Met {
 		met = "NO"
 	}
+	if n := len(p.Ratios); n < t.Rounds {
+		note = fmt.Sprintf(" (%d rounds)", n)
+	}
 	if r.Error != "" {
 		met, note = "failed", ": "+r.Error
 	}
