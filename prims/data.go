@@ -25,6 +25,8 @@ type Data struct {
 	declared     bool      // the declaration is complete
 	eliminator   term.Reference
 	label        *value.Label // its name in counters and profiles
+	// Written is the declaration as it was given, for saving it; nil until it is complete.
+	Written *term.Declaration
 }
 
 // Argument is one entry of a telescope: of parameters, or of a constructor's arguments.
@@ -47,6 +49,7 @@ type Constructor struct {
 	Dims      []string // the names of its dimensions
 	Boundary  []Boundary
 	Commutes  bool // it commutes with transport; otherwise a composite corrects it
+	recursive bool // an argument is recursive
 	ends      bool // a recursive argument is a path
 	constant  value.Value
 	reference term.Reference

@@ -142,6 +142,7 @@ func (x *declaring) constructor(w *term.Constructor) *Constructor {
 			nf := c.Normal(t)
 			if x.mentions(nf) {
 				a.Recursive = x.recursion(p.Type, nf, t)
+				k.recursive = true
 				k.ends = k.ends || a.Recursive.hasPath()
 			}
 			a.steady = x.steady(nf)

@@ -407,8 +407,27 @@ func (elimOp) eliminator(run *value.Run, f eval.Frame, args []eval.Arg) *Elimina
 }
 
 func (o elimOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
-	v := args[3].Eval(run, f)
+	v := run.Force(args[3].Eval(run, f))
+	if con, ok := v.(*Con); ok && !con.Of.recursive {
+		// without hypotheses one case is all it takes, however many there are
+		if k := con.Of.Index; k < len(args[4].Rows) && args[4].Rows[k][0].Payload.(term.Reference).Index == k {
+			run.Take(value.StepEliminate)
+			return enter(run, args[4].Rows[k][1].CloseAll(run, f), con.Args, con.Dims)
+		}
+	}
 	return o.eliminator(run, f, args).Eliminate(run, v)
+}
+
+// enter is a case without hypotheses at arguments and dimensions.
+func enter(run *value.Run, body value.Case, args []value.Value, dims []interval.Dim) value.Value {
+	env := body.Enter(run)
+	at := copy(env, args)
+	for k, d := range dims {
+		env[at+k] = value.DimensionOf(d)
+	}
+	v := body.Eval(run, env)
+	run.Release(len(env))
+	return v
 }
 
 func (o elimOp) Frame(run *value.Run, f eval.Frame, args []eval.Arg) value.Frame {
