@@ -365,7 +365,7 @@ func (w *blockWalk) head(b *Block, c term.Core, x blockScope, release *interval.
 		b.Release = append(b.Release, "a value for "+b.Name)
 	case *term.Global:
 		b.Head, b.Name = HeadDefinition, h.Name
-		if d, ok := w.s.e.lookup(h.Name).(*definition); ok && d.core == nil {
+		if d, ok := w.s.e.lookup(h.Name).(*definition); ok && !d.defined() {
 			b.Head = HeadAssumption
 			if d.hole {
 				b.Head = HeadHole

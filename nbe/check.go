@@ -372,7 +372,7 @@ func (c *checker) folds(core term.Core) bool {
 		switch x := core.(type) {
 		case *term.Global:
 			d, ok := c.e.lookup(x.Name).(*definition)
-			return ok && d.core != nil
+			return ok && d.defined()
 		case *term.Op:
 			e, ok := c.e.ops[x.Sig].(eval.Eliminator)
 			if !ok {

@@ -53,11 +53,11 @@ func (e *Engine) global(ctx context.Context, name string, ty, t *term.Written, h
 		return err
 	}
 	old, known := e.lookup(name).(*definition)
-	replaces := known && t != nil && old.core == nil
+	replaces := known && t != nil && !old.defined()
 	if !replaces && e.lookup(name) != nil {
 		return &term.Error{Kind: term.Duplicate, Place: place, Message: "this name is declared already", GotText: name}
 	}
-	d := &definition{name: name, place: place, hole: hole, site: value.Site{Kind: value.SiteDefinition, Name: name, Place: place}}
+	d := &definition{name: name, place: place, hole: hole, writtenType: ty, written: t, site: value.Site{Kind: value.SiteDefinition, Name: name, Place: place}}
 	err := e.call(ctx, gather(options).as(value.CheckingSite, &d.site), func(run *value.Run) {
 		c := e.checker(run, newContext())
 		d.typeCore, _ = c.Type(ty)
@@ -109,10 +109,10 @@ func (e *Engine) mentions(run *value.Run, core term.Core, old *definition) bool 
 			seen[g.Name] = true
 			if d, ok := e.lookup(g.Name).(*definition); ok {
 				found = found || d == old
-				if d.core != nil {
-					work = append(work, d.core)
+				if c := d.coreOf(run); c != nil {
+					work = append(work, c)
 				}
-				work = append(work, d.typeCore)
+				work = append(work, d.typeOf(run))
 			}
 			return !found
 		})
@@ -160,6 +160,7 @@ func (e *Engine) Declare(ctx context.Context, w *term.Declaration, options ...Ca
 	if err != nil {
 		return err
 	}
+	d.Written = w
 	xs := []any{d}
 	for _, k := range d.Constructors {
 		xs = append(xs, k)

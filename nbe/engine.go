@@ -40,6 +40,8 @@ type Engine struct {
 	high     *atomic.Int32
 	solved   map[value.Global]value.Global // copied when it grows
 	nat      *prims.Data
+	former   map[*term.Signature]formerID // what brings an operator
+	builtin  map[string]bool              // what every engine declares; not in saved state
 	title    string // in the labels of Go's profiles
 }
 
@@ -63,6 +65,9 @@ type definition struct {
 	code     *eval.Abstraction
 	place    term.Place
 	site     value.Site
+	// as it was given, for saving it; where it comes from a stream, that stands in stored
+	writtenType, written *term.Written
+	stored               *stored
 }
 
 func (d *definition) GlobalName() string               { return d.name }
@@ -104,7 +109,7 @@ func WithPlain(p value.Plain) Option {
 // New returns an engine with Empty, Bool, Nat, Sum and Circle declared. The
 // errors are those of the options.
 func New(options ...Option) (*Engine, error) {
-	e := &Engine{entries: map[string]any{}, words: map[string]*prims.Word{}, ops: map[*term.Signature]eval.Operation{}, high: new(atomic.Int32)}
+	e := &Engine{entries: map[string]any{}, words: map[string]*prims.Word{}, ops: map[*term.Signature]eval.Operation{}, former: map[*term.Signature]formerID{}, high: new(atomic.Int32)}
 	e.high.Store(64)
 	if err := e.register(prims.Table()); err != nil {
 		return nil, err
@@ -137,6 +142,10 @@ func New(options ...Option) (*Engine, error) {
 			return nil, err
 		}
 	}
+	e.builtin = map[string]bool{}
+	for name := range e.entries {
+		e.builtin[name] = true
+	}
 	return e, nil
 }
 
@@ -154,6 +163,7 @@ func (e *Engine) register(formers []prims.Former) error {
 				return &term.Error{Kind: term.Duplicate, Message: "the former " + f.Name + " brings an operator that is taken", GotText: o.Sig.Name}
 			}
 			e.ops[o.Sig] = o.Op
+			e.former[o.Sig] = formerID{f.Name, f.Version}
 		}
 	}
 	return nil
@@ -190,7 +200,7 @@ func (e *Engine) Fork() *Engine {
 			e.base = e.base.flat()
 		}
 	}
-	return &Engine{entries: map[string]any{}, base: e.base, words: e.words, ops: e.ops, notation: e.notation, limits: e.limits, plain: e.plain, high: e.high, solved: e.solved, nat: e.nat, title: e.title}
+	return &Engine{entries: map[string]any{}, base: e.base, words: e.words, ops: e.ops, former: e.former, builtin: e.builtin, notation: e.notation, limits: e.limits, plain: e.plain, high: e.high, solved: e.solved, nat: e.nat, title: e.title}
 }
 
 func (l *layer) flat() *layer {
@@ -316,7 +326,7 @@ type view struct {
 
 func (u *view) Unfold(run *value.Run, g value.Global) value.Value {
 	d, ok := g.(*definition)
-	if !ok || d.core == nil {
+	if !ok || !d.defined() {
 		return g.Unfold(run)
 	}
 	if v, ok := u.values[d]; ok {
@@ -326,7 +336,7 @@ func (u *view) Unfold(run *value.Run, g value.Global) value.Value {
 	if u.opaque[d.name] {
 		v = value.NewNeutral(&value.GlobalHead{Global: d})
 	} else {
-		v = d.code.Eval(run, nil)
+		v = d.evaluate(run)
 	}
 	u.values[d] = v
 	return v
@@ -336,7 +346,7 @@ func (u *view) Folded(run *value.Run, g value.Global) value.Value {
 	if d, ok := g.(*definition); ok && u.opaque[d.name] {
 		return u.Unfold(run, g)
 	}
-	if d, ok := g.(*definition); ok && u.folded != nil && d.core != nil {
+	if d, ok := g.(*definition); ok && u.folded != nil && d.defined() {
 		v, ok := u.folded[d]
 		if !ok {
 			v = run.Fold(value.NewNeutral(&value.GlobalHead{Global: d}))

@@ -75,6 +75,7 @@ type callOptions struct {
 	opaque    map[string]bool
 	stats     *Stats
 	inclusion bool
+	recheck   bool
 	draw      *rand.Rand
 	observation
 }
