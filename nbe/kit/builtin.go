@@ -27,6 +27,17 @@ func Builtin() []Former {
 	}
 }
 
+// Everything is all built-in formers as one, for generators that are to draw
+// from all of them.
+func Everything() Former {
+	all := Builtin()
+	out := Former{Name: "all built-in formers", Types: func(g *Gen) Sample { return all[g.Choose(len(all))].Types(g) }}
+	for _, f := range all {
+		out.Script += f.Script
+	}
+	return out
+}
+
 func functions(g *Gen) Sample {
 	a := Base(g)
 	b := Family(g, "B", a.Type)
@@ -294,10 +305,17 @@ const glued = `
 
 func gluing(g *Gen) Sample {
 	a := Abstract(g).Type
+	if g.Choose(2) == 1 {
+		l := g.Declare("L", term.Arrow(term.Interval(), universe), func(g *Gen) *term.Written { return term.Lam(Concrete(g), "_") })
+		a = term.Apply(l, term.Name(g.dims[len(g.dims)-1]))
+	}
 	t := Base(g).Type
 	e := g.Variable("e", fill("(Equiv T A)", "T", t, "A", a), nil)
 	r := g.Dimension()
 	s := Sample{Type: term.Glue(a, term.GlueType(term.Eq(r, 0), t, e)), Shallow: true}
+	if r.Kind == term.NameKind && r.Word != height && !Mentions(t, height) {
+		s.Still = []*term.Written{term.Eq(r, 0)} // there it is T, whatever A and e are
+	}
 	s.Element = func(g *Gen) *term.Written {
 		if g.Choose(2) == 1 {
 			return fill("(hoist A T E R X)", "A", a, "T", t, "E", e, "R", r, "X", g.Variable("t", t, nil))

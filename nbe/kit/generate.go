@@ -183,6 +183,9 @@ type Sample struct {
 	Element func(g *Gen) *term.Written
 	// Eliminations, if not nil, are eliminations of elements of Type.
 	Eliminations func(g *Gen) []Elimination
+	// Still are conjunctions of a face on which the type does not vary along a
+	// line, though what it is made of does.
+	Still []*term.Written
 	// Shallow keeps composites from being drawn as elements, for types whose
 	// composites of composites are large.
 	Shallow bool

@@ -96,6 +96,7 @@ type Instance struct {
 	// Eliminations are those of the type; for Transp and Comp, at the end 1 of the line.
 	Eliminations []Elimination
 	Expand       func(x *term.Written) *term.Written
+	still        bool // the line is constant on the face as it was drawn
 }
 
 // Elimination is an elimination of the type under test, and what the former
@@ -207,7 +208,7 @@ func (x *Instance) Box() Box { return Box{x.Type, x.Base, x.Walls} }
 
 // heightAt is what the height is at a point of the line.
 func (x *Instance) heightAt(r *term.Written) *term.Written {
-	if x.Op == Transp && len(x.Faces) > 0 {
+	if x.Op == Transp && len(x.Faces) > 0 && !x.still {
 		return term.Min(r, off(x.Faces)) // constant on the face
 	}
 	return r
@@ -269,7 +270,9 @@ func draw(f Former, op Operation, source Source) *Instance {
 	}
 	x.Expand = s.Expand
 	if x.Op == Transp {
-		if g.Choose(4) > 0 {
+		if len(s.Still) > 0 && g.Choose(2) == 1 {
+			x.Faces, x.still = s.Still, true
+		} else if g.Choose(4) > 0 {
 			x.Faces = g.Faces()
 		}
 		x.Base = Replace(s.Any(along), map[string]*term.Written{height: zero})

@@ -29,12 +29,15 @@ func (t *trial) variables() *Failure {
 		}
 		to, err := t.es.world(t.build, vars, t.x.Dimensions)
 		if err != nil {
-			continue // a later variable's type may need more of this one than the value has
+			t.es.unfit++ // a later variable's type may need more of this one than the value has
+			continue
 		}
 		put, err := to.check(val, v.Type)
 		if err != nil {
+			t.es.unfit++
 			continue
 		}
+		t.es.put++
 		for _, s := range t.subjects() {
 			if f := t.valueFor(to, v.Name, put.v, s, wrap(s.w), v.Name+" := "+val.String()); f != nil {
 				return f

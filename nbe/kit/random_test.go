@@ -19,15 +19,16 @@ import (
 
 // What rapid draws checks, and pastes back as a script that does too.
 func TestTermsForRapid(t *testing.T) {
+	f := kit.Everything()
+	e := kit.Engine(t, f.Script)
 	rapid.Check(t, func(r *rapid.T) {
-		f := kit.Builtin()[2]
 		x := kit.Terms(f).Draw(r, "term")
-		e := kit.Engine(t, "")
 		s := x.Scope(t, e)
 		_, err := s.Check(t.Context(), x.Term, x.Type)
 		require.NoError(r, err)
-		kit.Engine(t, x.Script())
 	})
+	x := kit.DrawTerm(f, kit.FromSeed(3))
+	kit.Engine(t, f.Script+x.Script())
 }
 
 func FuzzLawsOfPairs(f *testing.F) { kit.FuzzLaws(f, kit.Builtin()[2]) }

@@ -133,7 +133,7 @@ func (es *engines) account() string {
 		}
 		parts = append(parts, text)
 	}
-	return "laws tried: " + strings.Join(parts, ", ")
+	return fmt.Sprintf("laws tried: %s; %d values put for variables, %d did not fit", strings.Join(parts, ", "), es.put, es.unfit)
 }
 
 // try draws an instance and tries the laws on it, or one of them.

@@ -51,6 +51,8 @@ type engines struct {
 	made   map[string]*nbe.Engine
 	tried  map[string]int // by law: how often it was tried
 	spent  map[string]int // and how often a budget ran out
+	put    int            // how many values were put for variables
+	unfit  int            // and how many did not fit what was drawn after them
 }
 
 func (es *engines) of(b build) (*nbe.Engine, error) {
