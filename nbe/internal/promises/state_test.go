@@ -14,7 +14,10 @@ import (
 	"github.com/stretchr/testify/require"
 
 	"example.com/boxwright/nbe"
+	"example.com/boxwright/nbe/eval"
 	"example.com/boxwright/nbe/term"
+	"example.com/boxwright/prims"
+	"example.com/boxwright/value"
 )
 
 func saved(t testing.TB, e *nbe.Engine) []byte {
@@ -166,4 +169,39 @@ func TestLoadingIsFasterThanChecking(t *testing.T) {
 	}
 	t.Logf("%d definitions, %d bytes: checked in %v, loaded in %v, %.0f times faster", n, len(src), checking, best, float64(checking)/float64(best))
 	require.Less(t, best, checking)
+}
+
+// dock is a former of a host's: one word for a universe.
+func dock(version int) prims.Former {
+	return prims.Former{
+		Name: "docks", Version: version,
+		Words: []prims.Word{{Shape: term.Shape{Word: "Dock"}, Infer: func(value.Checker, *term.Written) (value.Core, value.Value) {
+			return &term.Op{Sig: dockSig}, prims.NewUniverse(1)
+		}}},
+		Operators: []prims.Operator{{Sig: dockSig, Op: dockOp{}}},
+	}
+}
+
+var dockSig = &term.Signature{Name: "Dock", Word: "Dock"}
+
+type dockOp struct{}
+
+func (dockOp) Eval(*value.Run, eval.Frame, []eval.Arg) value.Value { return prims.NewUniverse(0) }
+
+// A stream that uses a host's former asks for it, in the same version.
+func TestFormersOfHostsAreAskedFor(t *testing.T) {
+	e, err := nbe.New(nbe.WithFormers(dock(1)))
+	require.NoError(t, err)
+	ctx := context.Background()
+	require.NoError(t, e.Define(ctx, "quays", term.Universe(1), term.Form("Dock")))
+	src := saved(t, e)
+	for version, kind := range []term.ErrorKind{term.NotFound, 0, term.NotFound} {
+		var options []nbe.Option
+		if version > 0 {
+			options = append(options, nbe.WithFormers(dock(version)))
+		}
+		other, err := nbe.New(options...)
+		require.NoError(t, err)
+		require.Equal(t, kind, term.KindOf(other.Load(ctx, bytes.NewReader(src))), "version %d", version)
+	}
 }
