@@ -17,22 +17,22 @@ func Hcomp(run *value.Run, a, base value.Value, walls value.System) value.Value 
 		return w.End(run)
 	}
 	t := run.Force(a)
+	var back *value.Path // what the run came from, where it is traced
 	if run.Traced() {
-		return hcompTraced(run, t, base, walls)
+		if run.Observed() && !run.Reporting() {
+			return hcompObserved(run, t, base, walls)
+		}
+		former, _ := t.(value.Type)
+		back = run.InHcomp(former)
 	}
-	return hcompAt(run, t, base, walls)
-}
-
-// hcompAt is Hcomp at a type that is forced.
-func hcompAt(run *value.Run, t, base value.Value, walls value.System) value.Value {
 	switch t := t.(type) {
 	case value.Type:
 		run.Composite(t)
-		return t.Hcomp(run, base, walls)
+		return run.Left(back, t.Hcomp(run, base, walls))
 	case *value.Neutral:
 		run.Composite(nil)
 		frontier, faces := t.Frontier()
-		return stuckHcomp(t, base, walls, frontier, faces)
+		return run.Left(back, stuckHcomp(t, base, walls, frontier, faces))
 	default:
 		run.Fault("hcomp at %T, which is no type", t)
 		return nil
@@ -56,21 +56,21 @@ func Transp(run *value.Run, i value.Name, a value.Value, phi interval.Face, v va
 	}
 	i, a = FreshLine(run, i, a, phi.Support()|v.Support())
 	t := run.Force(a)
+	var back *value.Path // what the run came from, where it is traced
 	if run.Traced() {
-		return transpTraced(run, i, t, phi, v)
+		if run.Observed() && !run.Reporting() {
+			return transpObserved(run, i, t, phi, v)
+		}
+		former, _ := t.(value.Type)
+		back = run.InTransp(former)
 	}
-	return transpAt(run, i, t, phi, v)
-}
-
-// transpAt is Transp along a line that is forced and whose name is fresh.
-func transpAt(run *value.Run, i value.Name, t value.Value, phi interval.Face, v value.Value) value.Value {
 	switch t := t.(type) {
 	case value.Type:
 		run.Transport(t)
-		return t.Transp(run, i, phi, v)
+		return run.Left(back, t.Transp(run, i, phi, v))
 	case *value.Neutral:
 		run.Transport(nil)
-		return stuckTransp(i, t, phi, v)
+		return run.Left(back, stuckTransp(i, t, phi, v))
 	default:
 		run.Fault("transp along %T, which is no type", t)
 		return nil

@@ -6,8 +6,8 @@ import (
 	"example.com/boxwright/value/interval"
 )
 
-// The rules in a run that is traced: the same rules, at the site of the former
-// or data type that they belong to, and reported to whoever follows the run.
+// The rules in a run that somebody follows: reported, and then applied by calling
+// the rule again, which sees that it has been reported (Run.Report).
 
 // The labels of the built-in formers, in counters and profiles.
 var (
@@ -44,7 +44,7 @@ func (g *GlueType) Label() *value.Label { return glueLabel }
 // Label is the data type's name.
 func (t *DataType) Label() *value.Label { return t.Data.label }
 
-func hcompTraced(run *value.Run, t, base value.Value, walls value.System) value.Value {
+func hcompObserved(run *value.Run, t, base value.Value, walls value.System) value.Value {
 	former, _ := t.(value.Type)
 	back := run.InHcomp(former)
 	var e *value.Event
@@ -53,7 +53,8 @@ func hcompTraced(run *value.Run, t, base value.Value, walls value.System) value.
 			return term.Hcomp(s.Value(t), s.Value(base), s.Walls(walls)...)
 		})
 	}
-	v := hcompAt(run, t, base, walls)
+	run.Report()
+	v := Hcomp(run, t, base, walls)
 	if n, ok := v.(*value.Neutral); ok && n.Length() == 0 {
 		run.Stuck(n)
 	}
@@ -62,7 +63,7 @@ func hcompTraced(run *value.Run, t, base value.Value, walls value.System) value.
 	return v
 }
 
-func transpTraced(run *value.Run, i value.Name, t value.Value, phi interval.Face, v value.Value) value.Value {
+func transpObserved(run *value.Run, i value.Name, t value.Value, phi interval.Face, v value.Value) value.Value {
 	former, _ := t.(value.Type)
 	back := run.InTransp(former)
 	var e *value.Event
@@ -71,7 +72,8 @@ func transpTraced(run *value.Run, i value.Name, t value.Value, phi interval.Face
 			return term.Transp(interval.Var(i).String(), s.Value(t), s.Face(phi), s.Value(v))
 		})
 	}
-	w := transpAt(run, i, t, phi, v)
+	run.Report()
+	w := Transp(run, i, t, phi, v)
 	if n, ok := w.(*value.Neutral); ok && n.Length() == 0 {
 		run.Stuck(n)
 	}
@@ -80,17 +82,17 @@ func transpTraced(run *value.Run, i value.Name, t value.Value, phi interval.Face
 	return w
 }
 
-// traced eliminates v, which is forced, at the elimination's site.
-func (e *Eliminator) traced(run *value.Run, v value.Value) value.Value {
+// followed eliminates v, which is forced, and reports that.
+func (e *Eliminator) followed(run *value.Run, v value.Value) value.Value {
 	back := run.InElimination(e.data.label)
 	var event *value.Event
-	if _, stuck := v.(*value.Neutral); !stuck && run.Followed() {
+	if _, stuck := v.(*value.Neutral); !stuck {
 		event = run.Begins(value.StepEliminate, "elim "+e.data.Name, func(s *value.Sketch) *term.Written {
 			return (&elimFrame{e}).SketchOn(s, s.Value(v))
 		})
 	}
-	w := e.eliminate(run, v)
-	run.Ends(event, w)
+	run.Report()
+	w := run.Ends(event, e.Eliminate(run, v))
 	run.Out(back)
 	return w
 }

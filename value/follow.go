@@ -80,6 +80,19 @@ func (f *Follow) Seen() (reported, cut int64) { return f.seen, f.cut }
 // Followed reports whether somebody follows the run.
 func (r *Run) Followed() bool { return hooks && r.trace != nil && r.trace.Follow != nil }
 
+// Observed reports whether somebody looks at each rule, not only at its site.
+func (r *Run) Observed() bool { return r.trace.Follow != nil || r.trace.stuck != nil }
+
+// Report says that the rule which is called next has been reported.
+func (r *Run) Report() { r.trace.reporting = true }
+
+// Reporting reports, once, whether the rule at hand has been reported.
+func (r *Run) Reporting() bool {
+	was := r.trace.reporting
+	r.trace.reporting = false
+	return was
+}
+
 // Begins reports that a rule begins; before sketches what it is applied to. The
 // result goes to Ends. Only a run that is followed may call it.
 func (r *Run) Begins(k StepKind, rule string, before func(*Sketch) *term.Written) *Event {

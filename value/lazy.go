@@ -170,7 +170,10 @@ type substituted struct {
 func (w *substituted) Do(run *Run) Value {
 	v := run.Force(w.v)
 	if run.Traced() {
-		return w.doTraced(run, v)
+		back := run.In(SubstitutionSite)
+		run.Pushed++
+		run.trace.at.Counts.Pushed++
+		return run.Left(back, run.push(v, w.s))
 	}
 	run.Pushed++
 	return run.push(v, w.s)

@@ -137,8 +137,10 @@ type Trace struct {
 	due     atomic.Bool // a sample of time is due
 	sampled time.Time
 	stuck   *stuckAt // nil where nobody is going to ask
-	stop    chan struct{}
-	stopped bool
+	// reporting: the rule that is called next has been reported
+	reporting bool
+	stop      chan struct{}
+	stopped   bool
 }
 
 // Root is the path of no sites, below which all others are.
@@ -253,6 +255,14 @@ func (r *Run) Out(back *Path) {
 	if t := r.trace; t.at != back {
 		t.leave(back)
 	}
+}
+
+// Left is Out for a rule that returns v; back is nil where the run is not traced.
+func (r *Run) Left(back *Path, v Value) Value {
+	if back != nil && r.trace.at != back {
+		r.trace.leave(back)
+	}
+	return v
 }
 
 func (t *Trace) enter(from *Path, s *Site) {
@@ -416,15 +426,5 @@ func (w *foldWork) doTraced(run *Run, n *Neutral) Value {
 	}
 	run.Ends(e, v)
 	run.Out(caller)
-	return v
-}
-
-// doTraced is a substitution pushed, at its own site.
-func (w *substituted) doTraced(run *Run, v Value) Value {
-	back := run.In(SubstitutionSite)
-	run.Pushed++
-	run.trace.at.Counts.Pushed++
-	v = run.push(v, w.s)
-	run.Out(back)
 	return v
 }

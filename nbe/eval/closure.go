@@ -73,8 +73,9 @@ func (c *closure) Substitute(run *value.Run, s *value.Subst) value.Closure {
 
 // Apply evaluates the body in a frame of the run's.
 func (c *closure) Apply(run *value.Run, arg value.Value) value.Value {
+	var back *value.Path // what the run came from, where it is traced
 	if run.Traced() {
-		return c.applyTraced(run, arg)
+		back = run.Called(c.abs.site)
 	}
 	n := 1 + len(c.env)
 	f := run.Frame(n)
@@ -82,7 +83,7 @@ func (c *closure) Apply(run *value.Run, arg value.Value) value.Value {
 	copy(f[1:], c.env)
 	v := c.abs.body.Eval(run, f)
 	run.Release(n)
-	return v
+	return run.Left(back, v)
 }
 
 // Open is the body in a cell.
@@ -95,8 +96,9 @@ func (c *closure) Hint() string { return c.HintAt(0) }
 
 // ApplyAll evaluates the body under all its arguments.
 func (c *closure) ApplyAll(run *value.Run, args []value.Value) value.Value {
+	var back *value.Path
 	if run.Traced() {
-		return c.applyAllTraced(run, args)
+		back = run.In(c.abs.site)
 	}
 	n := len(args) + len(c.env)
 	f := run.Frame(n)
@@ -104,7 +106,7 @@ func (c *closure) ApplyAll(run *value.Run, args []value.Value) value.Value {
 	copy(f[len(args):], c.env)
 	v := c.abs.body.Eval(run, f)
 	run.Release(n)
-	return v
+	return run.Left(back, v)
 }
 
 // OpenAll is the body under all its arguments, in a cell.
@@ -147,7 +149,8 @@ func (c caseClosure) Enter(run *value.Run) []value.Value {
 // Eval evaluates the body in a frame of Enter's.
 func (c caseClosure) Eval(run *value.Run, frame []value.Value) value.Value {
 	if run.Traced() {
-		return c.evalTraced(run, frame)
+		back := run.In(c.abs.site)
+		return run.Left(back, c.abs.body.Eval(run, frame))
 	}
 	return c.abs.body.Eval(run, frame)
 }
@@ -189,10 +192,14 @@ type thunk struct {
 // Do evaluates the term. The environment is the frame.
 func (t *thunk) Do(run *value.Run) value.Value {
 	if run.Traced() {
-		return t.doTraced(run)
+		back := run.In(t.Site())
+		return run.Left(back, t.code.Eval(run, t.env))
 	}
 	return t.code.Eval(run, t.env)
 }
+
+// Site is the definition or term whose code it is.
+func (t *thunk) Site() *value.Site { return t.code.(*opCode).site }
 
 func newThunk(run *value.Run, code Code, env []value.Value) value.Value {
 	return (&thunk{}).cell(run, code, env)
