@@ -2,7 +2,7 @@
 ; and what its proofs compute to.
 (load "booleans.sexp")
 (load "decidable.sexp")
-(load "suspension.sexp")
+(load "circle.sexp")
 
 ; HoTT Book 2.10.3; CCHM 7.2: the canonical map from paths of types to
 ; equivalences, which transports the identity, is an equivalence.
@@ -49,15 +49,3 @@
 (normal (winding (then turn-once (then turn-once (back turn-once)))) (pos 1))
 (normal (at (winding-turns (pos 3)) 0) (pos 3))
 (reject (same (Path Circle base base) (then turn-once turn-back) rest))
-
-; Book 6.5, 8.5: the suspended circle, and the Hopf fibration over it with circles
-; for fibers; walking around the meridians turns the fiber once.
-(same (U 0) (hopf north) Circle)
-(same (U 0) (hopf south) Circle)
-(same (Pi ((a Circle)) (-> I (U 0))) (lam (a i) (hopf (merid a i))) (lam (a i) (at (ua Circle Circle (rotate-equivalence a)) i)))
-(same (-> Circle Circle) (rotate base) (lam (b) b))
-(normal hopf-degree (pos 1))
-(normal (winding (line (i) (rotate (loop i) base))) (pos 1))
-(normal (winding (line (i) (rotate base (loop i)))) (pos 1))
-(normal (winding (line (i) (rotate (loop i) (loop i)))) (pos 2))
-(normal (winding (line (i) (rotate (loop i) (loop (rev i))))) (pos 0))
