@@ -165,27 +165,26 @@ func (e *Eliminator) hypothesisOf(run *value.Run, n *value.Neutral) (value.Value
 // Eliminate eliminates v, on demand; the result may be lazy.
 func (e *Eliminator) Eliminate(run *value.Run, v value.Value) value.Value {
 	v = run.Force(v)
+	var back *value.Path // what the run came from, where it is traced
 	if run.Traced() {
-		return e.traced(run, v)
+		if run.Followed() && !run.Reporting() {
+			return e.followed(run, v)
+		}
+		back = run.InElimination(e.data.label)
 	}
-	return e.eliminate(run, v)
-}
-
-// eliminate eliminates v, which is forced.
-func (e *Eliminator) eliminate(run *value.Run, v value.Value) value.Value {
 	switch v := v.(type) {
 	case *value.Neutral:
 		if len(e.assumed) > 0 {
 			if h, ok := e.hypothesisOf(run, v); ok {
-				return h
+				return run.Left(back, h)
 			}
 		}
-		return v.Eliminate(run, &elimFrame{e})
+		return run.Left(back, v.Eliminate(run, &elimFrame{e}))
 	case *Formal:
-		return e.composite(run, v)
+		return run.Left(back, e.composite(run, v))
 	case *Number:
 		if w, ok := e.numeral(run, v); ok {
-			return w
+			return run.Left(back, w)
 		}
 	case *Successors:
 		if e.step != nil && e.step.affine && !run.Plain.NoNumerals {
@@ -194,7 +193,7 @@ func (e *Eliminator) eliminate(run *value.Run, v value.Value) value.Value {
 			if rest == nil {
 				rest = newNumber(e.data, natural{})
 			}
-			return successors(run, e.data, e.step.count.times(run, n), run.Force(e.Eliminate(run, rest)))
+			return run.Left(back, successors(run, e.data, e.step.count.times(run, n), run.Force(e.Eliminate(run, rest))))
 		}
 	}
 	c, args, ok := shown(run, v)
@@ -205,7 +204,7 @@ func (e *Eliminator) eliminate(run *value.Run, v value.Value) value.Value {
 	if con, ok := v.(*Con); ok {
 		dims = con.Dims
 	}
-	return e.onCase(run, c, args, dims)
+	return run.Left(back, e.onCase(run, c, args, dims))
 }
 
 func (e *Eliminator) onCase(run *value.Run, c *Constructor, args []value.Value, dims []interval.Dim) value.Value {
