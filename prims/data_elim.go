@@ -410,8 +410,15 @@ func (o elimOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value 
 	if con, ok := v.(*Con); ok && !con.Of.recursive {
 		// without hypotheses one case is all it takes, however many there are
 		if k := con.Of.Index; k < len(args[4].Rows) && args[4].Rows[k][0].Payload.(term.Reference).Index == k {
+			var back *value.Path // what the run came from, where it is traced
+			if run.Traced() {
+				back = run.InElimination(con.Of.Data.label)
+				if run.Followed() {
+					return enterFollowed(run, back, args[4].Rows[k][1].CloseAll(run, f), con)
+				}
+			}
 			run.Take(value.StepEliminate)
-			return enter(run, args[4].Rows[k][1].CloseAll(run, f), con.Args, con.Dims)
+			return run.Left(back, enter(run, args[4].Rows[k][1].CloseAll(run, f), con.Args, con.Dims))
 		}
 	}
 	return o.eliminator(run, f, args).Eliminate(run, v)

@@ -138,3 +138,18 @@ func boundaryFollowed(run *value.Run, c *Con, v value.Value) value.Value {
 	})
 	return run.Ends(e, v)
 }
+
+// enterFollowed is an elimination of a constructor without recursive arguments,
+// of which only one case has been made.
+func enterFollowed(run *value.Run, back *value.Path, body value.Case, con *Con) value.Value {
+	e := run.Begins(value.StepEliminate, "elim "+con.Of.Data.Name, func(s *value.Sketch) *term.Written {
+		var names []string
+		for n := range body.Arity() {
+			names = append(names, hint(body.HintAt(n), "_"))
+		}
+		return term.Elim("_", term.Name("…"), s.Value(con), term.Case(con.Of.Name, term.Name("…"), names...))
+	})
+	run.Take(value.StepEliminate)
+	v := run.Ends(e, enter(run, body, con.Args, con.Dims))
+	return run.Left(back, v)
+}
