@@ -390,9 +390,11 @@ func (x *accountant) elimination() AccountSection {
 	return out
 }
 
-var applyFamily = &value.Rule{Name: "x", Apply: func(run *value.Run, c *value.Captured, v value.Value) value.Value {
+var applyFamily = &value.Rule{Name: "x", Apply: applyFamilyRule}
+
+func applyFamilyRule(run *value.Run, c *value.Captured, v value.Value) value.Value {
 	return Apply(run, c.Values[0], v)
-}}
+}
 
 // argumentsOnly binds the arguments of k without its dimensions.
 func (x *accountant) argumentsOnly(k *Constructor, params []value.Value) (args []value.Value, dims []interval.Dim, says []string) {

@@ -21,37 +21,47 @@ func FiberType(run *value.Run, t, a, f, y value.Value) value.Value {
 	return &Sigma{t, captured(run, fiberPath, a, f, y)}
 }
 
-var fiberPath = &value.Rule{Name: "x", Apply: func(run *value.Run, c *value.Captured, x value.Value) value.Value {
+var fiberPath = &value.Rule{Name: "x", Apply: fiberPathRule}
+
+func fiberPathRule(run *value.Run, c *value.Captured, x value.Value) value.Value {
 	a, f, y := c.Values[0], c.Values[1], c.Values[2]
 	return &Path{value.Constant{V: a}, y, LaterApply(run, f, x)}
-}}
+}
 
 // ContrType says that X is contractible.
 func ContrType(run *value.Run, x value.Value) value.Value {
 	return &Sigma{x, captured(run, contraction, x)}
 }
 
-var contraction = &value.Rule{Name: "x", Apply: func(run *value.Run, c *value.Captured, center value.Value) value.Value {
-	return &Pi{c.Values[0], captured(run, contractionPath, c.Values[0], center)}
-}}
+var contraction = &value.Rule{Name: "x", Apply: contractionRule}
 
-var contractionPath = &value.Rule{Name: "y", Apply: func(_ *value.Run, c *value.Captured, y value.Value) value.Value {
+func contractionRule(run *value.Run, c *value.Captured, center value.Value) value.Value {
+	return &Pi{c.Values[0], captured(run, contractionPath, c.Values[0], center)}
+}
+
+var contractionPath = &value.Rule{Name: "y", Apply: contractionPathRule}
+
+func contractionPathRule(_ *value.Run, c *value.Captured, y value.Value) value.Value {
 	return &Path{value.Constant{V: c.Values[0]}, c.Values[1], y}
-}}
+}
 
 // EquivType is the type of equivalences from T to A.
 func EquivType(run *value.Run, t, a value.Value) value.Value {
 	return &Sigma{&Pi{t, value.Constant{V: a}}, captured(run, isEquivalence, t, a)}
 }
 
-var isEquivalence = &value.Rule{Name: "f", Apply: func(run *value.Run, c *value.Captured, f value.Value) value.Value {
+var isEquivalence = &value.Rule{Name: "f", Apply: isEquivalenceRule}
+
+func isEquivalenceRule(run *value.Run, c *value.Captured, f value.Value) value.Value {
 	t, a := c.Values[0], c.Values[1]
 	return &Pi{a, captured(run, contractibleFiber, t, a, f)}
-}}
+}
 
-var contractibleFiber = &value.Rule{Name: "y", Apply: func(run *value.Run, c *value.Captured, y value.Value) value.Value {
+var contractibleFiber = &value.Rule{Name: "y", Apply: contractibleFiberRule}
+
+func contractibleFiberRule(run *value.Run, c *value.Captured, y value.Value) value.Value {
 	return ContrType(run, FiberType(run, c.Values[0], c.Values[1], c.Values[2], y))
-}}
+}
 
 // LineEquiv is the equivalence from L(0) to L(1) along the line i.L, whose map
 // is transport. With
@@ -72,18 +82,22 @@ func LineEquiv(run *value.Run, i value.Name, l value.Value) value.Value {
 	)
 }
 
-var alongLine = &value.Rule{Name: "x", Apply: func(run *value.Run, c *value.Captured, x value.Value) value.Value {
-	return Transp(run, c.I, c.Line[0], interval.Bot(), x)
-}}
+var alongLine = &value.Rule{Name: "x", Apply: alongLineRule}
 
-var lineFibers = &value.Rule{Name: "y", Apply: func(run *value.Run, c *value.Captured, y value.Value) value.Value {
+func alongLineRule(run *value.Run, c *value.Captured, x value.Value) value.Value {
+	return Transp(run, c.I, c.Line[0], interval.Bot(), x)
+}
+
+var lineFibers = &value.Rule{Name: "y", Apply: lineFibersRule}
+
+func lineFibersRule(run *value.Run, c *value.Captured, y value.Value) value.Value {
 	i, line := c.I, c.Line[0]
 	l := run.Fresh(line.Support() | y.Support() | interval.Single(i))
 	v0 := Backward(run, i, line, interval.Bot(), y)
 	end := lineFiberPath(run, i, line, y, v0, l)
 	center := NewPair(v0, over(l, run.At(end, i, interval.One())))
 	return NewPair(center, &Lam{value.NewCaptured(run, value.Captured{Rule: lineContraction, Values: []value.Value{y}, I: i, Line: c.Line})})
-}}
+}
 
 // lineFiberPath is b l i, at l and i.
 func lineFiberPath(run *value.Run, i value.Name, line, y, v0 value.Value, l value.Name) value.Value {
@@ -93,7 +107,9 @@ func lineFiberPath(run *value.Run, i value.Name, line, y, v0 value.Value, l valu
 	return Fill(run, i, line, v0, walls)
 }
 
-var lineContraction = &value.Rule{Name: "p", Apply: func(run *value.Run, c *value.Captured, xp value.Value) value.Value {
+var lineContraction = &value.Rule{Name: "p", Apply: lineContractionRule}
+
+func lineContractionRule(run *value.Run, c *value.Captured, xp value.Value) value.Value {
 	i, line, y := c.I, c.Line[0], c.Values[0]
 	x, p := LaterFirst(run, xp), LaterSecond(run, xp)
 	used := line.Support() | y.Support() | xp.Support() | interval.Single(i)
@@ -115,4 +131,4 @@ var lineContraction = &value.Rule{Name: "p", Apply: func(run *value.Run, c *valu
 		Line(run, interval.Eq1(k), i, run.Substitute(run.Substitute(w, interval.Assign(k, atL)), flip))
 	square := LaterComp(run, i, line, run.At(alpha, k, atK.Min(atL)), walls)
 	return over(k, NewPair(alpha, over(l, square)))
-}}
+}

@@ -48,25 +48,29 @@ func (p *Pi) Hcomp(run *value.Run, f value.Value, walls value.System) value.Valu
 	return &Lam{value.NewCaptured(run, value.Captured{Rule: hcompPi, Values: []value.Value{p, f}, Walls: walls})}
 }
 
-var hcompPi = &value.Rule{Name: "x", Apply: func(run *value.Run, c *value.Captured, x value.Value) value.Value {
+var hcompPi = &value.Rule{Name: "x", Apply: hcompPiRule}
+
+func hcompPiRule(run *value.Run, c *value.Captured, x value.Value) value.Value {
 	p, f := run.Force(c.Values[0]).(*Pi), c.Values[1]
 	walls := c.Walls.Map(run, x.Support(), 0, func(run *value.Run, _ value.Name, u value.Value, cut *value.Subst) value.Value {
 		return Apply(run, u, run.Substitute(x, cut))
 	})
 	return Hcomp(run, p.Codomain.Open(run, x), LaterApply(run, f, x), walls)
-}}
+}
 
 // Transp is a function that transports its argument back and its value forth.
 func (p *Pi) Transp(run *value.Run, i value.Name, phi interval.Face, f value.Value) value.Value {
 	return &Lam{value.NewCaptured(run, value.Captured{Rule: transpPi, Values: []value.Value{f}, Face: phi, I: i, Line: []value.Value{p}})}
 }
 
-var transpPi = &value.Rule{Name: "x", Apply: func(run *value.Run, c *value.Captured, x value.Value) value.Value {
+var transpPi = &value.Rule{Name: "x", Apply: transpPiRule}
+
+func transpPiRule(run *value.Run, c *value.Captured, x value.Value) value.Value {
 	p, f := run.Force(c.Line[0]).(*Pi), c.Values[0]
 	back := Backfill(run, c.I, p.Domain, c.Face, x)
 	start := Backward(run, c.I, p.Domain, c.Face, x)
 	return Transp(run, c.I, p.Codomain.Open(run, back), c.Face, LaterApply(run, f, start))
-}}
+}
 
 // Apply is f x, on demand; the result may be lazy.
 func Apply(run *value.Run, f, x value.Value) value.Value {

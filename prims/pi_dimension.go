@@ -25,23 +25,27 @@ func (p *PiDimension) Hcomp(run *value.Run, f value.Value, walls value.System) v
 	return &Lam{value.NewCaptured(run, value.Captured{Rule: hcompPiDimension, Values: []value.Value{p, f}, Walls: walls})}
 }
 
-var hcompPiDimension = &value.Rule{Name: "i", Apply: func(run *value.Run, c *value.Captured, r value.Value) value.Value {
+var hcompPiDimension = &value.Rule{Name: "i", Apply: hcompPiDimensionRule}
+
+func hcompPiDimensionRule(run *value.Run, c *value.Captured, r value.Value) value.Value {
 	p, f := run.Force(c.Values[0]).(*PiDimension), c.Values[1]
 	walls := c.Walls.Map(run, r.Support(), 0, func(run *value.Run, _ value.Name, u value.Value, cut *value.Subst) value.Value {
 		return Apply(run, u, run.Substitute(r, cut))
 	})
 	return Hcomp(run, p.Codomain.Open(run, r), LaterApply(run, f, r), walls)
-}}
+}
 
 // Transp transports at each dimension.
 func (p *PiDimension) Transp(run *value.Run, i value.Name, phi interval.Face, f value.Value) value.Value {
 	return &Lam{value.NewCaptured(run, value.Captured{Rule: transpPiDimension, Values: []value.Value{f}, Face: phi, I: i, Line: []value.Value{p}})}
 }
 
-var transpPiDimension = &value.Rule{Name: "i", Apply: func(run *value.Run, c *value.Captured, r value.Value) value.Value {
+var transpPiDimension = &value.Rule{Name: "i", Apply: transpPiDimensionRule}
+
+func transpPiDimensionRule(run *value.Run, c *value.Captured, r value.Value) value.Value {
 	p, f := run.Force(c.Line[0]).(*PiDimension), c.Values[0]
 	return Transp(run, c.I, p.Codomain.Open(run, r), c.Face, LaterApply(run, f, r))
-}}
+}
 
 // ReadBack reads the codomain.
 func (p *PiDimension) ReadBack(q value.Quoter) value.Core {
