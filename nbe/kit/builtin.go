@@ -22,6 +22,7 @@ func Builtin() []Former {
 		{Name: "the circle", Types: func(g *Gen) Sample { return turnsWithElim() }},
 		{Name: "lists, formal", Script: formalLists, Types: lists},
 		{Name: "suspensions", Script: suspension, Types: suspensions},
+		{Name: "data whose transport is corrected", Script: winches, Types: winch},
 		{Name: "gluing", Script: glued, Types: gluing},
 		{Name: "neutral types", Types: func(g *Gen) Sample { return Base(g) }},
 	}
@@ -290,6 +291,29 @@ func suspensions(g *Gen) Sample {
 	s.Eliminations = func(g *Gen) []Elimination {
 		base := term.Name("Circle")
 		return []Elimination{eliminate(g, s.Type, true, "(elim (y C) SCRUTINEE (left base) (right base) ((gangway a j) (loop j)))", "C", base)}
+	}
+	return s
+}
+
+// The boundary of a path constructor that applies a function of the parameters:
+// transport does not commute with it as it stands.
+const winches = `(data Winch ((A (U 0)) (B (U 0)) (f (-> A B))) (point hook ((b B))) (path pull ((a A)) (i) ((= i 0) (hook (f a)))))`
+
+func winch(g *Gen) Sample {
+	a, b := Base(g), Base(g)
+	f := g.Variable("f", fill("(-> A B)", "A", a.Type, "B", b.Type), nil)
+	s := Sample{Type: fill("(Winch A B F)", "A", a.Type, "B", b.Type, "F", f)}
+	s.Element = func(g *Gen) *term.Written {
+		switch g.Choose(3) {
+		case 1:
+			return term.Ann(fill("(pull X R)", "X", a.Any(g), "R", g.Dimension()), s.Type)
+		case 2:
+			return g.Variable("w", s.Type, s.Element)
+		}
+		return term.Ann(fill("(hook X)", "X", b.Any(g)), s.Type)
+	}
+	s.Eliminations = func(g *Gen) []Elimination {
+		return []Elimination{eliminate(g, s.Type, true, "(elim (y C) SCRUTINEE ((hook b) base) ((pull a j) base))", "C", term.Name("Circle"))}
 	}
 	return s
 }

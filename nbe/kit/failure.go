@@ -63,7 +63,7 @@ func (f *Failure) Report() string {
 	line := func(format string, args ...any) { fmt.Fprintf(&b, format+"\n", args...) }
 	line("%s breaks the law of %s: %s", f.Former, f.Law, f.statement())
 	what := f.What
-	if f.Where != "" {
+	if f.Where != "" && f.Where != what {
 		if what != "" {
 			what += ", "
 		}
@@ -147,7 +147,11 @@ func (f *Failure) Script() string {
 		if right == nil {
 			right = f.Right
 		}
-		p.Comment(f.What + ", " + f.Where + ": left is " + f.Made)
+		where := ""
+		if f.Where != "" {
+			where = ", " + f.Where
+		}
+		p.Comment(f.What + where + ": left is " + f.Made)
 		p.Same(f.Type, f.Left, right)
 	}
 	return p.String()
