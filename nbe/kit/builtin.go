@@ -229,7 +229,15 @@ func turnsWithElim() Sample {
 		b := g.Over().Variable("b", c, nil)
 		p := g.Over().Variable("p", term.Path(c, b, b), nil)
 		out = append(out, eliminate(g, s.Type, true, "(elim (y C) SCRUTINEE (base B) ((loop j) (at P j)))", "C", c, "B", b, "P", p))
-		return out
+		// into a family, over the filler
+		over := Family(g.Over(), "D", s.Type)
+		d := g.Over().Variable("d", over(term.Name("base")), nil)
+		q := g.Over().Variable("q", term.PathOver("j", over(fill("(loop j)")), d, d), nil)
+		e := eliminate(g, s.Type, false, "(elim (y D) SCRUTINEE (base B) ((loop j) (at P j)))", "D", over(term.Name("y")), "B", d, "P", q)
+		e.Composite = func(box Box, of func(x, at *term.Written) *term.Written) *term.Written {
+			return box.Map(nil, func(u *term.Written) *term.Written { return of(u, oneEnd) }).Over(over(box.Hfill(Along())))
+		}
+		return append(out, e)
 	}
 	return s
 }
