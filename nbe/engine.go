@@ -3,14 +3,22 @@
 // in which terms are checked, normalised and compared; [Limits] bound every
 // call. Written terms come from nbe/term or, as text, from nbe/notation.
 //
-// What a host may rely on:
+// What a host may rely on, whatever it is handed:
 //   - Every failure is an error value, a *[term.Error] with a kind, a place and
 //     terms; no call panics, and none overflows the stack.
-//   - Every call takes a context and is bounded by limits, all of them on by
-//     default. A call that is stopped leaves engine and values as they were.
+//   - Every call is bounded by limits, all of them on by default, and stops within
+//     a tenth over the one that runs out. The error's Detail, a *[value.Spent],
+//     says what was spent, by which rules, and in which three definitions most.
+//   - Every call takes a context, whose end it sees within a millisecond as a
+//     rule and ten at worst, reading and printing too; the error wraps the
+//     context's cause. No goroutine outlives its call.
+//   - A call that was stopped leaves engine and values as they were: the same
+//     question with more to spend gives the right answer.
 //   - An Engine, its Scopes, Terms and Values are safe for concurrent use.
 //   - The same calls on a fresh engine give the same normal forms, verdicts,
 //     errors and counters, on every run and machine.
+//   - What [Engine.Save] wrote, [Engine.Load] gives back; a stream that is
+//     damaged, or needs a former that is not there, is refused.
 package nbe
 
 import (

@@ -229,11 +229,22 @@ type Form struct {
 	dims  []string
 }
 
-// Written is the form as a written term.
+// Written is the form as a written term. Errors: those of [term.Write]; a tree
+// larger than the limit Text is OutOfBudget, with its size.
 func (f *Form) Written() (*term.Written, error) { return term.Write(f.Term, f.names) }
+
+// WrittenContext is Written in a context.
+func (f *Form) WrittenContext(ctx context.Context) (*term.Written, error) {
+	return term.WriteContext(ctx, f.Term, f.names)
+}
 
 // WrittenType is the form's type as a written term.
 func (f *Form) WrittenType() (*term.Written, error) { return term.Write(f.Type, f.names) }
+
+// WrittenTypeContext is WrittenType in a context.
+func (f *Form) WrittenTypeContext(ctx context.Context) (*term.Written, error) {
+	return term.WriteContext(ctx, f.Type, f.names)
+}
 
 // String is the form as text, or what keeps it from being written.
 func (f *Form) String() string {

@@ -104,7 +104,7 @@ func withoutPath(err error) error {
 
 // Source handles a script's text.
 func (s *Session) Source(ctx context.Context, src []byte, name string) error {
-	forms, err := notation.ReadScript(src, name, s.Engine.Words())
+	forms, err := notation.ReadScriptContext(ctx, src, name, s.Engine.Words())
 	if err != nil {
 		return &Unreadable{err}
 	}
@@ -266,7 +266,7 @@ func (s *Session) normal(ctx context.Context, scope *nbe.Scope, f *notation.Form
 		return "", err
 	}
 	if !term.Same(forms[0].Term, n.Core()) {
-		got, err := forms[0].Written()
+		got, err := forms[0].WrittenContext(ctx)
 		if err != nil {
 			return "", err
 		}
@@ -290,15 +290,23 @@ func (s *Session) show(ctx context.Context, e *nbe.Engine, scope *nbe.Scope, f *
 	if err != nil {
 		return "", err
 	}
-	w, err := forms[0].Written()
+	w, err := forms[0].WrittenContext(ctx)
 	if err != nil {
 		return "", err
 	}
-	ty, err := forms[0].WrittenType()
+	ty, err := forms[0].WrittenTypeContext(ctx)
 	if err != nil {
 		return "", err
 	}
-	return fmt.Sprintf("%s : %s", notation.Format(w, 96), notation.Format(ty, 96)), nil
+	text, err := notation.FormatContext(ctx, w, 96)
+	if err != nil {
+		return "", err
+	}
+	kind, err := notation.FormatContext(ctx, ty, 96)
+	if err != nil {
+		return "", err
+	}
+	return text + " : " + kind, nil
 }
 
 // refusal reports whether an error says that a form is wrong. Running out of a
