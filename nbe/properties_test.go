@@ -118,11 +118,10 @@ func outOfBudget(t require.TestingT, err error, subject string) bool {
 }
 
 type prover struct {
-	t     require.TestingT
-	s     *nbe.Scope
-	call  []nbe.CallOption
-	what  string
-	stats *nbe.Stats
+	t    require.TestingT
+	s    *nbe.Scope
+	call []nbe.CallOption
+	what string
 }
 
 // tooLarge leaves a property.
