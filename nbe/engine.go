@@ -50,7 +50,7 @@ type Engine struct {
 	nat      *prims.Data
 	former   map[*term.Signature]formerID // what brings an operator
 	builtin  map[string]bool              // what every engine declares; not in saved state
-	title    string // in the labels of Go's profiles
+	title    string                       // in the labels of Go's profiles
 }
 
 // layer is a frozen part of an engine's entries.
