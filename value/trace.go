@@ -97,10 +97,10 @@ type Path struct {
 	Counts Counts
 	Parent *Path // nil at the root
 
-	owner *Site // the definition or term it stands in
-	depth int
-	last  link
-	next  []link
+	owner        *Site // the definition or term it stands in
+	depth        int
+	last, second link
+	next         []link
 }
 
 // link leads on from a path; to is further up where recursion is folded.
@@ -184,7 +184,9 @@ func (t *Trace) End() {
 		close(t.stop)
 		t.sample()
 	}
-	t.settle(0)
+	if t.Exact {
+		t.settle(0)
+	}
 	t.run.trace = nil
 }
 
@@ -196,17 +198,10 @@ func (t *Trace) rebase() {
 // settle charges what was done since it was last called to the present path,
 // apart from a number of steps that belong to what comes next.
 func (t *Trace) settle(calls int64) {
-	if t.due.Load() {
-		t.sample()
-	}
-	if !t.Exact {
-		return
-	}
-	r, c := t.run, &t.at.Counts
-	steps := r.Steps - calls
+	steps, memory, c := t.run.Steps-calls, t.run.Memory, &t.at.Counts
 	c.Steps += steps - t.steps
-	c.Memory += r.Memory - t.memory
-	t.steps, t.memory = steps, r.Memory
+	c.Memory += memory - t.memory
+	t.steps, t.memory = steps, memory
 }
 
 //go:noinline
@@ -269,7 +264,12 @@ func (t *Trace) enter(from *Path, s *Site) {
 	if s == nil {
 		return
 	}
-	t.settle(0)
+	if t.due.Load() {
+		t.sample()
+	}
+	if t.Exact {
+		t.settle(0)
+	}
 	t.step(from, s)
 }
 
@@ -277,12 +277,22 @@ func (t *Trace) call(from *Path, s *Site) {
 	if s == nil {
 		return
 	}
-	t.settle(min(1, t.run.Steps-t.steps)) // code is called right after its β-step
+	if t.due.Load() {
+		t.sample()
+	}
+	if t.Exact {
+		t.settle(min(1, t.run.Steps-t.steps)) // code is called right after its β-step
+	}
 	t.step(from, s)
 }
 
 func (t *Trace) leave(back *Path) {
-	t.settle(0)
+	if t.due.Load() {
+		t.sample()
+	}
+	if t.Exact {
+		t.settle(0)
+	}
 	t.at = back
 }
 
@@ -313,13 +323,22 @@ func (r *Run) Running() *Site {
 }
 
 func (t *Trace) step(from *Path, s *Site) {
-	to := from.last.to
 	if from.last.site != s {
-		to = t.find(from, s)
-		from.last = link{s, to}
+		t.turn(from, s)
 	}
+	to := from.last.to
 	to.Counts.Entered++
 	t.at = to
+}
+
+// turn makes the way to s the one that is found first, and the one before the second.
+func (t *Trace) turn(from *Path, s *Site) {
+	if from.second.site == s {
+		from.last, from.second = from.second, from.last
+		return
+	}
+	from.second = from.last
+	from.last = link{s, t.find(from, s)}
 }
 
 //go:noinline
