@@ -131,6 +131,9 @@ func run(ctx context.Context, args []string, stdin io.Reader, stdout, stderr io.
 			status = unreadable
 			r.unread++
 		}
+		if r.cancelled {
+			<-ctx.Done() // the engine may see that a deadline has passed before the context does
+		}
 		if ctx.Err() != nil {
 			r.stopped(context.Cause(ctx))
 			break

@@ -1,6 +1,7 @@
 package main
 
 import (
+	"errors"
 	"fmt"
 	"io"
 	"strings"
@@ -22,7 +23,9 @@ type reporter struct {
 	forms    int
 	failed   int
 	unread   int
-	cause    error // what stopped the run, if something did
+	// cancelled says that a form ended with the context, cause what ended that.
+	cancelled bool
+	cause     error
 }
 
 // begin is told of each form before it is handled.
@@ -37,6 +40,7 @@ func (r *reporter) report(o script.Result) {
 	switch {
 	case o.Err != nil:
 		r.failed++
+		r.cancelled = errors.Is(o.Err, term.Cancelled)
 		line = o.Err.Error()
 	case o.Text != "" || r.set.verbose:
 		line = fmt.Sprintf("%s: %s", o.Form.Place, what(o.Form))
