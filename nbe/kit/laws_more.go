@@ -283,7 +283,7 @@ func (t *trial) eta() *Failure {
 		}
 		r, err := t.w.check(Replace(t.x.Expand(on.w), map[string]*term.Written{height: t.x.heightAt(on.at)}), t.x.TypeAt(on.at))
 		if err != nil {
-			return t.failure(LawEta, "", err)
+			return t.failure(LawEta, "the expansion of "+on.what, err)
 		}
 		if f := t.agree(LawEta, t.w, l.t, l.v, r.v, on.what, "", "the element (right: its expansion)"); f != nil {
 			return f

@@ -42,13 +42,13 @@ func TestTermsFromBytes(t *testing.T) {
 }
 
 // broken is a former whose transports forget their face, for the reports.
-func broken(t *testing.T) *kit.Failure {
+func broken(t *testing.T, options ...kit.Option) *kit.Failure {
 	r := rightDuo()
 	right := r.transp
 	r.transp = func(run *value.Run, t *duoType, i value.Name, _ interval.Face, p value.Value) value.Value {
 		return right(run, t, i, interval.Bot(), p)
 	}
-	f, err := kit.FindFailure(duos("duos without faces", r), kit.Trials(100), kit.Only(kit.LawConstancy))
+	f, err := kit.FindFailure(duos("duos without faces", r), append([]kit.Option{kit.Trials(100), kit.Only(kit.LawConstancy)}, options...)...)
 	require.NoError(t, err)
 	require.NotNil(t, f)
 	return f
@@ -64,6 +64,7 @@ func TestReportsOfFailures(t *testing.T) {
 	require.NoError(t, err)
 	require.Nil(t, again, "the right former passes on the same input")
 	require.Equal(t, f.Report(), broken(t).Report())
+	require.Equal(t, f.Report(), broken(t, kit.Seed(f.Seed), kit.Trials(1)).Report())
 	require.LessOrEqual(t, f.Kept, f.Drawn)
 
 	// the script can be pasted, and its last form fails

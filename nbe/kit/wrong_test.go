@@ -16,7 +16,7 @@ import (
 func TestRightFormersPass(t *testing.T) {
 	strictRules := rightTag()
 	strictRules.hcomp = strict
-	for _, f := range []kit.Former{duos("duos", rightDuo()), tags("formal tags", rightTag(), true), tags("strict tags", strictRules, false)} {
+	for _, f := range []kit.Former{duos("duos", rightDuo()), tags("formal tags", rightTag(), true), tags("strict tags", strictRules, false), ropes("ropes", rightRope())} {
 		t.Run(f.Name, func(t *testing.T) { kit.CheckLaws(t, f, kit.Trials(24)) })
 	}
 }
@@ -128,6 +128,8 @@ func TestWrongFormersAreCaught(t *testing.T) {
 				return right(q, t, v)
 			}
 		})},
+		{"an η that loses a face", kit.LawEta, func(name string) kit.Former { return ropes(name, &ropeRules{ends: 1, walls: 2}) }},
+		{"a composite that lets go of an end", kit.LawTyping, func(name string) kit.Former { return ropes(name, &ropeRules{ends: 2, walls: 1}) }},
 		{"pushing and commuting both", kit.LawDimensions, tagged(true, func(r *tagRules) {
 			r.hcomp = func(run *value.Run, t *tagType, base value.Value, walls value.System) value.Value {
 				if v, ok := pushed(run, t, base, walls); ok {
