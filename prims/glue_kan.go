@@ -73,6 +73,11 @@ func (g *GlueType) Transp(run *value.Run, i value.Name, psi interval.Face, u0 va
 	a1 := LaterComp(run, i, g.A, base, sides)
 
 	parts1 := parts.substitute(run, end)
+	for _, p := range parts1 {
+		if p.Cube.IsTop() { // the result is t1; nobody looks at a1'
+			return LaterFirst(run, extendFiber(run, p, a, a1, done))
+		}
+	}
 	glued := make([]GlueValue, len(parts1))
 	j := run.Fresh(g.support | u0.Support() | psi.Support() | interval.Single(i))
 	var corrections value.System
