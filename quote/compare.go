@@ -155,15 +155,44 @@ func (c *Comparer) attempt(a, b value.Value) bool {
 	return ok
 }
 
-func (c *Comparer) into(step string, body func() bool) (ok bool) {
+// into goes one step down: typesBelow, or termsBelow where there is a type.
+func (c *Comparer) into(step string, t, a, b value.Value) (ok bool) {
 	if step != "" {
 		c.way = append(c.way, step)
 	}
-	c.run.Down(func() { ok = body() })
+	if c.run.Enter() {
+		ok = c.hop(t, a, b)
+	} else if t == nil {
+		ok = c.typesBelow(a, b)
+	} else {
+		ok = c.termsBelow(t, a, b)
+	}
+	c.run.Leave()
 	if step != "" {
 		c.way = c.way[:len(c.way)-1]
 	}
 	return ok
+}
+
+//go:noinline
+func (c *Comparer) hop(t, a, b value.Value) (ok bool) {
+	c.run.Hop(func() {
+		if t == nil {
+			ok = c.typesBelow(a, b)
+		} else {
+			ok = c.termsBelow(t, a, b)
+		}
+	})
+	return ok
+}
+
+// work is what has been done so far, in steps and cells.
+func (c *Comparer) work() int64 { return c.run.Steps + c.run.Forced }
+
+func (c *Comparer) remember(key pairKey, ok bool, before int64) {
+	if c.work()-before > small {
+		c.memo[key] = ok
+	}
 }
 
 // EqualTypes compares two types at equality.
@@ -186,30 +215,33 @@ func (c *Comparer) Types(step string, a, b value.Value) bool {
 		c.run.Identical++
 		return known || c.differ(nil, a, b)
 	}
-	ok := c.into(step, func() bool {
-		c.run.Take(value.StepCompare)
-		if c.attempt(a, b) {
-			return true
-		}
-		x, y := c.run.Force(a), c.run.Force(b)
-		if x == y {
-			return true
-		}
-		switch x := x.(type) {
-		case value.Type:
-			if y, ok := y.(value.Type); ok && x.SameType(c, y) {
-				return true
-			}
-		case *value.Neutral:
-			if y, ok := y.(*value.Neutral); ok && c.Neutrals(x, y) {
-				return true
-			}
-		}
-		c.waits(x, y)
-		return c.differ(nil, a, b)
-	})
-	c.memo[key] = ok
+	before := c.work()
+	ok := c.into(step, nil, a, b)
+	c.remember(key, ok, before)
 	return ok
+}
+
+func (c *Comparer) typesBelow(a, b value.Value) bool {
+	c.run.Take(value.StepCompare)
+	if c.attempt(a, b) {
+		return true
+	}
+	x, y := c.run.Force(a), c.run.Force(b)
+	if x == y {
+		return true
+	}
+	switch x := x.(type) {
+	case value.Type:
+		if y, ok := y.(value.Type); ok && x.SameType(c, y) {
+			return true
+		}
+	case *value.Neutral:
+		if y, ok := y.(*value.Neutral); ok && c.Neutrals(x, y) {
+			return true
+		}
+	}
+	c.waits(x, y)
+	return c.differ(nil, a, b)
 }
 
 // Terms compares two terms at type t.
@@ -225,33 +257,36 @@ func (c *Comparer) Terms(step string, t, a, b value.Value) bool {
 	}
 	inclusion := c.inclusion
 	c.inclusion = false
-	ok := c.into(step, func() bool {
-		c.run.Take(value.StepCompare)
-		if c.attempt(a, b) {
-			return true
-		}
-		x, y := c.run.Force(a), c.run.Force(b)
-		if x == y {
-			return true
-		}
-		switch t := c.run.Force(t).(type) {
-		case value.Type:
-			if t.SameElement(c, x, y) {
-				return true
-			}
-		case *value.Neutral:
-			m, ok1 := x.(*value.Neutral)
-			n, ok2 := y.(*value.Neutral)
-			if ok1 && ok2 && c.Neutrals(m, n) {
-				return true
-			}
-		}
-		c.waits(x, y)
-		return c.differ(t, a, b)
-	})
+	before := c.work()
+	ok := c.into(step, t, a, b)
 	c.inclusion = inclusion
-	c.memo[key] = ok
+	c.remember(key, ok, before)
 	return ok
+}
+
+func (c *Comparer) termsBelow(t, a, b value.Value) bool {
+	c.run.Take(value.StepCompare)
+	if c.attempt(a, b) {
+		return true
+	}
+	x, y := c.run.Force(a), c.run.Force(b)
+	if x == y {
+		return true
+	}
+	switch t := c.run.Force(t).(type) {
+	case value.Type:
+		if t.SameElement(c, x, y) {
+			return true
+		}
+	case *value.Neutral:
+		m, ok1 := x.(*value.Neutral)
+		n, ok2 := y.(*value.Neutral)
+		if ok1 && ok2 && c.Neutrals(m, n) {
+			return true
+		}
+	}
+	c.waits(x, y)
+	return c.differ(t, a, b)
 }
 
 // waits notes a hole that heads one of two values that differ.

@@ -73,23 +73,58 @@ func (q *Reader) Type(v value.Value) (c value.Core) {
 	if q.run.Traced() {
 		defer q.run.Operation(value.ReadbackSite)()
 	}
-	q.run.Down(func() {
-		if n := q.folded(v); n != nil {
-			c = q.Neutral(n)
-			return
-		}
-		q.count()
-		switch t := q.run.Force(v).(type) {
-		case value.Type:
-			c = t.ReadBack(q)
-		case *value.Neutral:
-			c = q.Neutral(t)
-		default:
-			q.run.Fault("%T is read back as a type", t)
+	before := q.work()
+	if q.run.Enter() {
+		c = q.hop(nil, v)
+	} else {
+		c = q.typeBelow(v)
+	}
+	q.run.Leave()
+	q.remember(key, c, before)
+	return c
+}
+
+func (q *Reader) typeBelow(v value.Value) value.Core {
+	if n := q.folded(v); n != nil {
+		return q.Neutral(n)
+	}
+	q.count()
+	switch t := q.run.Force(v).(type) {
+	case value.Type:
+		return t.ReadBack(q)
+	case *value.Neutral:
+		return q.Neutral(t)
+	default:
+		q.run.Fault("%T is read back as a type", t)
+		return nil
+	}
+}
+
+// hop is typeBelow, or termBelow where there is a type, on a fresh stack.
+//
+//go:noinline
+func (q *Reader) hop(t, v value.Value) (c value.Core) {
+	q.run.Hop(func() {
+		if t == nil {
+			c = q.typeBelow(v)
+		} else {
+			c = q.termBelow(t, v)
 		}
 	})
-	q.memo[key] = c
 	return c
+}
+
+// small is how much work may be done again rather than remembered: to remember a
+// leaf costs more than to read it twice.
+const small = 8
+
+// work is what has been done so far, in nodes, steps and cells.
+func (q *Reader) work() int64 { return q.nodes + q.run.Steps + q.run.Forced }
+
+func (q *Reader) remember(key memoKey, c value.Core, before int64) {
+	if q.work()-before > small {
+		q.memo[key] = c
+	}
 }
 
 // Term reads v back at type t, η-long.
@@ -101,27 +136,35 @@ func (q *Reader) Term(t, v value.Value) (c value.Core) {
 	if q.run.Traced() {
 		defer q.run.Operation(value.ReadbackSite)()
 	}
-	q.run.Down(func() {
-		if n := q.folded(v); n != nil {
-			c = q.Neutral(n)
-			return
-		}
-		q.count()
-		switch t := q.run.Force(t).(type) {
-		case value.Type:
-			c = t.ReadBackElement(q, q.run.Force(v))
-		case *value.Neutral:
-			n, ok := q.run.Force(v).(*value.Neutral)
-			if !ok {
-				q.run.Fault("%T stands in a neutral type", q.run.Force(v))
-			}
-			c = q.Neutral(n)
-		default:
-			q.run.Fault("%T is read back at as a type", t)
-		}
-	})
-	q.memo[key] = c
+	before := q.work()
+	if q.run.Enter() {
+		c = q.hop(t, v)
+	} else {
+		c = q.termBelow(t, v)
+	}
+	q.run.Leave()
+	q.remember(key, c, before)
 	return c
+}
+
+func (q *Reader) termBelow(t, v value.Value) value.Core {
+	if n := q.folded(v); n != nil {
+		return q.Neutral(n)
+	}
+	q.count()
+	switch t := q.run.Force(t).(type) {
+	case value.Type:
+		return t.ReadBackElement(q, q.run.Force(v))
+	case *value.Neutral:
+		n, ok := q.run.Force(v).(*value.Neutral)
+		if !ok {
+			q.run.Fault("%T stands in a neutral type", q.run.Force(v))
+		}
+		return q.Neutral(n)
+	default:
+		q.run.Fault("%T is read back at as a type", t)
+		return nil
+	}
 }
 
 // Neutral reads a neutral back, along its spine.

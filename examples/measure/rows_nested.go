@@ -170,6 +170,8 @@ func nestedRows() []gauge.Row {
 			word = "comp"
 		}
 		out = append(out, nestedRow(word+" at n nested paths, at an end", []int{2, 6, 20, 63, 200}, 1.2, one, func(n int) string {
+			return nestedPath(composite, n, "0"+strings.Repeat(" i0", n-1))
+		}, none), nestedRow(word+" at n nested paths, at one generic dimension and the last at an end", []int{2, 6, 20, 63, 200}, 2.1, one, func(n int) string {
 			return nestedPath(composite, n, strings.Repeat("i0 ", n-1)+"0")
 		}, none))
 		generic := func(name string, target float64, quantity string) gauge.Row {
