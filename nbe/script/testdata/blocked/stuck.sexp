@@ -32,6 +32,7 @@
 (assume steps (Path Nat 3 3))
 (assume Line (-> I (U 0)))
 (assume fresh (Line 0))
+(assume heights (-> I Nat))
 (assume same-light (Equiv Bool Bool))
 (assume same-cargo (Equiv Freight Cargo))
 
@@ -82,3 +83,6 @@
 ; 37 and 38: nothing is stuck
 (blocked (add 2 3))
 (blocked (ann (lam (n) 7) (-> Nat Nat)))
+; 39 and 40: a definition stays the one where it got stuck, also under a substitution
+(blocked (hcomp Nat (add (heights 0) 1) (top (j) (add (heights j) 1))))
+(blocked (at (ann (line (i) (hcomp Nat (add (heights i) 1))) (Path Nat (hcomp Nat (add (heights 0) 1)) (hcomp Nat (add (heights 1) 1)))) 1))
