@@ -10,6 +10,7 @@
 //	integers.sexp      integers, successor as an equivalence
 //	decidable.sexp     Hedberg's theorem, sets with decidable equality
 //	circle.sexp        universal cover, winding numbers, loops as integers
+//	loops.sexp         the circle is a groupoid
 //	suspension.sexp    suspensions, the Hopf fibration
 //	numerals.sexp      unary, binary and base-4 numerals, addition carried across
 package library
