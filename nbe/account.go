@@ -30,7 +30,8 @@ func (e *Engine) Account(ctx context.Context, name string, options ...CallOption
 	err = e.call(ctx, o, func(run *value.Run) {
 		size := int(o.limits.or(e.limits).Text)
 		write := func(c term.Core, variables, dimensions []string) string {
-			w, err := term.Write(c, term.Names{Variables: variables, Dimensions: dimensions, Taken: e.notation.Taken, Size: size})
+			run.Work(1 + len(variables) + len(dimensions)) // each time the whole scope is gone over
+			w, err := term.WriteContext(ctx, c, term.Names{Variables: variables, Dimensions: dimensions, Taken: e.notation.Taken, Size: size})
 			if err != nil {
 				run.Fail(err.(*term.Error))
 			}

@@ -213,7 +213,7 @@ func (r *Run) Substitute(v Value, s *Subst) Value {
 	}
 	r.Substitutions++
 	if r.Plain.Eager {
-		return r.push(r.Force(v), s)
+		return r.pushNow(v, s)
 	}
 	w := &substituted{v: v, s: s}
 	l := r.NewLazy(SubstSupport(support, s), &w.Pending, w)
@@ -221,6 +221,12 @@ func (r *Run) Substitute(v Value, s *Subst) Value {
 		l.fold = &folding{from: &substitutedFold{f.fold, s}}
 	}
 	return l
+}
+
+// pushNow pushes at once, which nests as deep as v does.
+func (r *Run) pushNow(v Value, s *Subst) (out Value) {
+	r.Down(func() { out = r.push(r.Force(v), s) })
+	return out
 }
 
 // At is v with the dimension n set to d.

@@ -8,6 +8,7 @@ import (
 	"context"
 	"fmt"
 	"runtime/debug"
+	"strings"
 	"testing"
 	"time"
 
@@ -15,6 +16,7 @@ import (
 
 	"example.com/boxwright/nbe"
 	"example.com/boxwright/nbe/notation"
+	"example.com/boxwright/nbe/script"
 	"example.com/boxwright/nbe/term"
 	"example.com/boxwright/value"
 )
@@ -132,4 +134,69 @@ func outcome(err error) string {
 		return fmt.Sprintf("refused: %v: %s", err, s)
 	}
 	return fmt.Sprintf("refused: %v", err)
+}
+
+// declarations nest in the types of arguments, in parameters and in boundaries.
+func declarations() []struct {
+	name string
+	make func(n int) string
+} {
+	type d = struct {
+		name string
+		make func(n int) string
+	}
+	return []d{
+		{"functions into the data type", func(n int) string { return "(data D () (point c ((f " + rep(n, "(-> Nat ", "D", ")") + "))))" }},
+		{"functions into the data type and their elimination", func(n int) string {
+			return "(data D () (point z ()) (point c ((f " + rep(n, "(-> Nat ", "D", ")") + ")))) (def size (-> D Nat) (lam (d) (elim (x Nat) d (z 0) ((c f h) 1))))"
+		}},
+		{"functions over the interval", func(n int) string { return "(data D () (point c ((f " + rep(n, "(-> I ", "D", ")") + "))))" }},
+		{"types of arguments", func(n int) string { return "(data D () (point c ((f " + rep(n, "(-> Nat ", "Nat", ")") + "))))" }},
+		{"arguments to the left", func(n int) string { return "(data D () (point c ((f " + rep(n, "(-> ", "Nat", " Nat)") + "))))" }},
+		{"arguments", func(n int) string {
+			return "(data D () (point c (" + strings.Repeat("(a Nat) ", min(n, 1000)) + ")))"
+		}},
+		{"constructors", func(n int) string {
+			var b strings.Builder
+			for k := range min(n, 1000) {
+				fmt.Fprintf(&b, "(point c%d ())", k)
+			}
+			return "(data D () " + b.String() + ")"
+		}},
+		{"boundaries", func(n int) string {
+			return "(data D () (point z ()) (point s ((d D))) (path p () (i) ((= i 0) " + rep(n, "(s ", "z", ")") + ")))"
+		}},
+		{"faces of boundaries", func(n int) string {
+			return "(data D () (point z ()) (path p () (i) (" + rep(n, "(or (= i 0) ", "(= i 1)", ")") + " z)))"
+		}},
+	}
+}
+
+func TestDeclarationsNest(t *testing.T) {
+	defer debug.SetMaxStack(debug.SetMaxStack(stackLimit))
+	n := 12_000
+	if long {
+		n = 300_000
+	}
+	for _, d := range declarations() {
+		t.Run(d.name, func(t *testing.T) {
+			for _, n := range []int{2, n} {
+				e := corpusEngine(t)
+				ctx, cancel := context.WithTimeout(context.Background(), 3*time.Second)
+				defer cancel()
+				s := &script.Session{Engine: e, Report: func(r script.Result) {
+					require.True(t, answered(r.Err), "%v", r.Err)
+					if n == 2 {
+						require.NoError(t, r.Err)
+					}
+					t.Logf("%d levels: %s", n, outcome(r.Err))
+					if r.Err == nil && r.Form.Kind == notation.Declare {
+						_, err := e.Account(ctx, r.Form.Name)
+						require.True(t, answered(err), "%v", err)
+					}
+				}}
+				require.NoError(t, s.Source(ctx, []byte(d.make(n)), "nest"))
+			}
+		})
+	}
 }
