@@ -121,6 +121,11 @@ func run(args []string, stdout, stderr io.Writer) int {
 	for k, r := range chosen {
 		fmt.Fprintf(stderr, "%d/%d %s\n", k+1, len(chosen), r.Name)
 		table.Results = append(table.Results, gauge.Measure(r, s))
+		if *out != "" { // a run takes long: what is done is kept
+			if err := write(table, stdout, *out, "", *asJSON); err != nil {
+				return fail(err)
+			}
+		}
 	}
 	if *with != "" {
 		more, err := gauge.Load(*with)

@@ -29,6 +29,8 @@ var (
 	sinkBool     bool
 	sinkValue    value.Value
 	sinkSupport  value.Support
+	// what is only written to is kept all the same, so that the work is done
+	_ = []any{&sinkLiterals, &sinkDim, &sinkFace, &sinkBool, &sinkValue, &sinkSupport, &sinkCore}
 )
 
 const operandCount = 64

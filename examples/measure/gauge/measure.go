@@ -131,8 +131,13 @@ func measure(row Row, size int, s Settings) (*Point, error) {
 			return nil, err
 		}
 	}
-	firstBase, _ := sample(baseSide, 1)
-	firstBase, _ = sample(baseSide, 1)
+	if _, err := sample(baseSide, 1); err != nil { // the first time is no measure
+		return nil, err
+	}
+	firstBase, err := sample(baseSide, 1)
+	if err != nil {
+		return nil, err
+	}
 	n, m := often(first, s.Round), often(firstBase, s.Round)
 	p := &Point{Size: size, Parts: parts(c.Parts)}
 	var wall, cpu, baseCPU []float64
