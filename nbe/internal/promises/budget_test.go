@@ -165,8 +165,8 @@ func TestMemoryIsWhatItSays(t *testing.T) {
 	e := corpusEngine(t)
 	s := e.Scope()
 	for _, p := range []program{
-		{name: "a deep constructor", text: func(string) string { return "(coil 100000)" }},
-		{name: "a number", text: func(string) string { return "(unroll (coil 100000))" }},
+		{name: "a deep constructor", text: func(string) string { return "(coil 50000)" }},
+		{name: "a number", text: func(string) string { return "(unroll (coil 50000))" }},
 		{name: "Ackermann", text: func(string) string { return "(Ack 3 6)" }},
 		{name: "functions", text: func(string) string {
 			return "((elim (x (-> A A)) 20000 (zero (lam (m) m)) ((suc k h) (lam (m) (f (h m))))) a)"
