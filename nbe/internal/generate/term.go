@@ -362,12 +362,23 @@ func (g *Generator) hcomp(t *Type, size int) (out *term.Written) {
 	return out
 }
 
+// held reports whether t mentions a variable whose type mentions d: putting
+// something else for d in t would leave the variable's type behind.
+func (g *Generator) held(t *Type, d string) bool {
+	for _, v := range g.variables {
+		if v.t.Mentions(d) && t.Mentions(v.name) {
+			return true
+		}
+	}
+	return false
+}
+
 // line is a line of types over i that is t at 1: the dimension k of t grows from
 // an end to itself. It is constant on the returned face.
 func (g *Generator) line(t *Type, i string) (line *Type, face *term.Written, k string) {
 	var in []string
 	for _, d := range g.dims {
-		if d != i && t.Mentions(d) {
+		if d != i && t.Mentions(d) && !g.held(t, d) {
 			in = append(in, d)
 		}
 	}
