@@ -15,13 +15,8 @@ import (
 // runs when it is asked for, with BOXWRIGHT_MUTATIONS=1; that every mutation
 // still applies is looked at always.
 
-// mutation replaces old, which stands in the file as often as times says (1 if
-// it is 0), where it occurs first; last says to replace the last occurrence.
-type mutation struct {
-	name, file, old, new string
-	times                int
-	last                 bool
-}
+// mutation replaces old, which stands in the file once.
+type mutation struct{ name, file, old, new string }
 
 var mutations = []mutation{
 	{name: "a Glue type whose face holds is not T", file: "prims/glue.go",
@@ -41,32 +36,32 @@ var mutations = []mutation{
 	{name: "equality of types forgets the faces", file: "prims/glue.go",
 		old: "if !ps[k].Cube.Equal(qs[k].Cube) {", new: "if false && k >= 0 {"},
 
-	{name: "hcomp: the walls of the parts are dropped", file: "prims/glue_kan.go",
-		old: "sides = append(sides, value.Wall{Cube: p.Cube, I: i, Body: mapAlong(run, p.E, t)})", new: "_ = mapAlong(run, p.E, t)", times: 2},
-	{name: "hcomp: the part is filled but stands still", file: "prims/glue_kan.go",
+	{name: "hcomp: the walls of the parts are dropped", file: "prims/glue_hcomp.go",
+		old: "sides = append(sides, value.Wall{Cube: p.Cube, I: i, Body: mapAlong(run, p.E, t)})", new: "_ = mapAlong(run, p.E, t)"},
+	{name: "hcomp: the part is filled but stands still", file: "prims/glue_hcomp.go",
 		old: "t := Hfill(run, i, p.T, base, us)", new: "t := base"},
-	{name: "hcomp: the part is the base's", file: "prims/glue_kan.go",
+	{name: "hcomp: the part is the base's", file: "prims/glue_hcomp.go",
 		old: "glued[k] = GlueValue{p.Cube, LaterHcomp(run, p.T, base, us)}", new: "glued[k] = GlueValue{p.Cube, base}"},
-	{name: "hcomp: the base's walls are not unglued under their faces", file: "prims/glue_kan.go",
+	{name: "hcomp: the base's walls are not unglued under their faces", file: "prims/glue_hcomp.go",
 		old: "return Unglue(run, parts.substitute(run, cut), u)", new: "return Unglue(run, nil, u)"},
 
-	{name: "transp: the base is unglued at the end", file: "prims/glue_kan.go",
+	{name: "transp: the base is unglued at the end", file: "prims/glue_transp.go",
 		old: "base := LaterUnglue(run, parts.substitute(run, start), u0)", new: "_ = start\n\tbase := LaterUnglue(run, parts.substitute(run, end), u0)"},
-	{name: "transp: no wall where nothing moves", file: "prims/glue_kan.go",
+	{name: "transp: no wall where nothing moves", file: "prims/glue_transp.go",
 		old: "for k := range psi.Len() {", new: "for k := range 0 {"},
-	{name: "transp: no wall where a part stands throughout", file: "prims/glue_kan.go",
-		old: "sides = append(sides, value.Wall{Cube: p.Cube, I: i, Body: mapAlong(run, p.E, t)})", new: "_ = mapAlong(run, p.E, t)", times: 2, last: true},
-	{name: "transp: the part throughout is filled from nowhere", file: "prims/glue_kan.go",
+	{name: "transp: no wall where a part stands throughout", file: "prims/glue_transp.go",
+		old: "sides = append(sides, value.Wall{Cube: p.Cube, I: i, Body: mapAlong(run, p.E, t)})", new: "_ = mapAlong(run, p.E, t)"},
+	{name: "transp: the part throughout is filled from nowhere", file: "prims/glue_transp.go",
 		old: "t := Tfill(run, i, p.T, under, u)", new: "t := u"},
-	{name: "transp: the contraction does not extend what stands throughout", file: "prims/glue_kan.go",
+	{name: "transp: the contraction does not extend what stands throughout", file: "prims/glue_transp.go",
 		old: "done = append(done, GlueValue{p.Cube, LaterTransp(run, i, p.T, under, u)})", new: "_ = done"},
-	{name: "transp: the base is not corrected along the fiber", file: "prims/glue_kan.go",
+	{name: "transp: the base is not corrected along the fiber", file: "prims/glue_transp.go",
 		old: "corrections = append(corrections, value.Wall{Cube: p.Cube, I: j, Body: LaterAt(run, path, interval.Var(j))})", new: "_, _ = path, j"},
-	{name: "transp: the correction moves where nothing should", file: "prims/glue_kan.go",
+	{name: "transp: the correction moves where nothing should", file: "prims/glue_transp.go",
 		old: "corrections = corrections.Constant(run, psi, a1)", new: ""},
-	{name: "transp: the parts are those of the start", file: "prims/glue_kan.go",
+	{name: "transp: the parts are those of the start", file: "prims/glue_transp.go",
 		old: "parts1 := parts.substitute(run, end)", new: "parts1 := parts.substitute(run, start)"},
-	{name: "extend: the contraction is walked backwards", file: "prims/glue_kan.go",
+	{name: "extend: the contraction is walked backwards", file: "prims/glue_transp.go",
 		old: "return At(run, Apply(run, Second(run, center), point), interval.Var(i))", new: "return At(run, Apply(run, Second(run, center), point), interval.Var(i).Rev())"},
 
 	{name: "composition of types: the walls' lines are not turned around", file: "prims/universe_hcomp.go",
@@ -83,14 +78,10 @@ var mutations = []mutation{
 
 // apply is the mutated text; false if the table no longer fits the file.
 func (m mutation) apply(src string) (string, bool) {
-	if strings.Count(src, m.old) != max(m.times, 1) {
+	if strings.Count(src, m.old) != 1 {
 		return "", false
 	}
-	at := strings.Index(src, m.old)
-	if m.last {
-		at = strings.LastIndex(src, m.old)
-	}
-	return src[:at] + m.new + src[at+len(m.old):], true
+	return strings.Replace(src, m.old, m.new, 1), true
 }
 
 func TestEveryMutationApplies(t *testing.T) {
