@@ -109,7 +109,9 @@ func costs(t testing.TB, text string) (c cost) {
 	e, err := nbe.New()
 	require.NoError(t, err)
 	var stats nbe.Stats
-	s := &script.Session{Engine: e, Options: []nbe.CallOption{nbe.Count(&stats)}}
+	// lists of this length nest deeper than the default allows
+	deep := nbe.Within(nbe.Limits{Depth: nbe.MaxDepth})
+	s := &script.Session{Engine: e, Options: []nbe.CallOption{nbe.Count(&stats), deep}}
 	var before, after runtime.MemStats
 	runtime.ReadMemStats(&before)
 	s.Report = func(r script.Result) {
