@@ -271,7 +271,6 @@ func numeralFormer() Former {
 // are pushed all at once. ok is false where it is stuck.
 func (t *DataType) hcompNumbers(run *value.Run, base value.Value, walls value.System) (value.Value, bool) {
 	n, rest := countedOne(run, base)
-	sup := t.support
 	rests := make(value.System, len(walls))
 	least := n
 	counts := make([]natural, len(walls))
@@ -295,7 +294,6 @@ func (t *DataType) hcompNumbers(run *value.Run, base value.Value, walls value.Sy
 	if least.isZero() {
 		return nil, false
 	}
-	_ = sup
 	below := func(m natural, r value.Value) value.Value {
 		m = m.minus(run, least)
 		if r == nil {
