@@ -45,6 +45,7 @@ type Engine struct {
 	notation *notation.Words
 	limits   Limits
 	plain    value.Plain
+	flat     bool // universe levels are switched off
 	high     *atomic.Int32
 	solved   map[value.Global]value.Global // copied when it grows
 	nat      *prims.Data
@@ -114,6 +115,15 @@ func WithPlain(p value.Plain) Option {
 	return func(e *Engine) error { e.plain = p; return nil }
 }
 
+// WithoutLevels switches universe levels off: (U n) is (U 0) whatever n is, and
+// is an element of itself. It is unsound: Girard's paradox then proves Empty, by
+// a term whose evaluation never ends, which every limit stops. It is for hosts
+// that want to try things out before they settle levels. What such an engine has
+// saved, or its hashes, no engine with levels takes for its own.
+func WithoutLevels() Option {
+	return func(e *Engine) error { e.flat = true; return nil }
+}
+
 // New returns an engine with Empty, Bool, Nat, Sum and Circle declared. The
 // errors are those of the options.
 func New(options ...Option) (*Engine, error) {
@@ -128,6 +138,11 @@ func New(options ...Option) (*Engine, error) {
 		}
 		if err := o(e); err != nil {
 			return nil, err
+		}
+	}
+	if e.flat {
+		for sig, id := range e.former {
+			e.former[sig] = formerID{id.name + " without universe levels", id.version}
 		}
 	}
 	var shapes []term.Shape
@@ -208,7 +223,7 @@ func (e *Engine) Fork() *Engine {
 			e.base = e.base.flat()
 		}
 	}
-	return &Engine{entries: map[string]any{}, base: e.base, words: e.words, ops: e.ops, former: e.former, builtin: e.builtin, notation: e.notation, limits: e.limits, plain: e.plain, high: e.high, solved: e.solved, nat: e.nat, title: e.title}
+	return &Engine{entries: map[string]any{}, base: e.base, words: e.words, ops: e.ops, former: e.former, builtin: e.builtin, notation: e.notation, limits: e.limits, plain: e.plain, flat: e.flat, high: e.high, solved: e.solved, nat: e.nat, title: e.title}
 }
 
 func (l *layer) flat() *layer {
@@ -289,7 +304,7 @@ func (e *Engine) call(ctx context.Context, o *callOptions, body func(run *value.
 	e.mu.RLock()
 	solved := e.solved
 	e.mu.RUnlock()
-	s := value.Settings{Context: ctx, Budget: o.limits.or(e.limits).budget(), Plain: e.plain, High: e.high, Solutions: solved, Draw: o.draw}
+	s := value.Settings{Context: ctx, Budget: o.limits.or(e.limits).budget(), Plain: e.plain, OneUniverse: e.flat, High: e.high, Solutions: solved, Draw: o.draw}
 	if len(o.opaque) > 0 || o.stuck {
 		v := &view{opaque: o.opaque, values: map[*definition]value.Value{}}
 		if o.stuck {

@@ -41,9 +41,11 @@ func (u *Universe) Transp(_ *value.Run, _ value.Name, _ interval.Face, a value.V
 func (u *Universe) ReadBack(value.Quoter) value.Core { return op(universeSig, term.Level(u.Level)) }
 
 // SameType is equality of levels or, where the comparison is at ≤, their order.
+// With levels switched off there is one universe; a former from outside may
+// still say that it lives higher up.
 func (u *Universe) SameType(c value.Comparer, other value.Type) bool {
 	o, ok := other.(*Universe)
-	return ok && (u.Level == o.Level || u.Level < o.Level && c.Inclusion() ||
+	return ok && (u.Level == o.Level || c.Run().OneUniverse || u.Level < o.Level && c.Inclusion() ||
 		c.Differ("the level", fmt.Sprint(u.Level), fmt.Sprint(o.Level)))
 }
 
@@ -74,6 +76,9 @@ func universeFormer() Former {
 			n := part(w, 0).Number
 			if n == nil || !n.IsInt64() || n.Int64() > MaxLevel {
 				c.Fail(part(w, 0), term.Malformed, "this is no universe level", fmt.Sprintf("a numeral up to %d", MaxLevel), part(w, 0))
+			}
+			if c.Run().OneUniverse {
+				return op(universeSig, term.Level(0)), NewUniverse(0)
 			}
 			level := int(n.Int64())
 			return op(universeSig, term.Level(level)), NewUniverse(level + 1)

@@ -51,21 +51,24 @@ type Plain struct {
 // It belongs to one call and is not safe for concurrent use.
 type Run struct {
 	Stats
-	Plain    Plain
-	budget   Budget
-	ctx      context.Context
-	deadline time.Time // of ctx, zero if it has none
-	check    int64     // the step at which to look at budget and context again
-	bytes    int64     // the memory at which to look at them again
-	work     int       // other work since the last look
-	depth    int64
-	limit    int64           // the depth at which to hop or stop
-	owner    *Site           // the definition whose code is running, nil outside of definitions
-	spent    map[*Site]int64 // steps by definition, by samples
-	sample   int64           // the steps at the last sample
-	high     *atomic.Int32
-	draw     *rand.Rand // names drawn at random, a hook for tests
-	unfold   Unfolder
+	Plain Plain
+	// OneUniverse says that levels are switched off: every universe is U 0, and
+	// in itself.
+	OneUniverse bool
+	budget      Budget
+	ctx         context.Context
+	deadline    time.Time // of ctx, zero if it has none
+	check       int64     // the step at which to look at budget and context again
+	bytes       int64     // the memory at which to look at them again
+	work        int       // other work since the last look
+	depth       int64
+	limit       int64           // the depth at which to hop or stop
+	owner       *Site           // the definition whose code is running, nil outside of definitions
+	spent       map[*Site]int64 // steps by definition, by samples
+	sample      int64           // the steps at the last sample
+	high        *atomic.Int32
+	draw        *rand.Rand // names drawn at random, a hook for tests
+	unfold      Unfolder
 	// solutions are the assumptions and holes that have become definitions
 	// since values were made that are stuck on them
 	solutions map[Global]Global
@@ -86,8 +89,10 @@ type Settings struct {
 	Context context.Context
 	Budget  Budget
 	Plain   Plain
-	High    *atomic.Int32 // supply of names beyond the low ones; shared by all runs of an engine
-	Unfold  Unfolder
+	// OneUniverse switches universe levels off, which is unsound.
+	OneUniverse bool
+	High        *atomic.Int32 // supply of names beyond the low ones; shared by all runs of an engine
+	Unfold      Unfolder
 	// Solutions sends assumptions and holes to the definitions that have replaced them.
 	Solutions map[Global]Global
 	// Draw, if not nil, makes fresh names random among the free ones instead of the lowest.
@@ -103,7 +108,7 @@ func NewRun(s Settings) *Run {
 		s.High = new(atomic.Int32)
 		s.High.Store(64)
 	}
-	r := &Run{Plain: s.Plain, budget: s.Budget, ctx: s.Context, high: s.High, unfold: s.Unfold, draw: s.Draw, solutions: s.Solutions}
+	r := &Run{Plain: s.Plain, OneUniverse: s.OneUniverse, budget: s.Budget, ctx: s.Context, high: s.High, unfold: s.Unfold, draw: s.Draw, solutions: s.Solutions}
 	r.limit = min(HopEvery, r.budget.Depth)
 	r.check = min(PollEvery, r.budget.Steps)
 	r.bytes = min(pollBytes, r.budget.Memory+1)

@@ -97,8 +97,8 @@ func TestDamagedStreamsAreRefused(t *testing.T) {
 	require.Equal(t, term.Duplicate, term.KindOf(e.Load(context.Background(), bytes.NewReader(src))))
 }
 
-func mustNew(t testing.TB) *nbe.Engine {
-	e, err := nbe.New()
+func mustNew(t testing.TB, options ...nbe.Option) *nbe.Engine {
+	e, err := nbe.New(options...)
 	require.NoError(t, err)
 	return e
 }
