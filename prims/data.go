@@ -347,6 +347,15 @@ func stored(args []eval.Arg) bool {
 	return c.Data.Numerals && c.constant == nil
 }
 
+// Ready reports whether a successor is that of a number which is known.
+func (conOp) Ready(f eval.Frame, args []eval.Arg) bool {
+	if !stored(args) {
+		return false
+	}
+	_, ok := args[2].Known(f).(*Number)
+	return ok
+}
+
 // Demands is the argument of a successor.
 func (conOp) Demands(args []eval.Arg) []*eval.Arg {
 	if stored(args) {

@@ -45,6 +45,9 @@ func (t *DataType) Hcomp(run *value.Run, base value.Value, walls value.System) v
 	if !ok {
 		return t.stuck(base, walls)
 	}
+	if len(walls) == 0 && numbers(run, args) {
+		return run.Force(base) // which the composites of its arguments would make again
+	}
 	parts := make([][]value.Value, len(walls)) // the arguments of each wall, under its dimension
 	for k, w := range walls {
 		d, us, ok := shown(run, run.Force(w.Body))
@@ -72,6 +75,16 @@ func (t *DataType) Hcomp(run *value.Run, base value.Value, walls value.System) v
 		}
 	}
 	return NewCon(run, c, nil, composed, nil)
+}
+
+// numbers reports whether all of vs are known to be numerals.
+func numbers(run *value.Run, vs []value.Value) bool {
+	for _, v := range vs {
+		if _, ok := value.Peek(v).(*Number); !ok {
+			return false
+		}
+	}
+	return !run.Plain.NoNumerals
 }
 
 // stuck waits for anything in the base or the walls.

@@ -63,8 +63,9 @@ func contractibleFiberRule(run *value.Run, c *value.Captured, y value.Value) val
 	return ContrType(run, FiberType(run, c.Values[0], c.Values[1], c.Values[2], y))
 }
 
-// LineEquiv is the equivalence from L(0) to L(1) along the line i.L, whose map
-// is transport. With
+// lineEquivalence is the equivalence from L(0) to L(1) along the line i.L, whose
+// map is transport, for L(i) = E(~i). It is a pair of which each part is made
+// when it is asked for. With
 //
 //	u x i = tfill (i.L(i)) bot x @ i          v y i = transp (j. L(i ∨ ~j)) (i=1) y
 //	b l i = fill (i.L(i)) (v y 0) [(l=0) ↦ i. v y i] [(l=1) ↦ i. u (v y 0) i] @ i
@@ -74,18 +75,59 @@ func contractibleFiberRule(run *value.Run, c *value.Captured, y value.Value) val
 //
 //	λy. ((v y 0, ⟨l⟩ b l 1), λ(x,p). ⟨k⟩ (α k, ⟨l⟩ comp (i.L(i)) (α (k∧l)) [(l=0) ↦ i. v y i] [(l=1) ↦ i. u (α k) i]
 //	                                                                    [(k=0) ↦ i. b l i] [(k=1) ↦ i. w l (~i)]))
-func LineEquiv(run *value.Run, i value.Name, l value.Value) value.Value {
-	lines := []value.Value{l}
-	return NewPair(
-		&Lam{value.NewCaptured(run, value.Captured{Rule: alongLine, I: i, Line: lines})},
-		&Lam{value.NewCaptured(run, value.Captured{Rule: lineFibers, I: i, Line: lines})},
-	)
+type lineEquivalence struct {
+	i value.Name
+	e value.Value // E at i
+}
+
+// Support is the line's.
+func (l *lineEquivalence) Support() value.Support { return l.e.Support().Without(l.i) }
+
+// Substitute delays s over the line.
+func (l *lineEquivalence) Substitute(run *value.Run, s *value.Subst) value.Value {
+	i, under := run.Under(l.i, l.e.Support(), s, 0)
+	return &lineEquivalence{i, run.Substitute(l.e, under)}
+}
+
+// lines is L at i, as rules capture it.
+func (l *lineEquivalence) lines(run *value.Run) []value.Value {
+	return []value.Value{run.At(l.e, l.i, interval.Var(l.i).Rev())}
+}
+
+func (l *lineEquivalence) first(run *value.Run) value.Value {
+	return &Lam{value.NewCaptured(run, value.Captured{Rule: alongLine, I: l.i, Line: l.lines(run)})}
+}
+
+func (l *lineEquivalence) second(run *value.Run) value.Value {
+	return &Lam{value.NewCaptured(run, value.Captured{Rule: lineFibers, I: l.i, Line: l.lines(run)})}
+}
+
+// mapped is e.1 x, on demand.
+func mapped(run *value.Run, e, x value.Value) value.Value {
+	if l, ok := run.Force(e).(*lineEquivalence); ok {
+		run.Take(value.StepApply)
+		return alongLineAt(run, l.i, l.lines(run)[0], x)
+	}
+	return Apply(run, First(run, e), x)
+}
+
+// center is (e.2 y).1.1, the element that e's map sends to y up to a path, on demand.
+func center(run *value.Run, e, y value.Value) value.Value {
+	if l, ok := run.Force(e).(*lineEquivalence); ok {
+		run.Take(value.StepApply)
+		return Transp(run, l.i, l.e, interval.Bot(), y) // v y 0
+	}
+	return First(run, First(run, Apply(run, Second(run, e), y)))
 }
 
 var alongLine = &value.Rule{Name: "x", Apply: alongLineRule}
 
 func alongLineRule(run *value.Run, c *value.Captured, x value.Value) value.Value {
-	return Transp(run, c.I, c.Line[0], interval.Bot(), x)
+	return alongLineAt(run, c.I, c.Line[0], x)
+}
+
+func alongLineAt(run *value.Run, i value.Name, l, x value.Value) value.Value {
+	return Transp(run, i, l, interval.Bot(), x)
 }
 
 var lineFibers = &value.Rule{Name: "y", Apply: lineFibersRule}

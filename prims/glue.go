@@ -151,7 +151,7 @@ func Unglue(run *value.Run, parts []GluePart, b value.Value) value.Value {
 			if run.Followed() {
 				return unglueFaceFollowed(run, p.E, b)
 			}
-			return Apply(run, First(run, p.E), b)
+			return mapped(run, p.E, b)
 		}
 	}
 	switch b := run.Force(b).(type) {

@@ -16,6 +16,9 @@ import (
 //
 // Every part has its own δ; the contraction extends over all of them.
 func (g *GlueType) Transp(run *value.Run, i value.Name, psi interval.Face, u0 value.Value) value.Value {
+	if from, to, ok := g.across(run, i, psi); ok {
+		return transpAcross(run, i, g, from, to, u0)
+	}
 	parts := glueParts(g.Parts)
 	start, end := interval.Assign(i, interval.Zero()), interval.Assign(i, interval.One())
 
@@ -42,22 +45,24 @@ func (g *GlueType) Transp(run *value.Run, i value.Name, psi interval.Face, u0 va
 		sides = append(sides, value.Wall{Cube: p.Cube, I: i, Body: mapAlong(run, p.E, t)})
 		done = append(done, GlueValue{p.Cube, LaterTransp(run, i, p.T, under, u)})
 	}
-	a := run.Substitute(g.A, end)
 	a1 := LaterComp(run, i, g.A, base, sides)
 
 	parts1 := parts.substitute(run, end)
 	for _, p := range parts1 {
 		if p.Cube.IsTop() { // the result is t1; nobody looks at a1'
-			return LaterFirst(run, extendFiber(run, p, a, a1, done))
+			return extendFirst(run, p, a1, done)
 		}
 	}
+	a := run.Substitute(g.A, end)
 	glued := make([]GlueValue, len(parts1))
 	j := run.Fresh(g.support | u0.Support() | psi.Support() | interval.Single(i))
 	var corrections value.System
 	for k, p := range parts1 {
 		cut := p.Cube.Restriction()
-		fiber := extendFiber(run, p, run.Substitute(a, cut), run.Substitute(a1, cut), done)
-		glued[k] = GlueValue{p.Cube, LaterFirst(run, fiber)}
+		under := run.Substitute(a1, cut)
+		t1 := run.Later(p.T.Support()|p.E.Support()|under.Support()|supportOfParts(done), func(run *value.Run) value.Value { return extendFirst(run, p, under, done) })
+		glued[k] = GlueValue{p.Cube, t1}
+		fiber := extendFiber(run, p, run.Substitute(a, cut), under, done)
 		path := run.Later(fiber.Support(), func(run *value.Run) value.Value { return Second(run, fiber) })
 		corrections = append(corrections, value.Wall{Cube: p.Cube, I: j, Body: LaterAt(run, path, interval.Var(j))})
 	}
@@ -71,9 +76,25 @@ func (g *GlueType) Transp(run *value.Run, i value.Name, psi interval.Face, u0 va
 //
 //	extend: for c : Contr X and a partial element p of X on φ,  hcomp X c.1 [φ ↦ i. (c.2 p) @ i]
 func extendFiber(run *value.Run, p GluePart, a, a1 value.Value, done []GlueValue) value.Value {
-	cut := p.Cube.Restriction()
 	c := run.Later(p.E.Support()|a1.Support(), func(run *value.Run) value.Value { return Apply(run, Second(run, p.E), a1) })
+	f := run.Later(p.E.Support(), func(run *value.Run) value.Value { return First(run, p.E) })
+	return LaterHcomp(run, FiberType(run, p.T, a, f, a1), LaterFirst(run, c), contracted(run, p, c, a1, done))
+}
+
+// extendFirst is the first part of extendFiber, which composes apart from the second.
+func extendFirst(run *value.Run, p GluePart, a1 value.Value, done []GlueValue) value.Value {
 	var walls value.System
+	if len(done) > 0 {
+		c := run.Later(p.E.Support()|a1.Support(), func(run *value.Run) value.Value { return Apply(run, Second(run, p.E), a1) })
+		walls = contracted(run, p, c, a1, done).Map(run, 0, 0, func(run *value.Run, _ value.Name, u value.Value, _ *value.Subst) value.Value { return First(run, u) })
+	}
+	base := run.Later(p.E.Support()|a1.Support(), func(run *value.Run) value.Value { return center(run, p.E, a1) })
+	return Hcomp(run, p.T, base, walls)
+}
+
+// contracted are the walls on done by which the contraction c moves the center to them.
+func contracted(run *value.Run, p GluePart, c, a1 value.Value, done []GlueValue) (walls value.System) {
+	cut := p.Cube.Restriction()
 	for _, d := range done {
 		face := d.Cube.Subst(cut)
 		for k := range face.Len() {
@@ -87,6 +108,12 @@ func extendFiber(run *value.Run, p GluePart, a, a1 value.Value, done []GlueValue
 			})})
 		}
 	}
-	f := run.Later(p.E.Support(), func(run *value.Run) value.Value { return First(run, p.E) })
-	return LaterHcomp(run, FiberType(run, p.T, a, f, a1), LaterFirst(run, c), walls)
+	return walls
+}
+
+func supportOfParts(parts []GlueValue) (sup value.Support) {
+	for _, p := range parts {
+		sup |= p.Cube.Support() | p.T.Support()
+	}
+	return sup
 }

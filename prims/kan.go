@@ -44,6 +44,9 @@ func LaterHcomp(run *value.Run, a, base value.Value, walls value.System) value.V
 	if w, ok := walls.Top(); ok {
 		return w.End(run)
 	}
+	if n := sameNumbers(run, base, walls); n != nil {
+		return n
+	}
 	return run.Later(a.Support()|base.Support()|walls.Support(), func(run *value.Run) value.Value {
 		return Hcomp(run, a, base, walls)
 	})

@@ -266,6 +266,21 @@ func numeralFormer() Former {
 	return Former{Name: "numerals", Version: 1, Operators: []Operator{{numeralSig, numeralOp{}}}}
 }
 
+// sameNumbers is the numeral that base and all walls are, as far as is known
+// without doing any work, which is then their composite; nil if they are not.
+func sameNumbers(run *value.Run, base value.Value, walls value.System) value.Value {
+	n, ok := value.Peek(base).(*Number)
+	if !ok || run.Plain.NoNumerals {
+		return nil
+	}
+	for _, w := range walls {
+		if m, ok := value.Peek(w.Body).(*Number); !ok || !m.n.equal(n.n) {
+			return nil
+		}
+	}
+	return n
+}
+
 // hcompNumbers is a strict composite of numbers: equal numerals give that
 // numeral, which is what pushing successors would give, and common successors
 // are pushed all at once. ok is false where it is stuck.
@@ -288,7 +303,7 @@ func (t *DataType) hcompNumbers(run *value.Run, base value.Value, walls value.Sy
 			same = same && rests[k].Body == nil && counts[k].equal(n)
 		}
 		if same {
-			return &Number{t.Data, n}, true
+			return newNumber(t.Data, n), true
 		}
 	}
 	if least.isZero() {

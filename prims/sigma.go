@@ -62,6 +62,12 @@ func (t *Sigma) Transp(run *value.Run, i value.Name, phi interval.Face, p value.
 	return NewPair(LaterTransp(run, i, t.First, phi, p1), LaterTransp(run, i, t.Second.Open(run, a), phi, p2))
 }
 
+// latePair is a pair whose parts are made when they are asked for.
+type latePair interface {
+	first(run *value.Run) value.Value
+	second(run *value.Run) value.Value
+}
+
 // First is p.1, on demand.
 func First(run *value.Run, p value.Value) value.Value {
 	switch p := run.Force(p).(type) {
@@ -71,6 +77,9 @@ func First(run *value.Run, p value.Value) value.Value {
 			return projectFollowed(run, p, firstFrame, p.A)
 		}
 		return p.A
+	case latePair:
+		run.Take(value.StepProject)
+		return p.first(run)
 	case *value.Neutral:
 		return p.Eliminate(run, firstFrame)
 	default:
@@ -88,6 +97,9 @@ func Second(run *value.Run, p value.Value) value.Value {
 			return projectFollowed(run, p, secondFrame, p.B)
 		}
 		return p.B
+	case latePair:
+		run.Take(value.StepProject)
+		return p.second(run)
 	case *value.Neutral:
 		return p.Eliminate(run, secondFrame)
 	default:

@@ -36,6 +36,9 @@ func (t *Sigma) Sketch(s *value.Sketch) *term.Written {
 // Sketch is the pair.
 func (p *Pair) Sketch(s *value.Sketch) *term.Written { return term.Pair(s.Value(p.A), s.Value(p.B)) }
 
+// Sketch is the equivalence, of which nothing is made for showing it.
+func (l *lineEquivalence) Sketch(*value.Sketch) *term.Written { return term.Name("…") }
+
 // Sketch is the type of paths.
 func (t *Path) Sketch(s *value.Sketch) *term.Written {
 	name, body := s.Body(t.Line)

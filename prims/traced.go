@@ -129,7 +129,7 @@ func unglueFaceFollowed(run *value.Run, equivalence, b value.Value) value.Value 
 	e := run.Begins(value.StepUnglue, value.StepUnglue.String(), func(s *value.Sketch) *term.Written {
 		return term.Unglue(s.Value(b))
 	})
-	return run.Ends(e, Apply(run, First(run, equivalence), b))
+	return run.Ends(e, mapped(run, equivalence, b))
 }
 
 func boundaryFollowed(run *value.Run, c *Con, v value.Value) value.Value {

@@ -2,7 +2,6 @@ package prims
 
 import (
 	"example.com/boxwright/value"
-	"example.com/boxwright/value/interval"
 )
 
 // Hcomp of a universe glues on the ends of the walls, along the equivalences
@@ -12,8 +11,7 @@ import (
 func (u *Universe) Hcomp(run *value.Run, a value.Value, walls value.System) value.Value {
 	parts := make([]GluePart, len(walls))
 	for k, w := range walls {
-		back := run.At(w.Body, w.I, interval.Var(w.I).Rev())
-		parts[k] = GluePart{w.Cube, w.End(run), LineEquiv(run, w.I, back)}
+		parts[k] = GluePart{w.Cube, w.End(run), &lineEquivalence{w.I, w.Body}}
 	}
 	return NewGlue(a, parts)
 }

@@ -210,7 +210,7 @@ func (t *thunk) cell(run *value.Run, code Code, env []value.Value) value.Value {
 	if !ok {
 		return delay(run, code, env)
 	}
-	if op.cheap > 0 {
+	if op.cheap > 0 || op.ready != nil && op.ready.Ready(env, op.args) {
 		return op.Eval(run, env)
 	}
 	var support value.Support

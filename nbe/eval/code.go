@@ -43,6 +43,13 @@ type Eliminator interface {
 	Frame(run *value.Run, f Frame, args []Arg) value.Frame
 }
 
+// Ready is an Operation that, with some values of its arguments, does no more work
+// than delaying it would cost, although with others it does.
+type Ready interface {
+	Operation
+	Ready(f Frame, args []Arg) bool
+}
+
 type slotCode int
 
 func (c slotCode) Eval(_ *value.Run, f Frame) value.Value { return f[c] }
@@ -58,8 +65,9 @@ func (c globalCode) Eval(run *value.Run, _ Frame) value.Value { return run.Unfol
 type opCode struct {
 	op    Operation
 	args  []Arg
-	folds bool // its principal argument ends in a global
-	cheap int  // 0: not cheap; otherwise 1 + how deep cheap operators nest in it
+	folds bool  // its principal argument ends in a global
+	ready Ready // the operation, if it is one
+	cheap int   // 0: not cheap; otherwise 1 + how deep cheap operators nest in it
 	site  *value.Site
 }
 
@@ -160,6 +168,15 @@ func delay(run *value.Run, c Code, f Frame) value.Value {
 		return run.Folded(c.g)
 	}
 	return c.Eval(run, f) // only cheap operators stand undelayed
+}
+
+// Known is a term argument that is a variable of the frame, as far as its value is
+// known without doing any work; nil for every other argument.
+func (a *Arg) Known(f Frame) value.Value {
+	if slot, ok := a.code.(slotCode); ok {
+		return value.Peek(f[slot])
+	}
+	return nil
 }
 
 // IsDimension reports whether the argument is a dimension.

@@ -169,6 +169,7 @@ func (k *compiler) op(c *term.Op, l *layout, nv, nd int) Code {
 		out.args[i] = k.arg(a, slot, l, nv, nd)
 	}
 	out.cheap = k.cheapness(c)
+	out.ready, _ = op.(Ready)
 	if p, ok := op.(Preparer); ok {
 		if payload, ok := p.Prepare(c, nv); ok {
 			out.args = append(out.args, Arg{Payload: payload})
