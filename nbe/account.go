@@ -31,7 +31,7 @@ func (e *Engine) Account(ctx context.Context, name string, options ...CallOption
 		size := int(o.limits.or(e.limits).Text)
 		write := func(c term.Core, variables, dimensions []string) string {
 			run.Work(1 + len(variables) + len(dimensions)) // each time the whole scope is gone over
-			w, err := term.WriteContext(ctx, c, term.Names{Variables: variables, Dimensions: dimensions, Taken: e.notation.Taken, Size: size})
+			w, err := write(ctx, c, term.Names{Variables: variables, Dimensions: dimensions, Taken: e.notation.Taken, Size: size}, run.Account("nodes of text", int64(size)))
 			if err != nil {
 				run.Fail(err.(*term.Error))
 			}

@@ -1,8 +1,6 @@
 package nbe
 
 import (
-	"fmt"
-
 	"example.com/boxwright/nbe/term"
 	"example.com/boxwright/value"
 	"example.com/boxwright/value/interval"
@@ -158,7 +156,7 @@ func (c *checker) resolve(parts []term.Part) {
 			continue
 		}
 		if nesting++; nesting > most {
-			c.Fail(s.part.Body, term.OutOfBudget, "out of budget", fmt.Sprintf("at most %d levels of nesting", most), "more")
+			c.run.Over("levels of nesting", most)
 		}
 		stack = append(stack, step{s.part, true})
 		for k := len(s.part.Rows) - 1; k >= 0; k-- {

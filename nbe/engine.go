@@ -322,7 +322,7 @@ func (e *Engine) call(ctx context.Context, o *callOptions, body func(run *value.
 			*o.stats = run.Snapshot()
 		}
 		if thrown := recover(); thrown != nil {
-			err = value.ErrorOf(thrown)
+			err = run.ErrorOf(thrown)
 		}
 	}()
 	run.Poll()

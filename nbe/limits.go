@@ -23,25 +23,26 @@ type Limits struct {
 }
 
 // The defaults, all on. A step takes about 0.2 to 1 µs, so the default number
-// of steps lasts about a minute. A level of nesting takes up to 1.4 kB of stack,
-// and up to 1.7 kB under the race detector or without optimisation, so that the
-// default nesting fits in 256 MB: 150,000 × 1.7 kB = 255 MB. Memory is charged
+// of steps lasts about a minute. A level of nesting takes 0.7 to 2.4 kB of stack,
+// up to 3.0 kB under the race detector and up to 3.8 kB without optimisation;
+// 1,000 levels stand on a stack of at most 4 MB (value.HopEvery), so that the
+// default nesting fits in 64 × 4 MB = 256 MB in each of these builds. Memory is charged
 // when it is allocated and never given back, at some 0.5 to 1 GB in a second, so
 // the default lasts for 10 to 20 seconds of allocation. The output, at about
 // 200 bytes a node, is at most 2 GB, and the text at most 4 million nodes of
 // some 100 bytes.
 const (
 	DefaultSteps  = 100_000_000
-	DefaultDepth  = 150_000
+	DefaultDepth  = 64_000
 	DefaultMemory = 8 << 30
 	DefaultOutput = 10_000_000
 	DefaultText   = 1 << 22
 )
 
 // The documented maxima: what is above them is taken as them. Four million
-// levels are as many as parentheses may nest in a text; they stand on 400
-// goroutines one after the other (value.HopEvery levels each) and take about
-// 6 GB of stack, which is charged to the memory too, at 1 kB a level.
+// levels are as many as parentheses may nest in a text; they stand on 4,000
+// goroutines one after the other (value.HopEvery levels each) and take 4 to
+// 8 GB of stack, which is charged to the memory too, at 1 kB a level.
 const (
 	MaxDepth = 4_000_000
 )

@@ -2,6 +2,8 @@ package nbe
 
 import (
 	"context"
+	"errors"
+	"math/big"
 	"strings"
 
 	"example.com/boxwright/nbe/eval"
@@ -227,23 +229,46 @@ type Form struct {
 	Type  term.Core
 	names term.Names
 	dims  []string
+	spent *value.Spent // by the call that read it back
 }
 
 // Written is the form as a written term. Errors: those of [term.Write]; a tree
-// larger than the limit Text is OutOfBudget, with its size.
-func (f *Form) Written() (*term.Written, error) { return term.Write(f.Term, f.names) }
+// larger than the limit Text is OutOfBudget, with the account of the call that
+// read the form back, in which Needed is the tree's size.
+func (f *Form) Written() (*term.Written, error) { return f.WrittenContext(context.Background()) }
 
 // WrittenContext is Written in a context.
 func (f *Form) WrittenContext(ctx context.Context) (*term.Written, error) {
-	return term.WriteContext(ctx, f.Term, f.names)
+	return write(ctx, f.Term, f.names, f.spent)
 }
 
 // WrittenType is the form's type as a written term.
-func (f *Form) WrittenType() (*term.Written, error) { return term.Write(f.Type, f.names) }
+func (f *Form) WrittenType() (*term.Written, error) {
+	return f.WrittenTypeContext(context.Background())
+}
 
 // WrittenTypeContext is WrittenType in a context.
 func (f *Form) WrittenTypeContext(ctx context.Context) (*term.Written, error) {
-	return term.WriteContext(ctx, f.Type, f.names)
+	return write(ctx, f.Type, f.names, f.spent)
+}
+
+// write is [term.WriteContext] with an account of what was spent.
+func write(ctx context.Context, c term.Core, names term.Names, spent *value.Spent) (*term.Written, error) {
+	w, err := term.WriteContext(ctx, c, names)
+	var full *term.Error
+	if !errors.As(err, &full) || full.Kind != term.OutOfBudget {
+		return w, err
+	}
+	account := value.Spent{What: "nodes of text", Limit: int64(names.Size)}
+	if spent != nil {
+		account = *spent
+	}
+	account.Needed, _ = full.Detail.(*big.Int)
+	if full.Message == term.LongNumeral {
+		account.What, account.Limit = "digits", term.MaxDigits
+	}
+	full.Detail = &account
+	return nil, full
 }
 
 // String is the form as text, or what keeps it from being written.
@@ -259,15 +284,22 @@ func (s *Scope) names(x *scopeContext, limits Limits) term.Names {
 	return term.Names{Variables: x.variableNames(), Dimensions: x.dimensionNames(), Taken: s.e.notation.Taken, Size: int(limits.or(s.e.limits).Text)}
 }
 
-// Write is a core term of this scope as a written one.
+// Write is a core term of this scope as a written one. Errors: those of
+// [Form.Written]. Cost: up to the limit Text.
 func (s *Scope) Write(c term.Core) (*term.Written, error) {
+	return s.WriteContext(context.Background(), c)
+}
+
+// WriteContext is Write in a context.
+func (s *Scope) WriteContext(ctx context.Context, c term.Core) (*term.Written, error) {
 	if s.engine().isZero() {
 		return nil, empty()
 	}
-	if len(s.cases) == 0 {
-		return term.Write(c, term.Names{Taken: s.e.notation.Taken})
+	names := term.Names{Taken: s.e.notation.Taken, Size: int(s.e.limits.or(Limits{}).Text)}
+	if len(s.cases) > 0 {
+		names = s.names(s.cases[0], Limits{})
 	}
-	return term.Write(c, s.names(s.cases[0], Limits{}))
+	return write(ctx, c, names, nil)
 }
 
 func (o *callOptions) fold() quote.Fold {
@@ -305,11 +337,20 @@ func (s *Scope) forms(ctx context.Context, t *Term, o *callOptions, read func(q 
 			q := quote.NewReader(run, len(x.variables), len(x.dimensions), o.fold())
 			forms = append(forms, Form{Face: x.face, Term: read(q, c.t, v), Type: q.Type(c.t), names: s.names(x, o.limits), dims: x.dimensionNames()})
 		}
+		s.account(run, forms, o)
 	})
 	if err != nil {
 		return nil, err
 	}
 	return forms, nil
+}
+
+// account gives the forms that a call read back what it spent.
+func (s *Scope) account(run *value.Run, forms []Form, o *callOptions) {
+	spent := run.Account("nodes of text", o.limits.or(s.e.limits).Text)
+	for k := range forms {
+		forms[k].spent = spent
+	}
 }
 
 func (e *Engine) evaluate(run *value.Run, core term.Core, x *scopeContext) value.Value {

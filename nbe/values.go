@@ -192,6 +192,7 @@ func (v *Value) ReadBack(ctx context.Context, options ...CallOption) (forms []Fo
 			q := quote.NewReader(run, len(x.variables), len(x.dimensions), o.fold())
 			forms = append(forms, Form{Face: x.face, Term: q.Term(v.cases[k].t, v.cases[k].v), Type: q.Type(v.cases[k].t), names: s.names(x, o.limits), dims: x.dimensionNames()})
 		}
+		s.account(run, forms, o)
 	})
 	if err != nil {
 		return nil, err

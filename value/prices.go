@@ -3,6 +3,7 @@ package value
 import (
 	"cmp"
 	"fmt"
+	"math/big"
 	"slices"
 
 	"example.com/boxwright/nbe/term"
@@ -29,6 +30,10 @@ const (
 	PriceLevel       = 1024 // a level of nesting, the first time that the stack gets that deep
 )
 
+// freeLevels is the nesting from which on the stack is charged: what most runs
+// take is the same whatever they do.
+const freeLevels = 10_000
+
 // Cost is what something has cost.
 type Cost struct {
 	Name  string
@@ -41,8 +46,9 @@ type Cost struct {
 // frequent first.
 type Spent struct {
 	Stats
-	What        string // what ran out: "steps", "bytes", "levels of nesting", "nodes"
+	What        string // what ran out: "steps", "bytes", "levels of nesting", "nodes", "nodes of text", "conjunctions" …
 	Limit       int64
+	Needed      *big.Int // how much of it would have been enough, where that is known
 	Definitions []Cost
 	Operations  []Cost
 }
@@ -89,6 +95,11 @@ func (r *Run) Own(s *Site) {
 func (r *Run) Over(what string, limit int64) { r.over(what, limit) }
 
 func (r *Run) over(what string, limit int64) {
+	r.Fail(&term.Error{Kind: term.OutOfBudget, Message: "out of budget", WantText: fmt.Sprintf("at most %d %s", limit, what), GotText: "more", Detail: r.Account(what, limit)})
+}
+
+// Account is what the run has spent so far, as what goes over a limit says it.
+func (r *Run) Account(what string, limit int64) *Spent {
 	r.attribute()
 	s := &Spent{Stats: r.Snapshot(), What: what, Limit: limit}
 	s.Deepest = max(s.Deepest, r.depth)
@@ -109,5 +120,5 @@ func (r *Run) over(what string, limit int64) {
 		s.Operations = append(s.Operations, Cost{"substitution", r.Pushed})
 	}
 	slices.SortFunc(s.Operations, byCost)
-	r.Fail(&term.Error{Kind: term.OutOfBudget, Message: "out of budget", WantText: fmt.Sprintf("at most %d %s", limit, what), GotText: "more", Detail: s})
+	return s
 }

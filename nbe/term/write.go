@@ -86,6 +86,9 @@ func ended(w *watch.Watch) *Error {
 // interrupted.
 const MaxDigits = 100_000
 
+// LongNumeral is the message of the error of a numeral with more than MaxDigits.
+const LongNumeral = "a numeral is too long to be written"
+
 // tooLong reports whether n has more than MaxDigits digits, by its bits: 3.3219
 // of them for a digit, less one.
 func tooLong(n *big.Int) bool { return n != nil && n.BitLen() > MaxDigits*33219/10000 }
@@ -94,7 +97,7 @@ func tooLong(n *big.Int) bool { return n != nil && n.BitLen() > MaxDigits*33219/
 func (w *writer) number(n *big.Int) *Written {
 	if tooLong(n) && w.failed == nil {
 		w.failed = &Error{
-			Kind: OutOfBudget, Message: "a numeral is too long to be written", Detail: new(big.Int).SetInt64(int64(n.BitLen())),
+			Kind: OutOfBudget, Message: LongNumeral, Detail: new(big.Int).SetInt64(int64(n.BitLen())),
 			WantText: fmt.Sprintf("at most %d digits", MaxDigits), GotText: fmt.Sprintf("%d bits", n.BitLen()),
 		}
 	}

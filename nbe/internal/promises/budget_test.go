@@ -7,7 +7,6 @@ package promises
 import (
 	"context"
 	"errors"
-	"fmt"
 	"math/big"
 	"runtime"
 	"testing"
@@ -43,6 +42,7 @@ func budgets() []budget {
 		{"bytes", func(l *nbe.Limits, n int64) { l.Memory = n }, func(s *value.Spent) int64 { return s.Memory }, 100_000, 1 << 40},
 		{"levels of nesting", func(l *nbe.Limits, n int64) { l.Depth = n }, func(s *value.Spent) int64 { return s.Deepest }, 700, nbe.MaxDepth},
 		{"nodes", func(l *nbe.Limits, n int64) { l.Output = n }, func(s *value.Spent) int64 { return 0 }, 500, 1 << 40},
+		{"nodes of text", func(l *nbe.Limits, n int64) { l.Text = n }, func(s *value.Spent) int64 { return 0 }, 600, 1 << 40},
 	}
 }
 
@@ -52,6 +52,9 @@ const question = "(coil (add (Ack 3 4) 1000))"
 func normalOf(t testing.TB, s *nbe.Scope, x *nbe.Term, l nbe.Limits) ([]nbe.Form, nbe.Stats, error) {
 	var st nbe.Stats
 	forms, err := s.Normal(context.Background(), x, nbe.Within(l), nbe.Count(&st))
+	if err == nil {
+		_, err = forms[0].Written()
+	}
 	return forms, st, err
 }
 
@@ -97,6 +100,23 @@ func TestBudgetsAloneAndInPairs(t *testing.T) {
 				require.True(t, term.Same(want[0].Term, got[0].Term))
 			}
 		}
+	}
+}
+
+// What goes over a limit of the interval's is accounted for, too.
+func TestWideIntervalsAreAccountedFor(t *testing.T) {
+	e := corpusEngine(t)
+	for _, p := range endless() {
+		if p.name != "a wide interval that is substituted in" {
+			continue
+		}
+		err := ask(context.Background(), e, p.ty, p.text(""))
+		require.Equal(t, term.OutOfBudget, term.KindOf(err), "%v", err)
+		spent := spentOf(err)
+		require.NotNil(t, spent, "%v", err)
+		require.Equal(t, "conjunctions", spent.What)
+		require.Positive(t, spent.Steps)
+		require.NotEmpty(t, spent.Operations)
 	}
 }
 
@@ -147,16 +167,17 @@ func TestOutputAsGraphAndAsTree(t *testing.T) {
 	s := e.Scope()
 	x, err := s.Infer(context.Background(), readText(t, "(coilTree 100)"))
 	require.NoError(t, err)
-	forms, _, err := normalOf(t, s, x, nbe.Limits{Output: 1000, Text: 10_000})
+	forms, err := s.Normal(context.Background(), x, nbe.Within(nbe.Limits{Output: 1000, Text: 10_000}))
 	require.NoError(t, err, "as a graph it is small")
 	tree, graph := term.Size(forms[0].Term)
 	require.Positive(t, tree.Cmp(new(big.Int).Lsh(big.NewInt(1), 100)))
 	require.Less(t, graph, 1000)
 	_, err = forms[0].Written()
 	require.Equal(t, term.OutOfBudget, term.KindOf(err))
-	var full *term.Error
-	require.ErrorAs(t, err, &full)
-	require.Equal(t, tree.String(), fmt.Sprint(full.Detail))
+	require.Equal(t, tree, spentOf(err).Needed)
+	require.Equal(t, "nodes of text", spentOf(err).What)
+	require.EqualValues(t, 10_000, spentOf(err).Limit)
+	require.NotEmpty(t, spentOf(err).Operations, "what the call took that read it back")
 }
 
 // What is charged is what is used: a run's charge is at least half of the bytes
@@ -176,7 +197,8 @@ func TestMemoryIsWhatItSays(t *testing.T) {
 		require.NoError(t, err)
 		var before, after runtime.MemStats
 		runtime.ReadMemStats(&before)
-		_, st, err := normalOf(t, s, x, nbe.Limits{})
+		var st nbe.Stats
+		_, err = s.Normal(context.Background(), x, nbe.Count(&st), nbe.Within(nbe.Limits{Depth: nbe.MaxDepth}))
 		runtime.ReadMemStats(&after)
 		require.NoError(t, err)
 		used := after.TotalAlloc - before.TotalAlloc

@@ -27,15 +27,15 @@ func stacksInUse() uint64 {
 
 // deepest are programs that nest as deep as the budget lets them.
 func deepest() []program {
-	say := func(name, text string) program {
-		return program{name: name, ty: "", text: func(string) string { return text }}
+	say := func(name, ty, text string) program {
+		return program{name: name, ty: ty, text: func(string) string { return text }}
 	}
 	return []program{
-		say("functions around a hypothesis", "((elim (x (-> A A)) 100000000 (zero (lam (m) m)) ((suc k h) (lam (m) (f (h m))))) a)"),
-		say("a deep constructor", "(coil 100000000)"),
-		say("pairs of hypotheses", "(fst (elim (x (* Nat Nat)) 100000000 (zero (pair 0 0)) ((suc k h) (pair (snd h) (suc (fst h))))))"),
-		say("transports", "(elim (x A) 100000000 (zero a) ((suc k h) (transp (i A) bot h)))"),
-		say("composites", "(lam (i) (elim (x A) 100000000 (zero a) ((suc k h) (hcomp A h ((= i 0) (j) h)))))"),
+		say("functions around a hypothesis", "A", "((elim (x (-> A A)) 100000000 (zero (lam (m) m)) ((suc k h) (lam (m) (f (h m))))) a)"),
+		say("a deep constructor", "Drum", "(coil 100000000)"),
+		say("pairs of hypotheses", "Nat", "(fst (elim (x (* Nat Nat)) 100000000 (zero (pair 0 0)) ((suc k h) (pair (snd h) (suc (fst h))))))"),
+		say("transports", "A", "(elim (x A) 100000000 (zero a) ((suc k h) (transp (i A) bot h)))"),
+		say("composites", "(-> I A)", "(lam (i) (elim (x A) 100000000 (zero a) ((suc k h) (hcomp A h ((= i 0) (j) h)))))"),
 	}
 }
 
@@ -58,33 +58,44 @@ func (m *stackMeter) Err() error {
 	return nil
 }
 
-// mostStack is how much stack the default nesting takes, and how deep the deepest program went.
+// mostStack is how much stack that nesting takes at most, over the programs that
+// nest for ever and over every form of the corpus that gets as deep.
 func mostStack(t *testing.T, depth int64) uint64 {
 	e := corpusEngine(t)
-	most := uint64(0)
-	for _, p := range deepest() {
-		text := p.text("")
-		ty := "A"
-		switch p.name {
-		case "a deep constructor":
-			ty = "Drum"
-		case "pairs of hypotheses":
-			ty = "Nat"
-		case "composites":
-			ty = "(-> I A)"
+	all := deepest()
+	for _, n := range nests() {
+		if n.most == 0 { // the others end before they are deep
+			ty, text := n.make(int(depth) + 10_000)
+			all = append(all, program{name: n.name, ty: ty, text: func(string) string { return text }})
 		}
+	}
+	most := uint64(0)
+	for _, p := range all {
 		runtime.GC()
 		before := stacksInUse()
 		m := &stackMeter{Context: context.Background(), done: make(chan struct{})}
+		deep := int64(0)
+		limits := nbe.Within(nbe.Limits{Depth: depth, Steps: 3_000_000, Memory: 4 << 30})
+		call := func(f func(options ...nbe.CallOption) error) bool {
+			var st nbe.Stats
+			err := f(limits, nbe.Count(&st))
+			require.True(t, answered(err), "%s: %v", p.name, err)
+			deep = max(deep, st.Deepest)
+			return err == nil
+		}
 		s := e.Scope()
-		x, err := s.Check(m, readText(t, text), readText(t, ty))
-		require.NoError(t, err)
-		var st nbe.Stats
-		_, err = s.Normal(m, x, nbe.Within(nbe.Limits{Depth: depth}), nbe.Count(&st))
-		require.Error(t, err, p.name)
+		w, ty := readText(t, p.text("")), readText(t, p.ty)
+		var x, y *nbe.Term
+		_ = call(func(o ...nbe.CallOption) (err error) { x, err = s.Check(m, w, ty, o...); return }) &&
+			call(func(o ...nbe.CallOption) (err error) { y, err = s.Check(m, w, ty, o...); return }) &&
+			call(func(o ...nbe.CallOption) error { _, err := s.Compare(m, x, y, o...); return err }) &&
+			call(func(o ...nbe.CallOption) error { _, err := s.Normal(m, x, o...); return err })
+		if deep < depth/2 {
+			continue
+		}
 		used := m.most.Load() - min(before, m.most.Load())
-		t.Logf("%-32s nesting %7d, stack %4d MB, %5d bytes a level", p.name, st.Deepest, used>>20, used/uint64(max(st.Deepest, 1)))
-		most = max(most, used)
+		t.Logf("%-45s nesting %7d, stack %4d MB, %5d bytes a level", p.name, deep, used>>20, used/uint64(max(deep, 1)))
+		most = max(most, used*uint64(depth)/uint64(min(deep, depth)))
 	}
 	return most
 }
@@ -92,7 +103,7 @@ func mostStack(t *testing.T, depth int64) uint64 {
 func TestTheDefaultNestingFitsItsStack(t *testing.T) {
 	depth := int64(nbe.DefaultDepth)
 	if !long {
-		depth = 30_000
+		depth = 15_000
 	}
 	most := mostStack(t, depth)
 	require.LessOrEqual(t, most*uint64(nbe.DefaultDepth)/uint64(depth), uint64(256<<20), "more stack than is documented")
