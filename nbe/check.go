@@ -414,6 +414,12 @@ func (d *delayed) Fold(run *value.Run) *value.Neutral {
 	return nil
 }
 
+// Unfolding leaves it to the cell that is compiled.
+func (d *delayed) Unfolding(*value.Run) (value.Global, bool) { return nil, true }
+
+// SketchFold is that cell's.
+func (d *delayed) SketchFold(*value.Sketch) *term.Written { return term.Name("…") }
+
 // Site is the definition or term that it stands in.
 func (d *delayed) Site() *value.Site { return d.standing }
 

@@ -84,6 +84,7 @@ func (d *definition) TypeValue(*value.Run) value.Value { return d.t }
 func (d *definition) Unfold(*value.Run) value.Value    { return d.v }
 func (d *definition) Folded(*value.Run) value.Value    { return d.folded }
 func (d *definition) Site() *value.Site                { return &d.site }
+func (d *definition) Code() *eval.Abstraction          { return d.code }
 func isHole(g value.Global) bool                       { d, ok := g.(*definition); return ok && d.hole }
 
 // Option sets up an engine.

@@ -393,7 +393,8 @@ const doubling = `
 (def add (-> Nat Nat Nat) (lam (m n) (elim (x Nat) m (zero n) ((suc k h) (suc h)))))
 (def pow (-> Nat Nat) (lam (n) (elim (x Nat) n (zero 1) ((suc k h) (add h h)))))
 (def down (-> Nat Nat) (lam (n) (elim (x Nat) n (zero 0) ((suc k h) (elim (y Nat) h (zero 0) ((suc m g) m))))))
-(def slow Nat (down (pow 50)))`
+(def slow Nat (down (pow 50)))
+(def hoard Nat ((elim (x (-> Nat Nat)) (pow 50) (zero (lam (x) x)) ((suc k h) (lam (x) (h (suc x))))) 0))`
 
 func TestCancelledOnTheWay(t *testing.T) {
 	e := fresh(t)
@@ -442,7 +443,7 @@ func TestLimits(t *testing.T) {
 	}{
 		{"steps", func(l nbe.Limits) error { return normal("slow", l) }, nbe.Limits{Steps: 10_000}, "10000 steps"},
 		{"depth", func(l nbe.Limits) error { _, err := s.Infer(background, nested, nbe.Within(l)); return err }, nbe.Limits{Depth: 1000}, "1000 levels"},
-		{"memory", func(l nbe.Limits) error { return normal("slow", l) }, nbe.Limits{Memory: 1 << 16}, "65536 bytes"},
+		{"memory", func(l nbe.Limits) error { return normal("hoard", l) }, nbe.Limits{Memory: 1 << 16}, "65536 bytes"},
 		{"output", func(l nbe.Limits) error { return normal("tree", l) }, nbe.Limits{Output: 3}, "3 nodes"},
 		{"text", func(l nbe.Limits) error { return normal("tree", l) }, nbe.Limits{Text: 100}, "100"},
 	} {

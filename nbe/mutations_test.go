@@ -174,7 +174,7 @@ var mutations = []mutation{
 	{"a constructor does not become its boundary", "prims/data.go",
 		"if ⟦b.Cube.Subst(s).IsTop()⟧ {", "false", "FormalElim|TranspPathConstructor|FormalHcomp"},
 	{"numerals are counted at once without the count", "prims/numeral_elim.go",
-		"n := ⟦e.step.count.times(run, v.n)⟧", "e.step.count", "Number"},
+		"d, ⟦r.count.times(run, n)⟧, ", "r.count", "Number"},
 	// normal forms
 	{"implied walls are kept", "value/wall.go",
 		"if ⟦i != j && w.Cube.Implies(v.Cube)⟧", "false", "WallsInOrder"},

@@ -353,14 +353,16 @@ func (x *declaring) recursion(at *term.Written, nf term.Core, t value.Value) (r 
 var anonymous = term.Binder{Name: "_"}
 
 // sharedNumbers is how many of the first numbers are made once.
-const sharedNumbers = 256
+const sharedNumbers = 1024
 
 // StoreAsNumbers makes the elements of d, declared as zero and suc, numbers.
 func (d *Data) StoreAsNumbers() {
 	d.Numerals = true
 	d.small = make([]*Number, sharedNumbers)
-	for n := range d.small {
-		d.small[n] = &Number{d, natural{small: uint64(n)}}
+	all := make([]Number, sharedNumbers)
+	for n := range all {
+		all[n] = Number{d, natural{small: uint64(n)}}
+		d.small[n] = &all[n]
 	}
 	d.Constructors[0].constant = d.small[0]
 }

@@ -191,9 +191,9 @@ func (e *Eliminator) Eliminate(run *value.Run, v value.Value) value.Value {
 			run.Take(value.StepNumeral)
 			n, rest := counted(run, v) // all at once, since successors of successors nest
 			if rest == nil {
-				rest = newNumber(e.data, natural{})
+				rest = newNumber(run, e.data, natural{})
 			}
-			return run.Left(back, successors(run, e.data, e.step.count.times(run, n), run.Force(e.Eliminate(run, rest))))
+			return run.Left(back, e.step.repeated(run, e.data, n, e.Eliminate(run, rest)))
 		}
 	}
 	c, args, ok := shown(run, v)
@@ -237,7 +237,24 @@ func (e *Eliminator) onCase(run *value.Run, c *Constructor, args []value.Value, 
 
 // Later is Eliminate in a cell.
 func (e *Eliminator) Later(run *value.Run, v value.Value) value.Value {
-	return run.Later(e.support|v.Support(), func(run *value.Run) value.Value { return e.Eliminate(run, v) })
+	w := &laterElimination{e: e, v: v, site: run.Running()}
+	return run.NewLazy(e.support|v.Support(), &w.Pending, w)
+}
+
+type laterElimination struct {
+	value.Pending
+	e    *Eliminator
+	v    value.Value
+	site *value.Site // of the code that it stands in, where the run is traced
+}
+
+// Do eliminates.
+func (w *laterElimination) Do(run *value.Run) value.Value {
+	if !run.Traced() {
+		return w.e.Eliminate(run, w.v)
+	}
+	back := run.Resume(w.site)
+	return run.Left(back, w.e.Eliminate(run, w.v))
 }
 
 // composite commutes the elimination with a formal composite.
@@ -264,7 +281,7 @@ func (e *Eliminator) hypothesis(run *value.Run, r *Recursion, v value.Value) val
 		i := run.Fresh(e.support | v.Support())
 		return over(i, e.hypothesis(run, r.inner, LaterAt(run, v, interval.Var(i))))
 	default:
-		return &Lam{value.NewCaptured(run, value.Captured{Rule: r.hypothesis, Values: []value.Value{e, v}})}
+		return &Lam{Body: value.NewCaptured(run, value.Captured{Rule: r.hypothesis, Values: []value.Value{e, v}})}
 	}
 }
 
@@ -405,35 +422,89 @@ func (elimOp) eliminator(run *value.Run, f eval.Frame, args []eval.Arg) *Elimina
 	return newEliminator(d, args[2].Close(run, f), cases, step)
 }
 
+// Eval eliminates the principal argument.
 func (o elimOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
-	v := run.Force(args[3].Eval(run, f))
-	if con, ok := v.(*Con); ok && !con.Of.recursive {
-		// without hypotheses one case is all it takes, however many there are
-		if k := con.Of.Index; k < len(args[4].Rows) && args[4].Rows[k][0].Payload.(term.Reference).Index == k {
-			var back *value.Path // what the run came from, where it is traced
-			if run.Traced() {
-				back = run.InElimination(con.Of.Data.label)
-				if run.Followed() {
-					return enterFollowed(run, back, args[4].Rows[k][1].CloseAll(run, f), con)
-				}
-			}
-			run.Take(value.StepEliminate)
-			return run.Left(back, enter(run, args[4].Rows[k][1].CloseAll(run, f), con.Args, con.Dims))
-		}
-	}
-	return o.eliminator(run, f, args).Eliminate(run, v)
+	return o.Eliminate(run, f, args, run.Force(args[3].Eval(run, f)))
 }
 
-// enter is a case without hypotheses at arguments and dimensions.
-func enter(run *value.Run, body value.Case, args []value.Value, dims []interval.Dim) value.Value {
-	env := body.Enter(run)
-	at := copy(env, args)
+// Match finds the case of a constructor whose hypotheses are not used: that
+// case is all it takes, however many there are.
+func (elimOp) Match(run *value.Run, f eval.Frame, args []eval.Arg, v value.Value) (*eval.Arg, eval.Frame) {
+	var few [1]value.Value
+	var c *Constructor
+	var vs []value.Value
+	var dims []interval.Dim
+	switch v := v.(type) {
+	case *Con:
+		c, vs, dims = v.Of, v.Args, v.Dims
+	case *Number:
+		if len(args) > 5 && args[5].Payload.(stepPayload).affine && !run.Plain.NoNumerals {
+			return nil, nil
+		}
+		if v.isZero() {
+			c = v.data.Constructors[0]
+		} else if c = v.data.Constructors[1]; bodyOf(args, c) != nil && !bodyOf(args, c).Uses(1) {
+			few[0] = v.predecessor(run)
+			vs = few[:]
+		}
+	default:
+		return nil, nil
+	}
+	body := bodyOf(args, c)
+	if body == nil {
+		return nil, nil
+	}
+	if c.recursive {
+		at := len(c.Args)
+		for _, a := range c.Args {
+			if a.Recursive != nil {
+				if body.Uses(at) {
+					return nil, nil
+				}
+				at++
+			}
+		}
+	}
+	env := body.Frame(run, f)
+	at := copy(env, vs)
+	for k, a := range c.Args {
+		if a.Recursive != nil {
+			env[at] = vs[k] // not used
+			at++
+		}
+	}
 	for k, d := range dims {
 		env[at+k] = value.DimensionOf(d)
 	}
-	v := body.Eval(run, env)
-	run.Release(len(env))
-	return v
+	return body, env
+}
+
+// Label is the data type's name.
+func (elimOp) Label(args []eval.Arg) *value.Label {
+	return args[0].Payload.(term.Reference).Target.(*Data).label
+}
+
+// bodyOf is the case of a constructor, nil where it does not stand in order.
+func bodyOf(args []eval.Arg, c *Constructor) *eval.Arg {
+	rows := args[4].Rows
+	if k := c.Index; k < len(rows) && rows[k][0].Payload.(term.Reference).Index == k {
+		return &rows[k][1]
+	}
+	return nil
+}
+
+// Eliminate is Eval for what the principal argument has given.
+func (o elimOp) Eliminate(run *value.Run, f eval.Frame, args []eval.Arg, v value.Value) value.Value {
+	if run.Followed() {
+		if body, env := o.Match(run, f, args, v); body != nil {
+			return matchFollowed(run, o.Label(args), v, body, env)
+		}
+	} else if n, ok := v.(*Number); ok && len(args) > 5 {
+		if w, ok := o.affine(run, f, args, n); ok {
+			return w
+		}
+	}
+	return o.eliminator(run, f, args).Eliminate(run, v)
 }
 
 func (o elimOp) Frame(run *value.Run, f eval.Frame, args []eval.Arg) value.Frame {

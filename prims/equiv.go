@@ -95,11 +95,11 @@ func (l *lineEquivalence) lines(run *value.Run) []value.Value {
 }
 
 func (l *lineEquivalence) first(run *value.Run) value.Value {
-	return &Lam{value.NewCaptured(run, value.Captured{Rule: alongLine, I: l.i, Line: l.lines(run)})}
+	return &Lam{Body: value.NewCaptured(run, value.Captured{Rule: alongLine, I: l.i, Line: l.lines(run)})}
 }
 
 func (l *lineEquivalence) second(run *value.Run) value.Value {
-	return &Lam{value.NewCaptured(run, value.Captured{Rule: lineFibers, I: l.i, Line: l.lines(run)})}
+	return &Lam{Body: value.NewCaptured(run, value.Captured{Rule: lineFibers, I: l.i, Line: l.lines(run)})}
 }
 
 // mapped is e.1 x, on demand.
@@ -138,7 +138,7 @@ func lineFibersRule(run *value.Run, c *value.Captured, y value.Value) value.Valu
 	v0 := Backward(run, i, line, interval.Bot(), y)
 	end := lineFiberPath(run, i, line, y, v0, l)
 	center := NewPair(v0, over(l, run.At(end, i, interval.One())))
-	return NewPair(center, &Lam{value.NewCaptured(run, value.Captured{Rule: lineContraction, Values: []value.Value{y}, I: i, Line: c.Line})})
+	return NewPair(center, &Lam{Body: value.NewCaptured(run, value.Captured{Rule: lineContraction, Values: []value.Value{y}, I: i, Line: c.Line})})
 }
 
 // lineFiberPath is b l i, at l and i.

@@ -71,6 +71,9 @@ func (n natural) plus(run *value.Run, m natural) natural {
 const pieceBits = 1 << 16
 
 func (n natural) times(run *value.Run, m natural) natural {
+	if n.big == nil && n.small == 1 {
+		return m
+	}
 	if n.big == nil && m.big == nil {
 		if high, low := bits.Mul64(n.small, m.small); high == 0 {
 			return natural{small: low}
@@ -129,12 +132,29 @@ type Successors struct {
 }
 
 // newNumber is the number n; small ones are shared.
-func newNumber(d *Data, n natural) *Number {
+func newNumber(run *value.Run, d *Data, n natural) *Number {
 	if n.big == nil && n.small < uint64(len(d.small)) {
 		return d.small[n.small]
 	}
-	return &Number{d, n}
+	room, _ := run.Numerals.(*numberRoom)
+	if room == nil {
+		room = new(numberRoom)
+		run.Numerals = room
+	}
+	if len(room.left) == 0 {
+		room.left = make([]Number, atOnce)
+	}
+	out := &room.left[0]
+	room.left = room.left[1:]
+	out.data, out.n = d, n
+	return out
 }
+
+// atOnce is how many numbers are made at once, which is cheaper than one by one
+// and keeps no more than 200 bytes alive that nobody needs.
+const atOnce = 8
+
+type numberRoom struct{ left []Number }
 
 // Support is empty.
 func (n *Number) Support() value.Support { return 0 }
@@ -148,7 +168,7 @@ func (n *Number) Int() *big.Int { return n.n.Int() }
 func (n *Number) isZero() bool { return n.n.isZero() }
 
 func (n *Number) predecessor(run *value.Run) value.Value {
-	return newNumber(n.data, n.n.minus(run, natural{small: 1}))
+	return newNumber(run, n.data, n.n.minus(run, natural{small: 1}))
 }
 
 // Support is the base's.
@@ -175,7 +195,7 @@ func successors(run *value.Run, d *Data, n natural, v value.Value) value.Value {
 	}
 	switch v := value.Peek(v).(type) {
 	case *Number:
-		return newNumber(d, v.n.plus(run, n))
+		return newNumber(run, d, v.n.plus(run, n))
 	case *Successors:
 		return &Successors{d, v.count.plus(run, n), v.base}
 	default:
@@ -241,7 +261,7 @@ func (t *DataType) sameNumber(c value.Comparer, a, b value.Value) bool {
 	}
 	below := func(n natural, rest value.Value) value.Value {
 		if rest == nil {
-			return newNumber(t.Data, n.minus(run, least))
+			return newNumber(run, t.Data, n.minus(run, least))
 		}
 		return successors(run, t.Data, n.minus(run, least), rest)
 	}
@@ -259,7 +279,7 @@ func (o numeralOp) Eval(run *value.Run, _ eval.Frame, args []eval.Arg) value.Val
 func (numeralOp) Value(run *value.Run, args []eval.Arg) value.Value {
 	n := naturalOf(args[0].Payload.(term.Number).Int)
 	afford(run, n.Int().BitLen())
-	return newNumber(args[1].Payload.(term.Reference).Target.(*Data), n)
+	return newNumber(run, args[1].Payload.(term.Reference).Target.(*Data), n)
 }
 
 func numeralFormer() Former {
@@ -303,7 +323,7 @@ func (t *DataType) hcompNumbers(run *value.Run, base value.Value, walls value.Sy
 			same = same && rests[k].Body == nil && counts[k].equal(n)
 		}
 		if same {
-			return newNumber(t.Data, n), true
+			return newNumber(run, t.Data, n), true
 		}
 	}
 	if least.isZero() {

@@ -70,14 +70,33 @@ func (elimOp) Demands(args []eval.Arg) []*eval.Arg {
 	return nil
 }
 
+// affine eliminates a number by an affine step, without making an eliminator.
+func (o elimOp) affine(run *value.Run, f eval.Frame, args []eval.Arg, v *Number) (value.Value, bool) {
+	step := args[5].Payload.(stepPayload).stepRule
+	zero := bodyOf(args, v.data.Constructors[0])
+	if !step.affine || zero == nil || run.Plain.NoNumerals {
+		return nil, false
+	}
+	var back *value.Path // what the run came from, where it is traced
+	if run.Traced() {
+		back = run.InElimination(v.data.label)
+	}
+	run.Take(value.StepNumeral)
+	return run.Left(back, step.repeated(run, v.data, v.n, zero.Enter(run, zero.Frame(run, f)))), true
+}
+
+// repeated is an affine step taken n times from a base, which is forced: sums of
+// sums are to be numbers, not chains.
+func (r *stepRule) repeated(run *value.Run, d *Data, n natural, base value.Value) value.Value {
+	return successors(run, d, r.count.times(run, n), run.Force(base))
+}
+
 // numeral eliminates a number; ok is false where the step does not demand its
 // hypothesis and the number is to be taken apart by one.
 func (e *Eliminator) numeral(run *value.Run, v *Number) (value.Value, bool) {
 	if e.step != nil && e.step.affine && !run.Plain.NoNumerals {
 		run.Take(value.StepNumeral)
-		n := e.step.count.times(run, v.n)
-		// the base is forced, so that sums of sums are numbers and no chains
-		return successors(run, e.data, n, run.Force(e.cases[0].ApplyAll(run, nil))), true
+		return e.step.repeated(run, e.data, v.n, e.cases[0].ApplyAll(run, nil)), true
 	}
 	if v.n.big != nil || v.n.small < 2 || run.Plain.NoNumerals {
 		return nil, false
@@ -93,7 +112,7 @@ func (e *Eliminator) numeral(run *value.Run, v *Number) (value.Value, bool) {
 	for k := range v.n.small {
 		run.Take(value.StepEliminate)
 		if counts {
-			frame[0] = newNumber(e.data, natural{small: k})
+			frame[0] = newNumber(run, e.data, natural{small: k})
 		}
 		frame[1] = h
 		h = run.Force(step.Eval(run, frame))

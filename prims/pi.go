@@ -20,7 +20,7 @@ type Pi struct {
 }
 
 // Lam is a function as a value, over a type or over the interval.
-type Lam struct{ Body value.Closure }
+type Lam = value.Lam
 
 // Support is the union of the parts'.
 func (p *Pi) Support() value.Support { return p.Domain.Support() | p.Codomain.Support() }
@@ -30,22 +30,9 @@ func (p *Pi) Substitute(run *value.Run, s *value.Subst) value.Value {
 	return &Pi{run.Substitute(p.Domain, s), p.Codomain.Substitute(run, s)}
 }
 
-// Support is the closure's.
-func (l *Lam) Support() value.Support { return l.Body.Support() }
-
-// Substitute delays s over the closure.
-func (l *Lam) Substitute(run *value.Run, s *value.Subst) value.Value {
-	return &Lam{l.Body.Substitute(run, s)}
-}
-
-// Strict reports whether the function evaluates its argument in any case.
-func (l *Lam) Strict(run *value.Run) bool {
-	return l.Body.Strict(run)
-}
-
 // Hcomp is a function that composes pointwise.
 func (p *Pi) Hcomp(run *value.Run, f value.Value, walls value.System) value.Value {
-	return &Lam{value.NewCaptured(run, value.Captured{Rule: hcompPi, Values: []value.Value{p, f}, Walls: walls})}
+	return &Lam{Body: value.NewCaptured(run, value.Captured{Rule: hcompPi, Values: []value.Value{p, f}, Walls: walls})}
 }
 
 var hcompPi = &value.Rule{Name: "x", Apply: hcompPiRule}
@@ -60,7 +47,7 @@ func hcompPiRule(run *value.Run, c *value.Captured, x value.Value) value.Value {
 
 // Transp is a function that transports its argument back and its value forth.
 func (p *Pi) Transp(run *value.Run, i value.Name, phi interval.Face, f value.Value) value.Value {
-	return &Lam{value.NewCaptured(run, value.Captured{Rule: transpPi, Values: []value.Value{f}, Face: phi, I: i, Line: []value.Value{p}})}
+	return &Lam{Body: value.NewCaptured(run, value.Captured{Rule: transpPi, Values: []value.Value{f}, Face: phi, I: i, Line: []value.Value{p}})}
 }
 
 var transpPi = &value.Rule{Name: "x", Apply: transpPiRule}
@@ -208,24 +195,26 @@ func (piOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 
 type lamOp struct{}
 
+func (lamOp) Body() int { return 0 }
+
 func (lamOp) Canonical([]eval.Arg) bool { return true }
 func (lamOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
-	return &Lam{args[0].Close(run, f)}
+	return &Lam{Body: args[0].Close(run, f)}
 }
 
 type applyOp struct{}
 
-func (applyOp) Principal() int                   { return 0 }
-func (applyOp) Called() (function, argument int) { return 0, 1 }
+func (applyOp) Principal() int { return 0 }
+func (applyOp) Argument() int  { return 1 }
+
+// Call is application where it is not compiled code that is called.
+func (applyOp) Call(run *value.Run, fn, x value.Value) value.Value { return Apply(run, fn, x) }
 
 // Eval evaluates the argument where the function will do so anyway.
 func (applyOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 	fn := run.Force(args[0].Eval(run, f))
-	if l, ok := fn.(*Lam); ok {
-		if l.Body.Strict(run) {
-			return beta(run, l, run.Force(args[1].Eval(run, f)))
-		}
-		return beta(run, l, args[1].Delay(run, f))
+	if l, ok := fn.(*Lam); ok && l.Strict(run) {
+		return beta(run, l, run.Force(args[1].Eval(run, f)))
 	}
 	return Apply(run, fn, args[1].Delay(run, f))
 }

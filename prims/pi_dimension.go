@@ -22,7 +22,7 @@ func (p *PiDimension) Substitute(run *value.Run, s *value.Subst) value.Value {
 
 // Hcomp composes at each dimension.
 func (p *PiDimension) Hcomp(run *value.Run, f value.Value, walls value.System) value.Value {
-	return &Lam{value.NewCaptured(run, value.Captured{Rule: hcompPiDimension, Values: []value.Value{p, f}, Walls: walls})}
+	return &Lam{Body: value.NewCaptured(run, value.Captured{Rule: hcompPiDimension, Values: []value.Value{p, f}, Walls: walls})}
 }
 
 var hcompPiDimension = &value.Rule{Name: "i", Apply: hcompPiDimensionRule}
@@ -37,7 +37,7 @@ func hcompPiDimensionRule(run *value.Run, c *value.Captured, r value.Value) valu
 
 // Transp transports at each dimension.
 func (p *PiDimension) Transp(run *value.Run, i value.Name, phi interval.Face, f value.Value) value.Value {
-	return &Lam{value.NewCaptured(run, value.Captured{Rule: transpPiDimension, Values: []value.Value{f}, Face: phi, I: i, Line: []value.Value{p}})}
+	return &Lam{Body: value.NewCaptured(run, value.Captured{Rule: transpPiDimension, Values: []value.Value{f}, Face: phi, I: i, Line: []value.Value{p}})}
 }
 
 var transpPiDimension = &value.Rule{Name: "i", Apply: transpPiDimensionRule}

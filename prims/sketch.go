@@ -21,12 +21,6 @@ func (p *PiDimension) Sketch(s *value.Sketch) *term.Written {
 	return term.Pi(name, term.Interval(), body)
 }
 
-// Sketch is the function.
-func (l *Lam) Sketch(s *value.Sketch) *term.Written {
-	name, body := s.Body(l.Body)
-	return term.Lam(body, name)
-}
-
 // Sketch is the type of pairs.
 func (t *Sigma) Sketch(s *value.Sketch) *term.Written {
 	name, body := s.Body(t.Second)

@@ -1,6 +1,7 @@
 package prims
 
 import (
+	"example.com/boxwright/nbe/eval"
 	"example.com/boxwright/nbe/term"
 	"example.com/boxwright/value"
 	"example.com/boxwright/value/interval"
@@ -139,17 +140,18 @@ func boundaryFollowed(run *value.Run, c *Con, v value.Value) value.Value {
 	return run.Ends(e, v)
 }
 
-// enterFollowed is an elimination of a constructor without recursive arguments,
-// of which only one case has been made.
-func enterFollowed(run *value.Run, back *value.Path, body value.Case, con *Con) value.Value {
-	e := run.Begins(value.StepEliminate, "elim "+con.Of.Data.Name, func(s *value.Sketch) *term.Written {
+// matchFollowed is an elimination of v of which only the case that it takes has
+// been made.
+func matchFollowed(run *value.Run, l *value.Label, v value.Value, body *eval.Arg, env eval.Frame) value.Value {
+	back := run.InElimination(l)
+	c, _, _ := shown(run, v)
+	e := run.Begins(value.StepEliminate, "elim "+c.Data.Name, func(s *value.Sketch) *term.Written {
 		var names []string
-		for n := range body.Arity() {
-			names = append(names, hint(body.HintAt(n), "_"))
+		for _, name := range body.Hints() {
+			names = append(names, hint(name, "_"))
 		}
-		return term.Elim("_", term.Name("…"), s.Value(con), term.Case(con.Of.Name, term.Name("…"), names...))
+		return term.Elim("_", term.Name("…"), s.Value(v), term.Case(c.Name, term.Name("…"), names...))
 	})
 	run.Take(value.StepEliminate)
-	v := run.Ends(e, enter(run, body, con.Args, con.Dims))
-	return run.Left(back, v)
+	return run.Left(back, run.Ends(e, body.Enter(run, env)))
 }

@@ -30,12 +30,17 @@ type Case interface {
 	StrictIn(run *Run, k int) bool
 }
 
-// Function is implemented by values of functions that know whether they
-// evaluate their argument in any case.
-type Function interface {
-	Value
-	Strict(run *Run) bool
-}
+// Lam is a function as a value, over a type or over the interval.
+type Lam struct{ Body Closure }
+
+// Support is the closure's.
+func (l *Lam) Support() Support { return l.Body.Support() }
+
+// Substitute delays s over the closure.
+func (l *Lam) Substitute(run *Run, s *Subst) Value { return &Lam{Body: l.Body.Substitute(run, s)} }
+
+// Strict reports whether the function evaluates its argument in any case.
+func (l *Lam) Strict(run *Run) bool { return l.Body.Strict(run) }
 
 // Line is a closure over a dimension that is a value under a bound name: what
 // the Kan rules make. The body is evaluated once, at the name, and substituted.

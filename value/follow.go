@@ -275,3 +275,9 @@ func (s *Sketch) Walls(walls System) []term.Row {
 	}
 	return out
 }
+
+// Sketch is the function.
+func (l *Lam) Sketch(s *Sketch) *term.Written {
+	name, body := s.Body(l.Body)
+	return term.Lam(body, name)
+}

@@ -65,8 +65,14 @@ type Folder interface {
 	// Fold is the folded form, nil where the run keeps the definition opaque
 	// or it is an assumption.
 	Fold(run *Run) *Neutral
-	// Unfolded is the value where there is no folded form.
+	// Unfolded is the value, found without the folded form.
 	Unfolded(run *Run) Value
+	// Unfolding is the definition that Unfolded unfolds first, nil if it leaves
+	// that to another cell or unfolds none; direct is false where the value is
+	// to be found through the folded form.
+	Unfolding(run *Run) (g Global, direct bool)
+	// SketchFold is the folded form as far as it is there.
+	SketchFold(s *Sketch) *term.Written
 }
 
 // FoldLater is Fold for a folded form that f makes. Nested definitions make
@@ -101,6 +107,15 @@ type foldWork struct {
 }
 
 func (w *foldWork) Do(run *Run) Value {
+	if run.unfold == nil && w.n.Load() == nil {
+		g, direct := w.from.Unfolding(run)
+		if g != nil {
+			return w.unfolded(run, g)
+		}
+		if direct {
+			return w.from.Unfolded(run)
+		}
+	}
 	n := w.get(run)
 	if n == nil {
 		return w.from.Unfolded(run)
@@ -113,6 +128,26 @@ func (w *foldWork) Do(run *Run) Value {
 	for _, f := range n.Frames() {
 		v = f.Resume(run, v)
 	}
+	return v
+}
+
+// unfolded is the value where nobody has asked for the folded form, which is then
+// not made.
+func (w *foldWork) unfolded(run *Run, g Global) Value {
+	if !run.Traced() {
+		run.Take(StepUnfold)
+		return w.from.Unfolded(run)
+	}
+	caller := run.In(siteOf(w.from))
+	back := run.In(siteOf(g))
+	run.Take(StepUnfold)
+	run.Out(back)
+	var e *Event
+	if run.Followed() {
+		e = run.Begins(StepUnfold, StepUnfold.String()+" "+g.GlobalName(), w.from.SketchFold)
+	}
+	v := run.Ends(e, w.from.Unfolded(run))
+	run.Out(caller)
 	return v
 }
 
@@ -129,7 +164,9 @@ func (w *substitutedFold) Fold(run *Run) *Neutral {
 	return nil
 }
 
-func (w *substitutedFold) Unfolded(*Run) Value { return nil }
+func (w *substitutedFold) Unfolded(*Run) Value              { return nil }
+func (w *substitutedFold) Unfolding(*Run) (Global, bool)    { return nil, false }
+func (w *substitutedFold) SketchFold(*Sketch) *term.Written { return hidden }
 
 // GlobalHead is a global that is not unfolded: an assumption, an opaque
 // definition, or any definition in its folded form.

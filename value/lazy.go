@@ -76,7 +76,14 @@ func (r *Run) Later(support Support, f func(*Run) Value) Value {
 
 // Force evaluates v to weak head normal form.
 func (r *Run) Force(v Value) Value {
-	if l, ok := v.(*Lazy); ok {
+	if l, ok := v.(*Lazy); ok || r.solutions != nil {
+		return r.forced(v, l)
+	}
+	return v
+}
+
+func (r *Run) forced(v Value, l *Lazy) Value {
+	if l != nil {
 		if l.pending.Load() == published {
 			v = l.result
 		} else {

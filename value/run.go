@@ -81,7 +81,10 @@ type Run struct {
 	outer     []outerSegment
 	spare     []Value // a segment that is not in use
 	trace     *Trace  // where the work is done; nil where nobody asked
-	stacked   int64   // the levels of nesting whose stack has been charged
+	// Numerals is where the former of numerals keeps the numbers that it has
+	// made at once; nil at first.
+	Numerals any
+	stacked  int64 // the levels of nesting whose stack has been charged
 	// Standing is the definition or term that is being checked or compiled, for
 	// the code that is made of it; nil outside of any.
 	Standing *Site
@@ -291,14 +294,12 @@ type outerSegment struct {
 // Frame returns n slots for a call frame, to be given back with Release(n) in
 // the opposite order. Nothing may keep a frame after its release.
 func (r *Run) Frame(n int) []Value {
-	used := r.used + n
-	if used > len(r.slots) {
-		r.segment(n)
-		used = n
+	from, to := r.used, r.used+n
+	if to > len(r.slots) {
+		return r.segment(n)
 	}
-	f := r.slots[r.used:used:used]
-	r.used = used
-	return f
+	r.used = to
+	return r.slots[from:to:to]
 }
 
 // Release gives back the last frame, of n slots.
@@ -309,19 +310,59 @@ func (r *Run) Release(n int) {
 	}
 }
 
+// Mark is how far the run's call frames reach.
+type Mark struct{ used, segments int }
+
+// Mark is for [Run.Slide] and [Run.Reset].
+func (r *Run) Mark() Mark { return Mark{r.used, len(r.outer)} }
+
+// slack is how many slots may stand below the last frame that are not needed any
+// more: moving it each time costs more.
+const slack = 16
+
+// Slide moves the last frame down over those that were made since the mark,
+// which are not needed any more.
+func (r *Run) Slide(m Mark, f []Value) []Value {
+	used := m.used
+	if len(r.outer) != m.segments {
+		used = 0 // everything in this segment was made since
+	}
+	end := used + len(f)
+	if r.used < end+slack {
+		return f
+	}
+	g := r.slots[used:end:end]
+	for k, v := range f {
+		g[k] = v
+	}
+	r.used = end
+	return g
+}
+
+// Reset gives back all frames that were made since the mark.
+func (r *Run) Reset(m Mark) {
+	for len(r.outer) > m.segments {
+		r.shrink()
+	}
+	if len(r.outer) == m.segments { // an empty segment may have gone before
+		r.used = m.used
+	}
+}
+
 //go:noinline
-func (r *Run) segment(n int) {
+func (r *Run) segment(n int) []Value {
 	size := firstSegment
 	if r.slots != nil {
 		r.outer = append(r.outer, outerSegment{r.slots, r.used})
 		size = frameSegment
 	}
-	r.used = 0
 	if len(r.spare) >= n {
 		r.slots, r.spare = r.spare, nil
-		return
+	} else {
+		r.slots = make([]Value, max(size, n))
 	}
-	r.slots = make([]Value, max(size, n))
+	r.used = n
+	return r.slots[:n:n]
 }
 
 //go:noinline

@@ -10,6 +10,7 @@ type Abstraction struct {
 	hints    []string
 	body     Code
 	demands  []*demand   // by argument
+	first    uint32      // how it demands the first one: strict, lazy, or unknown as it depends
 	unused   []bool      // by argument; nil: all are used
 	site     *value.Site // the definition or term it was compiled for; may be nil
 }
@@ -137,7 +138,9 @@ func (c caseClosure) SubstituteCase(run *value.Run, s *value.Subst) value.Case {
 }
 
 // Uses reports whether the body mentions argument k.
-func (c *closure) Uses(k int) bool { return k >= len(c.abs.unused) || !c.abs.unused[k] }
+func (c *closure) Uses(k int) bool { return c.abs.uses(k) }
+
+func (a *Abstraction) uses(k int) bool { return k >= len(a.unused) || !a.unused[k] }
 
 // Enter is a frame for the arguments, with what is captured in its place.
 func (c caseClosure) Enter(run *value.Run) []value.Value {

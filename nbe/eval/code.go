@@ -50,6 +50,20 @@ type Ready interface {
 	Ready(f Frame, args []Arg) bool
 }
 
+// Matcher is an Eliminator that, at some values, ends in one of its own bodies.
+// That is evaluated in its place, without nesting.
+type Matcher interface {
+	Eliminator
+	// Match returns the body and a frame of [Arg.Frame] with the arguments in
+	// it; a nil body where more is to be done for v, which is forced. The step
+	// is the caller's to take.
+	Match(run *value.Run, f Frame, args []Arg, v value.Value) (*Arg, Frame)
+	// Label is what counters and profiles call it.
+	Label(args []Arg) *value.Label
+	// Eliminate is Eval for a principal argument with the value v, which is forced.
+	Eliminate(run *value.Run, f Frame, args []Arg, v value.Value) value.Value
+}
+
 type slotCode int
 
 func (c slotCode) Eval(_ *value.Run, f Frame) value.Value { return f[c] }
@@ -61,34 +75,6 @@ func (c constantCode) Eval(*value.Run, Frame) value.Value { return c.v }
 type globalCode struct{ g value.Global }
 
 func (c globalCode) Eval(run *value.Run, _ Frame) value.Value { return run.Unfold(c.g) }
-
-type opCode struct {
-	op    Operation
-	args  []Arg
-	folds bool  // its principal argument ends in a global
-	ready Ready // the operation, if it is one
-	cheap int   // 0: not cheap; otherwise 1 + how deep cheap operators nest in it
-	site  *value.Site
-}
-
-func (c *opCode) Eval(run *value.Run, f Frame) value.Value {
-	run.Own(c.site)
-	if run.Enter() {
-		return c.hop(run, f)
-	}
-	v := c.op.Eval(run, f, c.args)
-	run.Leave()
-	return v
-}
-
-// hop is apart so that the result of Eval need not live on the heap.
-//
-//go:noinline
-func (c *opCode) hop(run *value.Run, f Frame) (v value.Value) {
-	run.Hop(func() { v = c.op.Eval(run, f, c.args) })
-	run.Leave()
-	return v
-}
 
 // Fold is a definition under eliminations that nobody needs the value of yet:
 // nil where the run keeps the definition opaque, and for an assumption.
@@ -116,6 +102,61 @@ func (t *thunk) Fold(run *value.Run) *value.Neutral {
 
 // Unfolded is the value.
 func (t *thunk) Unfolded(run *value.Run) value.Value { return t.Do(run) }
+
+// Unfolding is the definition under the eliminations.
+func (t *thunk) Unfolding(run *value.Run) (value.Global, bool) {
+	for c := t.code.(*opCode); ; {
+		switch p := c.principal.code.(type) {
+		case *opCode:
+			c = p
+		case globalCode:
+			if _, ok := run.Folded(p.g).(*value.Lazy); ok {
+				return p.g, true
+			}
+			return nil, true
+		}
+	}
+}
+
+// SketchFold is the definition at those arguments that are there.
+func (t *thunk) SketchFold(s *value.Sketch) *term.Written {
+	var spine []*opCode
+	out := hidden
+	for c := t.code.(*opCode); c != nil; {
+		spine = append(spine, c)
+		switch p := c.principal.code.(type) {
+		case *opCode:
+			c = p
+		case globalCode:
+			out, c = term.Name(p.g.GlobalName()), nil
+		}
+	}
+	for k := len(spine) - 1; k >= 0; k-- {
+		if a := spine[k].argument; a != nil {
+			out = term.Apply(out, t.sketch(s, a))
+		} else {
+			out = term.Apply(hidden, out)
+		}
+	}
+	return out
+}
+
+var hidden = term.Name("…")
+
+func (t *thunk) sketch(s *value.Sketch, a *Arg) *term.Written {
+	switch c := a.code.(type) {
+	case slotCode:
+		return s.Value(t.env[c])
+	case constantCode:
+		return s.Value(c.v)
+	case globalCode:
+		return term.Name(c.g.GlobalName())
+	}
+	if a.dim != nil {
+		return s.Dimension(a.dim.eval(t.env))
+	}
+	return hidden
+}
 
 // Arg is a compiled argument of an operator: by the slot of its signature a
 // term, a body under binders, a dimension, a face, rows, or a payload.

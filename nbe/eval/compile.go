@@ -169,12 +169,12 @@ func (k *compiler) op(c *term.Op, l *layout, nv, nd int) Code {
 		out.args[i] = k.arg(a, slot, l, nv, nd)
 	}
 	out.cheap = k.cheapness(c)
-	out.ready, _ = op.(Ready)
 	if p, ok := op.(Preparer); ok {
 		if payload, ok := p.Prepare(c, nv); ok {
 			out.args = append(out.args, Arg{Payload: payload})
 		}
 	}
+	out.found()
 	if constant, ok := op.(Closed); ok {
 		return constantCode{constant.Value(k.run, out.args)}
 	}
@@ -332,6 +332,13 @@ func (k *compiler) abstraction(key term.Arg, body term.Core, binds []term.Sort, 
 		}
 		if d != nil {
 			abs.demands[s] = d
+		}
+	}
+	abs.first = lazy
+	if len(abs.demands) > 0 && abs.demands[0] != nil {
+		abs.first = unknown
+		if len(abs.demands[0].conditions) == 0 {
+			abs.first = strict
 		}
 	}
 	if k.seen == nil {

@@ -21,10 +21,13 @@ type Demander interface {
 	Demands(args []Arg) []*Arg
 }
 
-// Caller is an Operation that calls one argument with another.
+// Caller is an Eliminator that calls its principal argument with another.
 type Caller interface {
-	Operation
-	Called() (function, argument int)
+	Eliminator
+	// Argument is what it calls it with.
+	Argument() int
+	// Call calls the function fn, which is forced and no compiled λ.
+	Call(run *value.Run, fn, x value.Value) value.Value
 }
 
 // demand says that a body demands one of its slots, provided the functions in
@@ -49,8 +52,8 @@ func demandOf(c Code, slot int, nodes *int) *demand {
 			return &demand{}
 		}
 	case *opCode:
-		if e, ok := c.op.(Eliminator); ok {
-			if d := demandOfArg(&c.args[e.Principal()], slot, nodes); d != nil {
+		if c.principal != nil {
+			if d := demandOfArg(c.principal, slot, nodes); d != nil {
 				return d
 			}
 		}
@@ -61,14 +64,112 @@ func demandOf(c Code, slot int, nodes *int) *demand {
 				}
 			}
 		}
-		if o, ok := c.op.(Caller); ok {
-			f, x := o.Called()
-			if g, ok := c.args[f].code.(slotCode); ok {
-				if d := demandOfArg(&c.args[x], slot, nodes); d != nil {
-					return &demand{append([]int{int(g)}, d.conditions...)}
-				}
+		if c.caller != nil {
+			return c.demandOfCall(slot, nodes)
+		}
+	}
+	return nil
+}
+
+// Binder is an Operation whose value is the function with one of its arguments
+// as the body.
+type Binder interface {
+	Operation
+	Body() int
+}
+
+// Compiled is a global whose code is known: what a definition demands of its
+// arguments is known with it.
+type Compiled interface {
+	value.Global
+	Code() *Abstraction // nil for an assumption
+}
+
+// demandOfCall is how a call demands a slot through one of its arguments.
+func (c *opCode) demandOfCall(slot int, nodes *int) *demand {
+	var args []*Arg // the last first
+	var head Code = c
+	for {
+		o, ok := head.(*opCode)
+		if !ok || o.caller == nil {
+			break
+		}
+		args = append(args, o.argument)
+		head = o.principal.code
+	}
+	for k, a := range args {
+		var d *demand
+		switch h := head.(type) {
+		case slotCode:
+			if len(args) == 1 {
+				d = &demand{[]int{int(h)}}
+			}
+		case globalCode:
+			d = demandOfGlobal(h.g, args, len(args)-1-k, nodes)
+		}
+		if d == nil {
+			continue
+		}
+		if e := demandOfArg(a, slot, nodes); e != nil {
+			return &demand{append(d.conditions, e.conditions...)}
+		}
+	}
+	return nil
+}
+
+// demandOfGlobal is how a definition, called with all of args, the last of which
+// stands first, demands the argument k. Where it needs an argument to be a strict
+// function, that has to stand in a slot of the caller's.
+func demandOfGlobal(g value.Global, args []*Arg, k int, nodes *int) *demand {
+	compiled, ok := g.(Compiled)
+	if !ok {
+		return nil
+	}
+	code := compiled.Code()
+	if code == nil {
+		return nil
+	}
+	body := code.body
+	given := map[int]int{} // the arguments by slot
+	for n := range args {
+		o, ok := body.(*opCode)
+		if !ok {
+			return nil
+		}
+		b, ok := o.op.(Binder)
+		if !ok {
+			return nil
+		}
+		abs := o.args[b.Body()].abs
+		inner := map[int]int{0: n}
+		for at, from := range abs.captures {
+			if m, ok := given[from]; ok {
+				inner[abs.arity+at] = m
 			}
 		}
+		body, given = abs.body, inner
+	}
+	for slot, n := range given {
+		if n != k {
+			continue
+		}
+		d := demandOf(body, slot, nodes)
+		if d == nil {
+			return nil
+		}
+		out := &demand{}
+		for _, c := range d.conditions {
+			n, ok := given[c]
+			if !ok {
+				return nil
+			}
+			f, ok := args[len(args)-1-n].code.(slotCode)
+			if !ok {
+				return nil
+			}
+			out.conditions = append(out.conditions, int(f))
+		}
+		return out
 	}
 	return nil
 }
@@ -123,11 +224,13 @@ func (c *closure) StrictIn(run *value.Run, k int) bool {
 	if len(d.conditions) == 0 {
 		return true
 	}
-	if k == c.abs.arity-1 {
-		if s := c.strict.state.Load(); s != unknown {
-			return s == strict
-		}
+	if s := c.strict.state.Load(); s != unknown && k == c.abs.arity-1 {
+		return s == strict
 	}
+	return c.strictBelow(run, k, d)
+}
+
+func (c *closure) strictBelow(run *value.Run, k int, d *demand) bool {
 	verdict := lazy
 	decided := false
 	run.Down(func() { decided = c.decide(run, d) })
@@ -145,7 +248,7 @@ func (c *closure) decide(run *value.Run, d *demand) bool {
 		if slot < c.abs.arity {
 			return false // a function that comes as an argument
 		}
-		f, ok := run.Force(c.env[slot-c.abs.arity]).(value.Function)
+		f, ok := run.Force(c.env[slot-c.abs.arity]).(*value.Lam)
 		if !ok || !f.Strict(run) {
 			return false
 		}
