@@ -12,6 +12,10 @@
 //	circle.sexp        universal cover, winding numbers, loops as integers
 //	loops.sexp         the circle is a groupoid
 //	suspension.sexp    suspensions, the Hopf fibration
+//	join.sexp          joins, the circle as a group, the Hopf construction
+//	james.sexp         the James construction on the 2-sphere
+//	rotations.sexp     types with a rotation, degrees of squares of words
+//	brunerie.sexp      a Brunerie number, which is -2
 //	numerals.sexp      unary, binary and base-4 numerals, addition carried across
 package library
 

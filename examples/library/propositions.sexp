@@ -80,3 +80,26 @@
   (lam (A B h f g p q)
     (line (i j) (lam (x)
       (at (at (h x (f x) (g x) (line (k) ((at p k) x)) (line (k) ((at q k) x))) i) j)))))
+
+; Over a line of sets two paths with the same ends are equal.
+(def set-line
+  (Pi ((L (-> I (U 2))) (h (set (L 1))) (a (L 0)) (b (L 1))) (proposition (PathOver (i (L i)) a b)))
+  (lam (L h a b u v)
+    (line (k i)
+      (comp (j (L (max i (rev j))))
+        (at (h (transp (i (L i)) bot a) b
+          (line (i) (transp (m (L (max i m))) (= i 1) (at u i)))
+          (line (i) (transp (m (L (max i m))) (= i 1) (at v i)))) k i)
+        ((= k 0) (j) (transp (m (L (max i (min m (rev j))))) (or (= i 1) (= j 1)) (at u i)))
+        ((= k 1) (j) (transp (m (L (max i (min m (rev j))))) (or (= i 1) (= j 1)) (at v i)))
+        ((= i 0) (j) (transp (m (L (min m (rev j)))) (= j 1) a))
+        ((= i 1) (j) b)))))
+
+; A square of propositions over a square that stands still on its sides.
+(def proposition-square
+  (Pi ((A (U 2)) (B (-> A (U 2))) (a A) (h (proposition (B a)))
+      (p (Path (Path A a a) (line (i) a) (line (i) a))) (b (B a)))
+    (PathOver (j (PathOver (i (B (at p j i))) b b)) (line (i) b) (line (i) b)))
+  (lam (A B a h p b)
+    (proposition-line (lam (j) (PathOver (i (B (at p j i))) b b))
+      (proposition-set (B a) h b b) (line (i) b) (line (i) b))))
