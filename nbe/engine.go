@@ -11,7 +11,9 @@
 //     says what was spent, by which rules, and in which three definitions most.
 //   - Every call takes a context, whose end it sees within a millisecond as a
 //     rule and ten at worst, reading and printing too; the error wraps the
-//     context's cause. No goroutine outlives its call.
+//     context's cause. What takes no context, as the String methods and
+//     [term.Same] do, is bounded by the size of what it is given, and has a
+//     sibling that takes one. No goroutine outlives its call.
 //   - A call that was stopped leaves engine and values as they were: the same
 //     question with more to spend gives the right answer.
 //   - An Engine, its Scopes, Terms and Values are safe for concurrent use.

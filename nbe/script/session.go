@@ -265,7 +265,11 @@ func (s *Session) normal(ctx context.Context, scope *nbe.Scope, f *notation.Form
 	if err != nil {
 		return "", err
 	}
-	if !term.Same(forms[0].Term, n.Core()) {
+	same, err := term.SameContext(ctx, forms[0].Term, n.Core())
+	if err != nil {
+		return "", err
+	}
+	if !same {
 		got, err := forms[0].WrittenContext(ctx)
 		if err != nil {
 			return "", err

@@ -1,5 +1,11 @@
 package term
 
+import (
+	"context"
+
+	"example.com/boxwright/nbe/internal/watch"
+)
+
 // Sameness of terms.
 //
 // Core terms are graphs that may be exponentially larger as trees, so the
@@ -12,10 +18,25 @@ package term
 // variables and dimensions numbered by level, that is up to bound names. Cost:
 // nearly linear in the number of distinct nodes of both, however large they
 // are as trees; nesting costs no stack. Safe for concurrent use.
-func Same(a, b Core) bool {
+//
+// A call on terms that are not known to be small is better made with
+// [SameContext], which can be stopped.
+func Same(a, b Core) bool { return same(a, b, nil) }
+
+// SameContext is [Same] in a context, whose end is the error Cancelled.
+func SameContext(ctx context.Context, a, b Core) (bool, error) {
+	w := watch.Of(ctx)
+	answer := same(a, b, w)
+	if w.Cause() != nil {
+		return false, ended(w)
+	}
+	return answer, nil
+}
+
+func same(a, b Core, w *watch.Watch) bool {
 	c := comparison{class: classes[*Op]{}}
 	c.todo = append(c.todo, [2]Arg{a, b})
-	for len(c.todo) > 0 {
+	for len(c.todo) > 0 && !w.Ended(1) {
 		next := c.todo[len(c.todo)-1]
 		c.todo = c.todo[:len(c.todo)-1]
 		if !c.agree(next[0], next[1]) {
@@ -146,10 +167,22 @@ func (c *comparison) all(a, b []Arg) bool {
 // Same reports whether w and v are the same tree, places aside. Names count:
 // two terms that differ in their bound names are not the same here. Cost as for
 // the [Same] of core terms.
-func (w *Written) Same(v *Written) bool {
+func (w *Written) Same(v *Written) bool { return sameWritten(w, v, nil) }
+
+// SameContext is Same in a context, whose end is the error Cancelled.
+func (w *Written) SameContext(ctx context.Context, v *Written) (bool, error) {
+	eye := watch.Of(ctx)
+	answer := sameWritten(w, v, eye)
+	if eye.Cause() != nil {
+		return false, ended(eye)
+	}
+	return answer, nil
+}
+
+func sameWritten(w, v *Written, eye *watch.Watch) bool {
 	class := classes[*Written]{}
 	todo := [][2]*Written{{w, v}}
-	for len(todo) > 0 {
+	for len(todo) > 0 && !eye.Ended(1) {
 		w, v := todo[len(todo)-1][0], todo[len(todo)-1][1]
 		todo = todo[:len(todo)-1]
 		if w == v {

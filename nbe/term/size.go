@@ -1,6 +1,7 @@
 package term
 
 import (
+	"context"
 	"math/big"
 
 	"example.com/boxwright/nbe/internal/watch"
@@ -20,9 +21,22 @@ const maxSizeBits = 1 << 14
 // nothing; a dimension or a face in an argument counts what writing it takes.
 // A tree of 2^16384 nodes or more is given as that number. Cost: linear in the
 // graph, except that the numbers may have up to 2 KB. Safe for concurrent use.
+//
+// A call on a term that is not known to be small is better made with
+// [SizeContext], which can be stopped.
 func Size(c Core) (tree *big.Int, nodes int) {
 	m := measure{sizes: map[Arg]count{}}
 	return m.of(c).big(), m.nodes
+}
+
+// SizeContext is [Size] in a context, whose end is the error Cancelled.
+func SizeContext(ctx context.Context, c Core) (tree *big.Int, nodes int, err error) {
+	m := measure{sizes: map[Arg]count{}, watch: watch.Of(ctx)}
+	size := m.of(c)
+	if m.watch.Cause() != nil {
+		return nil, 0, ended(m.watch)
+	}
+	return size.big(), m.nodes, nil
 }
 
 // writtenSize is the tree size of what the writer writes: without silent arguments.

@@ -9,6 +9,7 @@ import (
 	"context"
 	"errors"
 	"fmt"
+	"io"
 	"math/big"
 	"slices"
 	"strings"
@@ -137,6 +138,60 @@ func TestStoppedAnywhereAndAskedAgain(t *testing.T) {
 	require.NoError(t, ask(context.Background(), e, ty, text))
 }
 
+// What goes over terms without a run can be stopped anywhere, too, and otherwise
+// answers as it does without a context.
+func TestTermsAreGoneOverInAContext(t *testing.T) {
+	e := corpusEngine(t)
+	s := e.Scope()
+	w := readText(t, rep(8_000, "(f ", "a", ")"))
+	x, y := mustInfer(t, s, rep(8_000, "(f ", "a", ")")).Core(), mustInfer(t, s, rep(8_000, "(f ", "a", ")")).Core()
+	again := readText(t, rep(8_000, "(f ", "a", ")"))
+	for name, call := range map[string]func(ctx context.Context) error{
+		"same": func(ctx context.Context) error {
+			same, err := term.SameContext(ctx, x, y)
+			require.True(t, same || err != nil)
+			return err
+		},
+		"written": func(ctx context.Context) error {
+			same, err := w.SameContext(ctx, again)
+			require.True(t, same || err != nil)
+			return err
+		},
+		"size": func(ctx context.Context) error {
+			tree, nodes, err := term.SizeContext(ctx, x)
+			if err == nil {
+				want, graph := term.Size(x)
+				require.Equal(t, want, tree)
+				require.Equal(t, graph, nodes)
+			}
+			return err
+		},
+		"write": func(ctx context.Context) error { return second(s.WriteContext(ctx, x)) },
+		"text":  func(ctx context.Context) error { return second(w.TextContext(ctx)) },
+		"format": func(ctx context.Context) error {
+			return second(notation.FormatContext(ctx, w, 80))
+		},
+		"read": func(ctx context.Context) error {
+			return second(notation.ReadTermContext(ctx, w.Text(1<<20), "", nil))
+		},
+		"script": func(ctx context.Context) error {
+			return second(notation.ReadScriptContext(ctx, []byte("(show "+w.Text(1<<20)+")"), "", nil))
+		},
+		"save":    func(ctx context.Context) error { return e.Save(ctx, io.Discard) },
+		"account": func(ctx context.Context) error { return second(e.Account(ctx, "Tree")) },
+	} {
+		whole := newLooked(0, time.Hour)
+		require.NoError(t, call(whole), name)
+		looks := len(whole.gaps)
+		require.Positive(t, looks, name)
+		for end := 1; end <= looks; end += 1 + looks/12 {
+			err := call(newLooked(end, time.Hour))
+			require.Equal(t, term.Cancelled, term.KindOf(err), "%s at look %d of %d: %v", name, end, looks, err)
+			require.ErrorIs(t, err, errQuayClosed, name)
+		}
+	}
+}
+
 // The cause of a context is what the error wraps; a deadline that has passed is
 // seen though its timer has not run.
 func TestCause(t *testing.T) {
@@ -149,6 +204,11 @@ func TestCause(t *testing.T) {
 		"declare": e.Declare(ctx, &term.Declaration{Name: "Void"}),
 		"read":    second(notation.ReadTermContext(ctx, "a", "", nil)),
 		"format":  second(notation.FormatContext(ctx, term.Name("a"), 80)),
+		"same":    second(term.SameContext(ctx, &term.Global{Name: "a"}, &term.Global{Name: "a"})),
+		"written": second(term.Name("a").SameContext(ctx, term.Name("a"))),
+		"size":    sized(ctx, &term.Global{Name: "a"}),
+		"write":   second(e.Scope().WriteContext(ctx, &term.Global{Name: "a"})),
+		"save":    e.Save(ctx, io.Discard),
 	} {
 		require.Equal(t, term.Cancelled, term.KindOf(err), name)
 		require.ErrorIs(t, err, errQuayClosed, name)
@@ -156,6 +216,11 @@ func TestCause(t *testing.T) {
 	late, cancel2 := context.WithDeadline(context.Background(), time.Now().Add(-time.Second))
 	defer cancel2()
 	require.ErrorIs(t, ask(late, e, "Nat", "0"), context.DeadlineExceeded)
+}
+
+func sized(ctx context.Context, c term.Core) error {
+	_, _, err := term.SizeContext(ctx, c)
+	return err
 }
 
 func second[T any](_ T, err error) error { return err }
