@@ -29,8 +29,9 @@ import (
 // Loading looks at the sum, the version and the formers, and at no term: a
 // definition's type and term are decoded and compiled when somebody first looks
 // at them. The sum finds damage, not malice: a stream from somebody who is not
-// trusted is to be loaded with Recheck, which elaborates every text anew and
-// compares what comes of it with the content hash.
+// trusted is to be loaded with Recheck, which elaborates every text anew,
+// compares what comes of it with the content hash, and takes over what it has
+// elaborated itself: of such a stream no term is decoded.
 
 const (
 	stateMagic   = "\x89bwstate"
@@ -47,7 +48,8 @@ const (
 )
 
 // Recheck makes Load elaborate every definition and declaration anew from its
-// text, and compare the result with the content hash in the stream.
+// text, compare the result with the content hash in the stream, and add that
+// result, whatever else the stream holds.
 func Recheck() CallOption { return func(o *callOptions) { o.recheck = true } }
 
 // stored is a definition as it stands in a stream: decoded when needed.
@@ -250,9 +252,7 @@ func (e *Engine) Load(ctx context.Context, r io.Reader, options ...CallOption) e
 		return err
 	}
 	if o.recheck {
-		if err := e.recheck(ctx, s, options); err != nil {
-			return err
-		}
+		return e.recheck(ctx, s, options)
 	}
 	// Everything is put together in a fork, so that a failure adds nothing; what
 	// is evaluated on the way finds its names there.
@@ -325,9 +325,12 @@ func restore(run *value.Run, s *stored) *definition {
 	return d
 }
 
-// recheck elaborates everything in the stream on a fork of its own.
+// recheck elaborates everything in the stream on a fork of its own, and adds
+// what comes of it.
 func (e *Engine) recheck(ctx context.Context, s *stream, options []CallOption) error {
 	f := e.Fork()
+	var names []string
+	var xs []any
 	for k := range s.entries {
 		d := &s.entries[k]
 		if d.kind == stateData {
@@ -359,6 +362,19 @@ func (e *Engine) recheck(ctx context.Context, s *stream, options []CallOption) e
 		if h != d.hash {
 			return &term.Error{Kind: term.Unequal, Message: d.name + " is not what the stream says", WantText: d.hash.String(), GotText: h.String()}
 		}
+		switch x := f.lookup(d.name).(type) {
+		case *definition:
+			x.place, x.site.Place = d.place, d.place
+			names, xs = append(names, d.name), append(xs, x)
+		case *prims.Data:
+			names, xs = append(names, d.name), append(xs, x)
+			for _, c := range x.Constructors {
+				names, xs = append(names, c.Name), append(xs, c)
+			}
+		}
+	}
+	if err := e.add(names, xs); err != nil {
+		return err
 	}
 	return nil
 }

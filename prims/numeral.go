@@ -66,10 +66,8 @@ func (n natural) plus(run *value.Run, m natural) natural {
 	return naturalOf(new(big.Int).Add(a, b))
 }
 
-// pieceBits is the size of the pieces in which long numbers are multiplied, so
-// that no one multiplication takes longer than some 100 µs.
-const pieceBits = 1 << 16
-
+// times is a product of which one factor, the number of successors that a step
+// writes out, is short; with two long ones it could not be interrupted.
 func (n natural) times(run *value.Run, m natural) natural {
 	if n.big == nil && n.small == 1 {
 		return m
@@ -81,26 +79,7 @@ func (n natural) times(run *value.Run, m natural) natural {
 	}
 	a, b := n.Int(), m.Int()
 	afford(run, a.BitLen()+b.BitLen())
-	if min(a.BitLen(), b.BitLen()) <= pieceBits/8 {
-		return naturalOf(new(big.Int).Mul(a, b))
-	}
-	product, row := new(big.Int), new(big.Int)
-	for j := (b.BitLen() - 1) / pieceBits; j >= 0; j-- { // Horner's rule, in both numbers
-		row.SetInt64(0)
-		for i := (a.BitLen() - 1) / pieceBits; i >= 0; i-- {
-			row.Lsh(row, pieceBits).Add(row, new(big.Int).Mul(piece(a, i), piece(b, j)))
-			run.Charge(pieceBits / 4)
-		}
-		product.Lsh(product, pieceBits).Add(product, row)
-	}
-	return naturalOf(product)
-}
-
-// piece is the k-th group of pieceBits bits of a.
-func piece(a *big.Int, k int) *big.Int {
-	const words = pieceBits / bits.UintSize
-	all := a.Bits()
-	return new(big.Int).SetBits(all[k*words : min((k+1)*words, len(all))])
+	return naturalOf(new(big.Int).Mul(a, b))
 }
 
 func (n natural) minus(run *value.Run, m natural) natural {

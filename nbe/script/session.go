@@ -36,7 +36,8 @@ type Session struct {
 	Report func(Result)
 	// Options are given to every call of the engine.
 	Options []nbe.CallOption
-	// ReadFile reads a script's file; os.ReadFile if nil.
+	// ReadFile reads a script's file. If nil, files are read up to MaxFile bytes,
+	// without waiting for the writer of a named pipe.
 	ReadFile func(name string) ([]byte, error)
 
 	loaded map[string]bool
@@ -68,9 +69,12 @@ func (s *Session) File(ctx context.Context, name string) error {
 	}
 	read := s.ReadFile
 	if read == nil {
-		read = os.ReadFile
+		read = func(name string) ([]byte, error) { return readFile(ctx, name) }
 	}
 	src, err := read(name)
+	if term.KindOf(err) == term.Cancelled {
+		return &Unreadable{err}
+	}
 	if err != nil {
 		return &Unreadable{&term.Error{Kind: term.Unreadable, Place: term.Place{File: name}, Message: "the file cannot be read", Cause: withoutPath(err)}}
 	}

@@ -95,21 +95,29 @@ func (p Place) String() string {
 // maxErrorText is where a term in an error's text is cut off, in bytes; the error itself holds it whole.
 const maxErrorText = 1 << 16
 
-// Error renders the error in one line; very long terms are cut off.
+// cutOff is s, or its beginning where it is very long.
+func cutOff(s string) string {
+	if len(s) <= maxErrorText {
+		return s
+	}
+	return strings.ToValidUTF8(s[:maxErrorText], "") + "…"
+}
+
+// Error renders the error in one line; very long terms, names and texts are cut off.
 func (e *Error) Error() string {
 	var b strings.Builder
-	if where := e.Place.String(); where != "" {
+	if where := cutOff(e.Place.String()); where != "" {
 		b.WriteString(where)
 		b.WriteString(": ")
 	}
-	b.WriteString(e.Message)
+	b.WriteString(cutOff(e.Message))
 	if e.Message == "" {
 		b.WriteString(e.Kind.String())
 	}
 	if e.Face != "" {
-		b.WriteString(" on the face " + e.Face)
+		b.WriteString(" on the face " + cutOff(e.Face))
 	}
-	want, got := e.WantText, e.GotText
+	want, got := cutOff(e.WantText), cutOff(e.GotText)
 	if e.Want != nil {
 		want = e.Want.Text(maxErrorText)
 	}
@@ -127,7 +135,7 @@ func (e *Error) Error() string {
 		}
 	}
 	if e.Cause != nil {
-		b.WriteString(": " + e.Cause.Error())
+		b.WriteString(": " + cutOff(e.Cause.Error()))
 	}
 	return b.String()
 }

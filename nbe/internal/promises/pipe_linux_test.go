@@ -1,0 +1,5 @@
+package promises
+
+import "syscall"
+
+func mkfifo(name string) error { return syscall.Mkfifo(name, 0o600) }
