@@ -19,6 +19,9 @@ func (g *GlueType) Transp(run *value.Run, i value.Name, psi interval.Face, u0 va
 	if from, to, ok := g.across(run, i, psi); ok {
 		return transpAcross(run, i, g, from, to, u0)
 	}
+	if g.bare(run, psi) {
+		return transpBare(run, i, g, u0)
+	}
 	parts := glueParts(g.Parts)
 	start, end := interval.Assign(i, interval.Zero()), interval.Assign(i, interval.One())
 

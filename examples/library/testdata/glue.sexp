@@ -170,6 +170,24 @@
       ((= j 0) (k) (comp (i (inner i)) ((fst (h 0)) (o 0 0)) (top (i) ((fst (h i)) (tfill (i R) bot (o 0 0) i))))))
     ((= j 0) (transp (i R) bot (o 0 0))))))
 
+; Glued along nothing, over and over: below each glue two composites without walls,
+; those of the outer ones after those of the inner ones.
+(assume bare (-> I (U 0))) (assume within (bare 0))
+(same (Glue (bare 1)) (transp (i (Glue (bare i))) bot (glue within))
+  (glue (hcomp (bare 1) (hcomp (bare 1) (transp (i (bare i)) bot within)))))
+(same (Glue (Glue (Glue (bare 1)))) (transp (i (Glue (Glue (Glue (bare i))))) bot (glue (glue (glue within))))
+  (glue (glue (glue (hcomp (bare 1) (hcomp (bare 1) (hcomp (bare 1) (hcomp (bare 1) (hcomp (bare 1) (hcomp (bare 1)
+    (transp (i (bare i)) bot within)))))))))))
+(assume wide (Pi ((k I)) (Glue (Glue (Glue A ((= k 0) T e))))))
+(same (Pi ((k I)) (Glue (Glue (Glue A ((= k 0) T e)))))
+  (lam (k) (transp (i (Glue (Glue (Glue A ((= k 0) T e))))) bot (wide k)))
+  (lam (k) (glue (hcomp (Glue (Glue A ((= k 0) T e))) (comp (i (Glue (Glue A ((= k 0) T e)))) (unglue (wide k)))))))
+; Where nothing moves on a face, that face is a wall.
+(same (Pi ((k I)) (Glue (Glue A)))
+  (lam (k) (transp (i (Glue (Glue A))) (= k 0) (unglue (wide 1))))
+  (lam (k) (glue (hcomp (Glue A) (comp (i (Glue A)) (unglue (unglue (wide 1))) ((= k 0) (i) (unglue (unglue (wide 1)))))
+    ((= k 0) (l) (unglue (unglue (wide 1))))))))
+
 ; Levels: a glued type lives where its parts do.
 (reject (def wrong (U 0) (Glue (U 0))))
 (same (U 1) (Glue (U 0)) (Glue (U 0)))
