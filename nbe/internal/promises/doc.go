@@ -4,5 +4,6 @@
 // terms that grow.
 //
 // BOXWRIGHT_LONG=1 makes the tests long: a million levels, half a minute of
-// concurrency, many more random terms.
+// concurrency, many more random terms. BOXWRIGHT_HAMMER=5m says how long many
+// goroutines work on one engine.
 package promises

@@ -9,6 +9,7 @@ import (
 	"context"
 	"fmt"
 	"math/rand/v2"
+	"os"
 	"runtime"
 	"sync"
 	"testing"
@@ -59,6 +60,9 @@ func TestManyGoroutinesOneEngine(t *testing.T) {
 	lasts := time.Second
 	if long {
 		lasts = 30 * time.Second
+	}
+	if d, err := time.ParseDuration(os.Getenv("BOXWRIGHT_HAMMER")); err == nil {
+		lasts = d
 	}
 	end := time.Now().Add(lasts)
 	var wg sync.WaitGroup
