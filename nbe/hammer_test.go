@@ -140,10 +140,10 @@ func TestNoGoroutineIsLeft(t *testing.T) {
 	before := runtime.NumGoroutine()
 	e := fresh(t)
 	w := term.Numeral(0)
-	for range 60_000 {
+	for range 50_000 {
 		w = term.Ann(w, nat())
 	}
-	for _, l := range []nbe.Limits{{}, {Depth: 50_000}, {Steps: 30_000}} {
+	for _, l := range []nbe.Limits{{}, {Depth: 40_000}, {Steps: 30_000}} {
 		_, err := e.Scope().Infer(background, w, nbe.Within(l))
 		if l.Depth+l.Steps > 0 {
 			assert.ErrorIs(t, err, tooMuch)

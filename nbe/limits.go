@@ -26,14 +26,14 @@ type Limits struct {
 // of steps lasts about a minute. A level of nesting takes 0.7 to 2.4 kB of stack,
 // up to 3.0 kB under the race detector and up to 3.8 kB without optimisation;
 // 1,000 levels stand on a stack of at most 4 MB (value.HopEvery), so that the
-// default nesting fits in 64 × 4 MB = 256 MB in each of these builds. Memory is charged
+// default nesting takes 60 × 4 MB = 240 MB in each of these builds. Memory is charged
 // when it is allocated and never given back, at some 0.5 to 1 GB in a second, so
 // the default lasts for 10 to 20 seconds of allocation. The output, at about
 // 200 bytes a node, is at most 2 GB, and the text at most 4 million nodes of
 // some 100 bytes.
 const (
 	DefaultSteps  = 100_000_000
-	DefaultDepth  = 64_000
+	DefaultDepth  = 60_000
 	DefaultMemory = 8 << 30
 	DefaultOutput = 10_000_000
 	DefaultText   = 1 << 22
