@@ -181,7 +181,7 @@ type pathOp struct{}
 
 func (pathOp) Canonical([]eval.Arg) bool { return true }
 func (pathOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
-	return &Path{args[0].Close(run, f), args[1].Delay(run, f), args[2].Delay(run, f)}
+	return &Path{args[0].Family(run, f), args[1].Delay(run, f), args[2].Delay(run, f)}
 }
 
 type pathLamOp struct{}

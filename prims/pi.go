@@ -190,7 +190,7 @@ type piOp struct{}
 
 func (piOp) Canonical([]eval.Arg) bool { return true }
 func (piOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
-	return &Pi{args[0].Delay(run, f), args[1].Close(run, f)}
+	return &Pi{args[0].Delay(run, f), args[1].Family(run, f)}
 }
 
 type lamOp struct{}

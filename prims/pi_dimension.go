@@ -98,7 +98,7 @@ type piDimensionOp struct{}
 
 func (piDimensionOp) Canonical([]eval.Arg) bool { return true }
 func (piDimensionOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
-	return &PiDimension{args[0].Close(run, f)}
+	return &PiDimension{args[0].Family(run, f)}
 }
 
 func piDimensionFormer() Former {

@@ -202,7 +202,7 @@ type sigmaOp struct{}
 
 func (sigmaOp) Canonical([]eval.Arg) bool { return true }
 func (sigmaOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
-	return &Sigma{args[0].Delay(run, f), args[1].Close(run, f)}
+	return &Sigma{args[0].Delay(run, f), args[1].Family(run, f)}
 }
 
 type pairOp struct{}

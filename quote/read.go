@@ -21,6 +21,8 @@ type Reader struct {
 	dimensions int
 	fold       Fold
 	memo       map[memoKey]value.Core
+	outside    int        // the variables that were there at first
+	bound      []variable // the last variable of each level above those
 	nodes      int64
 	limit      int64
 }
@@ -34,7 +36,7 @@ type memoKey struct {
 // dimensions; the names of the dimensions in scope are their levels. fold may
 // be nil: every definition is unfolded.
 func NewReader(run *value.Run, variables, dimensions int, fold Fold) *Reader {
-	return &Reader{run: run, variables: variables, dimensions: dimensions, fold: fold, memo: map[memoKey]value.Core{}, limit: run.Budget().Output}
+	return &Reader{run: run, variables: variables, outside: variables, dimensions: dimensions, fold: fold, memo: map[memoKey]value.Core{}, limit: run.Budget().Output}
 }
 
 // Run is the run that reading back is charged to.
@@ -193,10 +195,29 @@ func (q *Reader) Neutral(n *value.Neutral) value.Core {
 	return c
 }
 
+// variable is one that a binder has had. Binders side by side, as in a large
+// pair of functions, have the same ones.
+type variable struct {
+	hint string
+	t    value.Value
+	x    *value.Neutral
+}
+
+func (q *Reader) variable(hint string, t value.Value) *value.Neutral {
+	k := q.variables - q.outside
+	q.variables++
+	for len(q.bound) <= k {
+		q.bound = append(q.bound, variable{})
+	}
+	if v := &q.bound[k]; v.x == nil || v.hint != hint || v.t != t {
+		*v = variable{hint, t, value.NewVariable(q.variables-1, hint, t)}
+	}
+	return q.bound[k].x
+}
+
 // Variable goes under the binder of a variable.
 func (q *Reader) Variable(hint string, t value.Value, body func(x value.Value) value.Core) *term.Bound {
-	x := value.NewVariable(q.variables, hint, t)
-	q.variables++
+	x := q.variable(hint, t)
 	c := body(x)
 	q.variables--
 	return &term.Bound{Hints: []string{hint}, Body: c}
@@ -217,10 +238,8 @@ type readerBinding struct {
 }
 
 func (b *readerBinding) Variable(hint string, t value.Value) value.Value {
-	x := value.NewVariable(b.q.variables, hint, t)
-	b.q.variables++
 	b.hints = append(b.hints, hint)
-	return x
+	return b.q.variable(hint, t)
 }
 
 func (b *readerBinding) Dimension(hint string) value.Name {

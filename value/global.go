@@ -38,6 +38,10 @@ func (r *Run) Unfold(g Global) Value {
 	return g.Unfold(r)
 }
 
+// Restrained reports whether the run keeps definitions opaque that others unfold,
+// so that what it makes is not for others.
+func (r *Run) Restrained() bool { return r.unfold != nil }
+
 // Folded is a global that nobody needs the value of yet.
 func (r *Run) Folded(g Global) Value {
 	if d, ok := r.solutions[g]; ok {
@@ -206,7 +210,12 @@ type VariableHead struct {
 
 // NewVariable is a variable as a value.
 func NewVariable(level int, name string, t Value) *Neutral {
-	return NewNeutral(&VariableHead{level, t, name})
+	v := &struct {
+		n Neutral
+		h VariableHead
+	}{h: VariableHead{level, t, name}}
+	v.n = Neutral{head: &v.h, support: t.Support()}
+	return &v.n
 }
 
 // Support is that of its type.

@@ -1,6 +1,10 @@
 package eval
 
-import "example.com/boxwright/value"
+import (
+	"sync/atomic"
+
+	"example.com/boxwright/value"
+)
 
 // Abstraction is a compiled body with its own frame: first the arguments, then
 // the captured slots of the surrounding frame, exactly those it uses.
@@ -112,6 +116,19 @@ func (c *closure) ApplyAll(run *value.Run, args []value.Value) value.Value {
 
 // OpenAll is the body under all its arguments, in a cell.
 func (c *closure) OpenAll(run *value.Run, args []value.Value) value.Value {
+	switch body := c.abs.body.(type) {
+	case slotCode:
+		if int(body) < len(args) {
+			return args[body]
+		}
+		return c.env[int(body)-len(args)]
+	case *opCode:
+		if body.cheap > 0 {
+			return c.ApplyAll(run, args)
+		}
+	default:
+		return delay(run, body, nil)
+	}
 	run.Charge(int64(len(args)+len(c.env)) * value.PriceSlot)
 	env := make([]value.Value, len(args)+len(c.env))
 	copy(env, args)
@@ -128,6 +145,34 @@ func (c *closure) HintAt(k int) string {
 		return c.abs.hints[k]
 	}
 	return "_"
+}
+
+// family is a closure that does not look at its argument and is opened often, as
+// the second part of a type is: once is enough.
+type family struct {
+	*closure
+	opened atomic.Pointer[value.Value]
+}
+
+// Substitute delays s over what is captured.
+func (c *family) Substitute(run *value.Run, s *value.Subst) value.Closure {
+	if d := c.closure.substitute(run, s); d != c.closure {
+		return &family{closure: d}
+	}
+	return c
+}
+
+// Open is the body in a cell, the same one each time.
+func (c *family) Open(run *value.Run, arg value.Value) value.Value {
+	if run.Plain.NoSharing || run.Restrained() {
+		return c.closure.Open(run, arg)
+	}
+	if v := c.opened.Load(); v != nil {
+		return *v
+	}
+	v := c.closure.Open(run, arg)
+	c.opened.Store(&v)
+	return v
 }
 
 type caseClosure struct{ *closure }
@@ -164,6 +209,15 @@ func (c caseClosure) AsClosure() value.Closure { return c.closure }
 // thunk is the body, with one argument before the captured slots if arg is not
 // nil, as a cell.
 func (a *Abstraction) thunk(run *value.Run, f Frame, arg value.Value) value.Value {
+	if slot, ok := a.body.(slotCode); ok {
+		if arg == nil {
+			return f[a.captures[slot]]
+		}
+		if slot == 0 {
+			return arg
+		}
+		return f[a.captures[slot-1]]
+	}
 	w := &thunk{}
 	n := len(a.captures)
 	if arg != nil {

@@ -232,6 +232,16 @@ func (a *Arg) Face(f Frame) interval.Face { return a.face.eval(f) }
 // Close is a body under one binder as a closure.
 func (a *Arg) Close(run *value.Run, f Frame) value.Closure { return a.abs.close(run, f) }
 
+// Family is Close for the part of a type that is opened wherever the type is
+// looked at.
+func (a *Arg) Family(run *value.Run, f Frame) value.Closure {
+	c := a.abs.close(run, f)
+	if c.Uses(0) {
+		return c
+	}
+	return &family{closure: c}
+}
+
 // CloseAll is a body under any number of binders as a case.
 func (a *Arg) CloseAll(run *value.Run, f Frame) value.Case { return caseClosure{a.abs.close(run, f)} }
 
