@@ -19,13 +19,8 @@ type Resolver interface {
 func Compile(run *value.Run, r Resolver, c term.Core, nv, nd int, variables, dimensions []int) *Abstraction {
 	k := &compiler{run: run, r: r}
 	abs := &Abstraction{arity: len(variables) + len(dimensions), site: run.Standing}
-	l := &layout{abs: abs, variables: map[int]int{}, dimensions: map[int]int{}, size: abs.arity}
-	for s, level := range variables {
-		l.variables[level] = s
-	}
-	for s, level := range dimensions {
-		l.dimensions[level] = len(variables) + s
-	}
+	l := &layout{abs: abs, size: abs.arity}
+	l.place(variables, dimensions)
 	abs.body = k.term(c, l, nv, nd)
 	return abs
 }
@@ -66,9 +61,58 @@ type seenKey struct {
 type layout struct {
 	outer                 *layout
 	abs                   *Abstraction
-	variables, dimensions map[int]int
+	variables, dimensions slots
 	size                  int
 	used                  []bool // by argument
+}
+
+// slots says where levels stand. Most frames have few, for which a map would be
+// most of what compiling costs.
+type slots struct {
+	few  []placed
+	many map[int]int
+}
+
+type placed struct{ level, slot int }
+
+// fewSlots is how many are looked through one by one.
+const fewSlots = 12
+
+func (s *slots) at(level int) (slot int, ok bool) {
+	if s.many != nil {
+		slot, ok = s.many[level]
+		return slot, ok
+	}
+	for _, p := range s.few {
+		if p.level == level {
+			return p.slot, true
+		}
+	}
+	return 0, false
+}
+
+func (s *slots) put(level, slot int) {
+	if s.many == nil && len(s.few) < fewSlots {
+		s.few = append(s.few, placed{level, slot})
+		return
+	}
+	if s.many == nil {
+		s.many = map[int]int{}
+		for _, p := range s.few {
+			s.many[p.level] = p.slot
+		}
+	}
+	s.many[level] = slot
+}
+
+// place puts a scope's variables into the first slots, then its dimensions.
+func (l *layout) place(variables, dimensions []int) {
+	for s, level := range variables {
+		l.variables.put(level, s)
+	}
+	for s, level := range dimensions {
+		l.dimensions.put(level, len(variables)+s)
+	}
 }
 
 // slot is where a level stands. It looks outwards and then captures inwards, by
@@ -80,7 +124,7 @@ func (l *layout) slot(level int, dimension bool) int {
 		if at == nil {
 			return -1
 		}
-		if known, ok := at.levels(dimension)[level]; ok {
+		if known, ok := at.levels(dimension).at(level); ok {
 			if known < len(at.used) {
 				at.used[known] = true
 			}
@@ -94,16 +138,16 @@ func (l *layout) slot(level int, dimension bool) int {
 		at.abs.captures = append(at.abs.captures, s)
 		s = at.size
 		at.size++
-		at.levels(dimension)[level] = s
+		at.levels(dimension).put(level, s)
 	}
 	return s
 }
 
-func (l *layout) levels(dimension bool) map[int]int {
+func (l *layout) levels(dimension bool) *slots {
 	if dimension {
-		return l.dimensions
+		return &l.dimensions
 	}
-	return l.variables
+	return &l.variables
 }
 
 func (k *compiler) fault(what string, at any) {
@@ -188,13 +232,14 @@ func (k *compiler) cheapness(c *term.Op) int {
 	if known, ok := k.cheap[c]; ok {
 		return int(known)
 	}
-	cheap := 0
+	cheap, nested := 0, false
 	if o, ok := k.r.Operation(c.Sig).(Canonical); ok {
 		args := make([]Arg, len(c.Args))
 		cheap = 1
 		for i, a := range c.Args {
 			switch a := a.(type) {
 			case *term.Op:
+				nested = true
 				below := 0
 				k.run.Down(func() { below = k.cheapness(a) })
 				cheap = max(cheap, below+1)
@@ -206,10 +251,12 @@ func (k *compiler) cheapness(c *term.Op) int {
 			cheap = 0
 		}
 	}
-	if k.cheap == nil {
-		k.cheap = map[*term.Op]int8{}
+	if nested { // one without operators below it is found as quickly again
+		if k.cheap == nil {
+			k.cheap = map[*term.Op]int8{}
+		}
+		k.cheap[c] = int8(cheap)
 	}
-	k.cheap[c] = int8(cheap)
 	return cheap
 }
 
@@ -305,13 +352,13 @@ func (k *compiler) abstraction(key term.Arg, body term.Core, binds []term.Sort, 
 		return abs
 	}
 	abs := &Abstraction{arity: len(binds), hints: hints, site: k.run.Standing}
-	inner := &layout{outer: l, abs: abs, variables: map[int]int{}, dimensions: map[int]int{}, size: len(binds), used: make([]bool, len(binds))}
+	inner := &layout{outer: l, abs: abs, size: len(binds), used: make([]bool, len(binds))}
 	for s, sort := range binds {
 		if sort == term.DimensionSort {
-			inner.dimensions[nd] = s
+			inner.dimensions.put(nd, s)
 			nd++
 		} else {
-			inner.variables[nv] = s
+			inner.variables.put(nv, s)
 			nv++
 		}
 	}
@@ -353,13 +400,8 @@ func (k *compiler) abstraction(key term.Arg, body term.Core, binds []term.Sort, 
 // the variables, then the dimensions.
 func CompileCase(run *value.Run, r Resolver, b *term.Bound, sorts []term.Sort, nv, nd int, variables, dimensions []int, vs []value.Value) value.Case {
 	k := &compiler{run: run, r: r}
-	outer := &layout{abs: &Abstraction{}, variables: map[int]int{}, dimensions: map[int]int{}}
-	for s, level := range variables {
-		outer.variables[level] = s
-	}
-	for s, level := range dimensions {
-		outer.dimensions[level] = len(variables) + s
-	}
+	outer := &layout{abs: &Abstraction{}}
+	outer.place(variables, dimensions)
 	abs := k.abstraction(b, b.Body, sorts, b.Hints, outer, nv, nd)
 	return caseClosure{abs.close(run, vs)}
 }

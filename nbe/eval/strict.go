@@ -233,7 +233,12 @@ func (c *closure) StrictIn(run *value.Run, k int) bool {
 func (c *closure) strictBelow(run *value.Run, k int, d *demand) bool {
 	verdict := lazy
 	decided := false
-	run.Down(func() { decided = c.decide(run, d) })
+	if run.Enter() {
+		decided = c.decideHop(run, d)
+	} else {
+		decided = c.decide(run, d)
+	}
+	run.Leave()
 	if decided {
 		verdict = strict
 	}
@@ -241,6 +246,12 @@ func (c *closure) strictBelow(run *value.Run, k int, d *demand) bool {
 		c.strict.state.Store(verdict)
 	}
 	return verdict == strict
+}
+
+//go:noinline
+func (c *closure) decideHop(run *value.Run, d *demand) (decided bool) {
+	run.Hop(func() { decided = c.decide(run, d) })
+	return decided
 }
 
 func (c *closure) decide(run *value.Run, d *demand) bool {
