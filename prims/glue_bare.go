@@ -12,7 +12,8 @@ import (
 //
 // Composites at such a type are made below its glue, so that where they nest, n
 // deep, each level would look through all below it. Here all of them are made
-// at the type below the last.
+// at the type below the last; where they look at their base in any case, one after
+// the other, so that they do not nest.
 
 // bare reports whether g has no parts and transport may go through the nest at once:
 // a run that keeps no results, or one that somebody follows, takes the general rule.
@@ -31,10 +32,21 @@ func transpBare(run *value.Run, i value.Name, g *GlueType, u0 value.Value) value
 	for range depth {
 		u = LaterUnglue(run, nil, u)
 	}
-	u = LaterTransp(run, i, a, interval.Bot(), u)
 	end := run.At(a, i, interval.One())
-	for range 2 * depth {
-		u = LaterHcomp(run, end, u, nil)
+	if looksAtBase(run, a) {
+		below := u
+		u = run.Later(a.Support().Without(i)|u.Support(), func(run *value.Run) value.Value {
+			v := run.Force(Transp(run, i, a, interval.Bot(), below))
+			for range 2 * depth {
+				v = run.Force(Hcomp(run, end, v, nil))
+			}
+			return v
+		})
+	} else {
+		u = LaterTransp(run, i, a, interval.Bot(), u)
+		for range 2 * depth {
+			u = LaterHcomp(run, end, u, nil)
+		}
 	}
 	for range depth {
 		u = NewGlueElement(u, nil)

@@ -1,8 +1,12 @@
 package library
 
 import (
+	"context"
 	"fmt"
 	"testing"
+
+	"example.com/boxwright/nbe"
+	"example.com/boxwright/nbe/script"
 )
 
 // The degree of a map of the join of two circles that is the join of two maps of
@@ -33,5 +37,39 @@ func TestBrunerieNumber(t *testing.T) {
 	e := withLibrary(t, "brunerie")
 	if got := integer(t, normal(t, e.Scope(), e, "brunerie-number")); got != -2 {
 		t.Errorf("the Brunerie number is %d", got)
+	}
+}
+
+// The same degrees where the words are carried by transport; -v tells what they
+// cost. BOXWRIGHT_LONG=1 asks for those that take half a minute of processor time.
+func TestDegreesByTransport(t *testing.T) {
+	e := newEngine(t)
+	if err := session(e, func(r script.Result) {
+		if r.Err != nil {
+			t.Fatal(shortened(r.Err))
+		}
+	}).File(context.Background(), "transports.sexp"); err != nil {
+		t.Fatal(err)
+	}
+	for _, stage := range []struct {
+		src  string
+		want int
+		long bool
+	}{
+		{"(square-degree whitehead-square)", -2, false}, // for comparison, by equivalences
+		{"(degree-once (line (j i) (moved (loop i) (loop j) base)))", 1, false},
+		{"(degree-once back-square)", -1, false},
+		{"(degree-once inverse-square)", 2, true},
+		{"(degree-twice product-square)", -2, true},
+	} {
+		if stage.long && !long {
+			continue
+		}
+		var stats nbe.Stats
+		got := integer(t, normal(t, e.Scope(), e, stage.src, nbe.Within(nbe.Limits{Depth: 150_000}), nbe.Count(&stats)))
+		if got != stage.want {
+			t.Errorf("%s is %d", stage.src, got)
+		}
+		t.Logf("%s: %d steps, %d MB charged, %d levels deep", stage.src, stats.Steps, stats.Memory>>20, stats.Deepest)
 	}
 }

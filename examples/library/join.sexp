@@ -60,3 +60,32 @@
 (def hopf-construction (-> Circle-join Sphere2)
   (lam (p) (elim (_ Sphere2) p
     ((left x) north) ((right y) south) ((bridge x y k) (merid (angle x y) k)))))
+
+; The total space of the Hopf fibration and the join of two circles, back and forth
+; (Book 8.5.7): a bridge is a path of the total space over the meridian of its angle.
+(def angle-turns (Pi ((x Circle) (y Circle)) (Path Circle (rotate (angle x y) x) y))
+  (lam (x y)
+    (compose Circle (rotate (angle x y) x) (rotate x (angle x y)) y
+      (rotate-commutes (angle x y) x) (rotate-forth x y))))
+
+(def join-total (-> Circle-join hopf-total)
+  (lam (p) (elim (_ hopf-total) p
+    ((left x) (pair north x)) ((right y) (pair south y))
+    ((bridge x y k) (pair (merid (angle x y) k)
+      (glue (at (angle-turns x y) k) ((= k 0) x) ((= k 1) y)))))))
+
+(def total-join (-> hopf-total Circle-join)
+  (lam (p)
+    ((elim (z (-> (hopf z) Circle-join)) (fst p)
+      (north (lam (x) (left x))) (south (lam (y) (right y)))
+      ((merid a k) (lam (y)
+        (hcomp Circle-join (bridge (angle a (unglue y)) (unglue y) k)
+          ((= k 0) (l) (left (at (rotate-back a y) l)))
+          ((= k 1) (l) (right y))))))
+    (snd p))))
+
+; The one lies over the 2-sphere as the Hopf construction does.
+(def join-total-over (Pi ((p Circle-join)) (Path Sphere2 (hopf-map (join-total p)) (hopf-construction p)))
+  (lam (p) (elim (q (Path Sphere2 (hopf-map (join-total q)) (hopf-construction q))) p
+    ((left x) (line (_) north)) ((right y) (line (_) south))
+    ((bridge x y k) (line (_) (merid (angle x y) k))))))

@@ -32,9 +32,9 @@ var modes = []struct {
 	{name: "random names", options: []nbe.CallOption{nbe.DrawNames(1)}},
 	{name: "other random names", options: []nbe.CallOption{nbe.DrawNames(77)}},
 	{name: "no support", engine: []nbe.Option{nbe.WithPlain(value.Plain{NoSupport: true})},
-		without: "univalence booleans integers decidable circle loops suspension join james rotations brunerie numerals universe levels transport theorems hopf degrees"},
+		without: "univalence booleans integers decidable circle loops suspension join james rotations brunerie numerals universe levels transport theorems hopf degrees transports"},
 	{name: "no frontier", engine: []nbe.Option{nbe.WithPlain(value.Plain{NoFrontier: true})}},
-	{name: "eager, no numerals", engine: []nbe.Option{nbe.WithPlain(value.Plain{Eager: true, NoNumerals: true})}, without: "hopf levels degrees"},
+	{name: "eager, no numerals", engine: []nbe.Option{nbe.WithPlain(value.Plain{Eager: true, NoNumerals: true})}, without: "hopf levels degrees transports"},
 }
 
 func leaves(without, file string) bool {
