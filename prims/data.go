@@ -363,13 +363,18 @@ func (conOp) Demands(args []eval.Arg) []*eval.Arg {
 	}
 	return nil
 }
+
+// Special is the successor of numbers.
+func (o conOp) Special(args []eval.Arg) eval.Operation {
+	if stored(args) {
+		return successorOp{o, args[0].Payload.(term.Reference).Target.(*Constructor).Data}
+	}
+	return o
+}
 func (conOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 	c := args[0].Payload.(term.Reference).Target.(*Constructor)
 	if c.constant != nil {
 		return c.constant
-	}
-	if c.Data.Numerals {
-		return successors(run, c.Data, natural{small: 1}, run.Force(args[2].Eval(run, f)))
 	}
 	vs := make([]value.Value, len(c.Args))
 	for k := range vs {

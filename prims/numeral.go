@@ -1,6 +1,7 @@
 package prims
 
 import (
+	"math"
 	"math/big"
 	"math/bits"
 
@@ -130,8 +131,8 @@ func newNumber(run *value.Run, d *Data, n natural) *Number {
 }
 
 // atOnce is how many numbers are made at once, which is cheaper than one by one
-// and keeps no more than 200 bytes alive that nobody needs.
-const atOnce = 8
+// and keeps no more than 400 bytes alive that nobody needs.
+const atOnce = 16
 
 type numberRoom struct{ left []Number }
 
@@ -180,6 +181,21 @@ func successors(run *value.Run, d *Data, n natural, v value.Value) value.Value {
 	default:
 		return &Successors{d, n, v}
 	}
+}
+
+// successorOp is the constructor suc.
+type successorOp struct {
+	conOp
+	data *Data
+}
+
+// Eval evaluates the argument: numbers are to be numbers, not chains.
+func (o successorOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
+	v := run.Force(args[2].Eval(run, f))
+	if n, ok := v.(*Number); ok && n.n.big == nil && n.n.small < math.MaxUint64 {
+		return newNumber(run, o.data, natural{small: n.n.small + 1})
+	}
+	return successors(run, o.data, natural{small: 1}, v)
 }
 
 // counted is v as a number plus a rest; the rest is nil for a numeral.

@@ -163,6 +163,7 @@ func (t *thunk) sketch(s *value.Sketch, a *Arg) *term.Written {
 type Arg struct {
 	code    Code         // a term in the surrounding frame
 	abs     *Abstraction // a delayed term, or a body under binders
+	call    *opCode      // the delayed term in the surrounding frame, where it is a small call; may be nil
 	dim     *dimensionCode
 	face    *faceCode
 	Rows    [][]Arg
@@ -173,6 +174,9 @@ type Arg struct {
 func (a *Arg) Eval(run *value.Run, f Frame) value.Value {
 	if a.code != nil {
 		return a.code.Eval(run, f)
+	}
+	if a.call != nil {
+		return a.call.Eval(run, f)
 	}
 	if a.dim != nil {
 		return run.Dimension(a.dim.eval(f))

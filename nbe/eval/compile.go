@@ -1,6 +1,8 @@
 package eval
 
 import (
+	"slices"
+
 	"example.com/boxwright/nbe/term"
 	"example.com/boxwright/value"
 )
@@ -218,6 +220,9 @@ func (k *compiler) op(c *term.Op, l *layout, nv, nd int) Code {
 			out.args = append(out.args, Arg{Payload: payload})
 		}
 	}
+	if s, ok := op.(Special); ok {
+		out.op = s.Special(out.args)
+	}
 	out.found()
 	if constant, ok := op.(Closed); ok {
 		return constantCode{constant.Value(k.run, out.args)}
@@ -272,6 +277,14 @@ type Closed interface {
 	Value(run *value.Run, args []Arg) value.Value
 }
 
+// Special is an Operation with a quicker form for some arguments, which is found
+// once, when the term is compiled.
+type Special interface {
+	Operation
+	// Special is that form, or the operation itself.
+	Special(args []Arg) Operation
+}
+
 // Preparer is an Operation that looks at its term once, when it is compiled in
 // a scope of the given number of variables; what it finds is one more argument.
 type Preparer interface {
@@ -296,7 +309,9 @@ func (k *compiler) arg(a term.Arg, slot term.Slot, l *layout, nv, nd int) Arg {
 			}
 			return Arg{code: code}
 		}
-		return Arg{abs: k.abstraction(a, a, nil, nil, l, nv, nd)}
+		abs := k.abstraction(a, a, nil, nil, l, nv, nd)
+		call, _ := outside(abs.body, abs.captures, smallCall).(*opCode)
+		return Arg{abs: abs, call: call}
 	case *term.Bound:
 		return Arg{abs: k.abstraction(a, a.Body, k.binds(a, slot), a.Hints, l, nv, nd)}
 	case term.Dimension:
@@ -332,6 +347,35 @@ func (k *compiler) arg(a term.Arg, slot term.Slot, l *layout, nv, nd int) Arg {
 		return Arg{Rows: rows}
 	}
 	return Arg{Payload: a}
+}
+
+// smallCall is how many arguments a call may have that is compiled for the
+// surrounding frame too, so that evaluating it at once needs no frame of its own.
+const smallCall = 4
+
+// outside is a call of variables and definitions with variables and definitions
+// as it stands in the surrounding frame; nil for any other code.
+func outside(c Code, captures []int, left int) Code {
+	switch c := c.(type) {
+	case slotCode:
+		return slotCode(captures[c])
+	case constantCode, globalCode:
+		return c
+	case *opCode:
+		if c.caller == nil || left == 0 {
+			return nil
+		}
+		out := *c
+		out.args = slices.Clone(c.args)
+		for k := range out.args {
+			if out.args[k] = (Arg{code: outside(c.args[k].code, captures, left-1)}); out.args[k].code == nil {
+				return nil
+			}
+		}
+		out.found()
+		return &out
+	}
+	return nil
 }
 
 // binds are the sorts of the names a binds. Where the slot leaves them open, a
