@@ -199,7 +199,7 @@ func (lamOp) Body() int { return 0 }
 
 func (lamOp) Canonical([]eval.Arg) bool { return true }
 func (lamOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
-	return &Lam{Body: args[0].Close(run, f)}
+	return args[0].Lambda(run, f)
 }
 
 type applyOp struct{}

@@ -41,17 +41,71 @@ type closure struct {
 }
 
 func (a *Abstraction) close(run *value.Run, f Frame) *closure {
-	run.Charge(value.PriceClosure)
-	c := &closure{abs: a}
-	if n := len(a.captures); n > 0 {
-		c.env = make([]value.Value, n)
-		for k, slot := range a.captures {
-			v := value.Peek(f[slot])
-			c.env[k] = v
-			c.support |= v.Support()
-		}
-	}
+	c := newClosure(len(a.captures))
+	c.close(run, a, f)
 	return c
+}
+
+// newClosure is room for a closure of n values, if there are few in one object.
+func newClosure(n int) *closure {
+	switch n {
+	case 0:
+		return new(closure)
+	case 1:
+		c := new(struct {
+			closure
+			few [1]value.Value
+		})
+		c.env = c.few[:]
+		return &c.closure
+	case 2:
+		c := new(struct {
+			closure
+			few [2]value.Value
+		})
+		c.env = c.few[:]
+		return &c.closure
+	}
+	return &closure{env: make([]value.Value, n)}
+}
+
+// lambda is the function with the body a.
+func (a *Abstraction) lambda(run *value.Run, f Frame) *value.Lam {
+	var l *value.Lam
+	var c *closure
+	switch len(a.captures) { // function and closure in one object
+	case 1:
+		x := new(struct {
+			value.Lam
+			closure
+			few [1]value.Value
+		})
+		l, c = &x.Lam, &x.closure
+		c.env = x.few[:]
+	case 2:
+		x := new(struct {
+			value.Lam
+			closure
+			few [2]value.Value
+		})
+		l, c = &x.Lam, &x.closure
+		c.env = x.few[:]
+	default:
+		l, c = new(value.Lam), newClosure(len(a.captures))
+	}
+	c.close(run, a, f)
+	l.Body = c
+	return l
+}
+
+func (c *closure) close(run *value.Run, a *Abstraction, f Frame) {
+	run.Charge(value.PriceClosure)
+	c.abs = a
+	for k, slot := range a.captures {
+		v := value.Peek(f[slot])
+		c.env[k] = v
+		c.support |= v.Support()
+	}
 }
 
 // Support is the union over what is captured.

@@ -236,6 +236,9 @@ func (a *Arg) Face(f Frame) interval.Face { return a.face.eval(f) }
 // Close is a body under one binder as a closure.
 func (a *Arg) Close(run *value.Run, f Frame) value.Closure { return a.abs.close(run, f) }
 
+// Lambda is a body under one binder as a function.
+func (a *Arg) Lambda(run *value.Run, f Frame) *value.Lam { return a.abs.lambda(run, f) }
+
 // Family is Close for the part of a type that is opened wherever the type is
 // looked at.
 func (a *Arg) Family(run *value.Run, f Frame) value.Closure {
