@@ -89,3 +89,21 @@
   (lam (p) (elim (q (Path Sphere2 (hopf-map (join-total q)) (hopf-construction q))) p
     ((left x) (line (_) north)) ((right y) (line (_) south))
     ((bridge x y k) (line (_) (merid (angle x y) k))))))
+
+; From the join to the total space and back is the identity, up to a path.
+(def total-join-total (Pi ((p Circle-join)) (Path Circle-join (total-join (join-total p)) p))
+  (lam (p) (elim (q (Path Circle-join (total-join (join-total q)) q)) p
+    ((left x) (line (_) (left x))) ((right y) (line (_) (right y)))
+    ((bridge x y k)
+      (let ((a Circle (angle x y)) (turned-back (Path Circle (angle a (rotate a x)) x) (rotate-back a x)))
+        (line (m)
+          (hcomp Circle-join
+            (bridge
+              (hcomp Circle (at turned-back m)
+                ((= m 0) (l) (angle a (at (angle-turns x y) (min k l))))
+                ((= m 1) (l) x)
+                ((= k 0) (l) (at turned-back m)))
+              (at (angle-turns x y) (max k m)) k)
+            ((= k 0) (l) (left (at turned-back (max m l))))
+            ((= k 1) (l) (right y))
+            ((= m 1) (l) (bridge x y k)))))))))

@@ -21,3 +21,4 @@
 (same (-> Circle Circle I Sphere2) (lam (x y k) (hopf-map (join-total (bridge x y k)))) (lam (x y k) (merid (angle x y) k)))
 (normal (degree (lam (x) (angle base x)) (line (_) base)) (pos 1))
 (normal (degree (lam (x) (angle x base)) (line (_) base)) (negsuc 0))
+(def statement-retract (Pi ((p (Join Circle Circle))) (Path (Join Circle Circle) (total-join (join-total p)) p)) total-join-total)
