@@ -200,3 +200,41 @@ func TestScriptsAreStoppedAnywhere(t *testing.T) {
 	}
 	t.Logf("stopped at each of %d looks", len(whole.gaps))
 }
+
+// A view tells what stands outermost, for every form of value, with its parts.
+func TestViews(t *testing.T) {
+	s := corpusEngine(t).Scope()
+	ctx := context.Background()
+	for _, c := range []struct {
+		ty, text, head string
+		parts          int
+	}{
+		{"(U 0)", "(-> A A)", "Pi", 1}, {"(U 0)", "(Pi ((i I)) A)", "Pi", 0}, {"(U 0)", "(* A A)", "Sigma", 1}, {"(U 0)", "(Path A a a)", "Path", 2},
+		{"(U 1)", "(U 0)", "U", 0}, {"(U 0)", "(Glue A)", "Glue", 1}, {"(U 0)", "(Quay A)", "Quay", 1}, {"(U 0)", "Unit", "Unit", 0}, {"(U 0)", "A", "neutral", 0},
+		{"(-> A A)", "(lam (x) x)", "lam", 0}, {"(Path A a a)", "(line (i) a)", "line", 0}, {"(* A Nat)", "(pair a 3)", "pair", 2}, {"Nat", "(add 2 3)", "numeral", 0},
+		{"Tree", "(node leaf leaf)", "node", 2}, {"(Quay A)", "(berth a (end))", "berth", 2}, {"Unit", "unit", "unit", 0}, {"(Glue A)", "(glue a)", "glue", 1}, {"A", "(f a)", "neutral", 0},
+	} {
+		x, err := s.Check(ctx, readText(t, c.text), readText(t, c.ty))
+		require.NoError(t, err, c.text)
+		view, err := x.Value().View(ctx)
+		require.NoError(t, err, c.text)
+		require.Equal(t, c.head, view.Head, c.text)
+		require.Len(t, view.Parts, c.parts, c.text)
+		for _, p := range view.Parts {
+			forms, err := p.ReadBack(ctx)
+			require.NoError(t, err, c.text)
+			require.NotEmpty(t, forms[0].String())
+			forms, err = p.Type().ReadBack(ctx)
+			require.NoError(t, err, c.text)
+			require.NotEmpty(t, forms[0].String())
+		}
+	}
+	inner, err := s.Dimension("i")
+	require.NoError(t, err)
+	x, err := inner.Check(ctx, readText(t, "(hcomp Circle base ((= i 0) (j) (loop j)))"), term.Name("Circle"))
+	require.NoError(t, err)
+	view, err := x.Value().View(ctx)
+	require.NoError(t, err)
+	require.Equal(t, "hcomp", view.Head)
+	require.Len(t, view.Parts, 1)
+}
