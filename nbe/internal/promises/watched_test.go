@@ -1,7 +1,7 @@
 package promises
 
-// Watching a call changes nothing of it but how deep it nests: the same answers,
-// the same counters, the same errors, with everything followed and each rule rendered before and
+// Watching a call changes nothing of what it does: the same answers, the same
+// rules, the same errors, with everything followed and each rule rendered before and
 // after it is applied.
 
 import (
@@ -71,7 +71,6 @@ func TestWatchingChangesNothing(t *testing.T) {
 				x, err := s.Check(ctx, mustRead(t, q.text), mustRead(t, q.ty), with...)
 				sum.Add(st)
 				if err != nil {
-					sum.Deepest = 0
 					return err.Error(), sum
 				}
 				forms, err := s.Normal(ctx, x, with...)
@@ -82,8 +81,6 @@ func TestWatchingChangesNothing(t *testing.T) {
 				c, err := s.Compare(ctx, x, y, with...)
 				require.NoError(t, err)
 				sum.Add(st)
-				// a call that is watched keeps its way, and makes no loop of calls in tail position
-				sum.Deepest = 0
 				return forms[0].String() + c.Verdict.String(), sum
 			}
 			answer, counters := ask()
@@ -93,16 +90,22 @@ func TestWatchingChangesNothing(t *testing.T) {
 			var p profile.Profile
 			seen, counted := ask(nbe.Following(&nbe.Follow{Limit: 1 << 20, Results: results, Event: see}), nbe.Profile(&p))
 			require.Equal(t, answer, seen, q.text)
-			require.Equal(t, counters, counted, q.text)
+			require.Equal(t, rules(counters), rules(counted), q.text)
 			seen, counted = ask(nbe.ProfileTime(&p), nbe.Labels())
 			require.Equal(t, answer, seen, q.text)
-			require.Equal(t, counters, counted, q.text)
+			require.Equal(t, rules(counters), rules(counted), q.text)
 		}
 	}
 	require.Greater(t, events, 100)
 	for _, word := range []string{"Pi", "PathOver", "lam", "pair", "hcomp", "transp", "at", "elim", "unglue", "glue", "fst", "snd", "Sigma", "Unit", "unit", "line"} {
 		require.Contains(t, rendered, word, "nothing was rendered with this word")
 	}
+}
+
+// rules are the counts of rules. A call that is watched keeps its way, and makes
+// no loop of calls in tail position, so it may nest deeper and take more memory.
+func rules(s nbe.Stats) []any {
+	return []any{s.Steps, s.ByRule, s.Composites, s.Transports, s.Unfolded, s.ByFormer}
 }
 
 // A filter sees every rule, and a limit of the reported leaves the rest counted.
