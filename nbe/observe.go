@@ -100,8 +100,8 @@ func (o *callOptions) watch(ctx context.Context, run *value.Run) (end func()) {
 	}
 	o.trace = t
 	run.Begin(t)
-	if run.Traced() && o.subject != nil {
-		run.In(o.subject)
+	if run.Watched() && o.subject != nil {
+		run.Operate(o.subject)
 	}
 	return func() {
 		t.End()
@@ -118,7 +118,7 @@ func (e *Engine) watched(ctx context.Context, o *callOptions, run *value.Run, bo
 		operation = value.EvaluationSite
 	}
 	inner := body
-	if run.Traced() {
+	if run.Watched() {
 		inner = func(run *value.Run) {
 			defer run.Operation(operation)()
 			body(run)

@@ -165,7 +165,7 @@ func (e *Eliminator) hypothesisOf(run *value.Run, n *value.Neutral) (value.Value
 // Eliminate eliminates v, on demand; the result may be lazy.
 func (e *Eliminator) Eliminate(run *value.Run, v value.Value) value.Value {
 	v = run.Force(v)
-	var back *value.Path // what the run came from, where it is traced
+	var back value.Back // what the run came from, where it is traced
 	if run.Traced() {
 		if run.Followed() && !run.Reporting() {
 			return e.followed(run, v)
@@ -408,19 +408,6 @@ func (f *elimFrame) Same(c value.Comparer, other value.Frame, t value.Value) boo
 type elimOp struct{}
 
 func (elimOp) Principal() int { return 3 }
-
-func (elimOp) eliminator(run *value.Run, f eval.Frame, args []eval.Arg) *Eliminator {
-	d := args[0].Payload.(term.Reference).Target.(*Data)
-	cases := make([]value.Case, len(d.Constructors))
-	for _, row := range args[4].Rows {
-		cases[row[0].Payload.(term.Reference).Index] = row[1].CloseAll(run, f)
-	}
-	var step *stepRule
-	if len(args) > 5 {
-		step = args[5].Payload.(stepPayload).stepRule
-	}
-	return newEliminator(d, args[2].Close(run, f), cases, step)
-}
 
 // Eval eliminates the principal argument.
 func (o elimOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {

@@ -17,8 +17,8 @@ func Hcomp(run *value.Run, a, base value.Value, walls value.System) value.Value 
 		return w.End(run)
 	}
 	t := run.Force(a)
-	var back *value.Path // what the run came from, where it is traced
-	if run.Traced() {
+	var back value.Back // what the run came from, where it is traced
+	if run.Watched() {
 		if run.Observed() && !run.Reporting() {
 			return hcompObserved(run, t, base, walls)
 		}
@@ -59,8 +59,8 @@ func Transp(run *value.Run, i value.Name, a value.Value, phi interval.Face, v va
 	}
 	i, a = FreshLine(run, i, a, phi.Support()|v.Support())
 	t := run.Force(a)
-	var back *value.Path // what the run came from, where it is traced
-	if run.Traced() {
+	var back value.Back // what the run came from, where it is traced
+	if run.Watched() {
 		if run.Observed() && !run.Reporting() {
 			return transpObserved(run, i, t, phi, v)
 		}

@@ -77,7 +77,7 @@ func (o elimOp) affine(run *value.Run, f eval.Frame, args []eval.Arg, v *Number)
 	if !step.affine || zero == nil || run.Plain.NoNumerals {
 		return nil, false
 	}
-	var back *value.Path // what the run came from, where it is traced
+	var back value.Back // what the run came from, where it is traced
 	if run.Traced() {
 		back = run.InElimination(v.data.label)
 	}

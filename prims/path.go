@@ -72,7 +72,7 @@ func At(run *value.Run, p value.Value, r interval.Dim) value.Value {
 	switch p := run.Force(p).(type) {
 	case *PathLam:
 		run.Take(value.StepAt)
-		if run.Followed() {
+		if run.Traced() && run.Calls() {
 			return atFollowed(run, p, r)
 		}
 		return p.Body.Apply(run, value.DimensionOf(r))

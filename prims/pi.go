@@ -75,7 +75,7 @@ func Apply(run *value.Run, f, x value.Value) value.Value {
 // beta is f x by β.
 func beta(run *value.Run, f *Lam, x value.Value) value.Value {
 	run.Take(value.StepApply)
-	if run.Followed() {
+	if run.Traced() && run.Calls() {
 		return betaFollowed(run, f, x)
 	}
 	return f.Body.Apply(run, x)

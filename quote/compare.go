@@ -67,7 +67,7 @@ func NewComparer(run *value.Run, variables, dimensions []string, isHole func(val
 
 // Included decides a ≤ b for types.
 func (c *Comparer) Included(a, b value.Value) Verdict {
-	if c.run.Traced() {
+	if c.run.Watched() {
 		defer c.run.Operation(value.ComparingSite)()
 	}
 	c.inclusion = true
@@ -78,7 +78,7 @@ func (c *Comparer) Included(a, b value.Value) Verdict {
 
 // EqualAt decides whether a and b are equal at t.
 func (c *Comparer) EqualAt(t, a, b value.Value) Verdict {
-	if c.run.Traced() {
+	if c.run.Watched() {
 		defer c.run.Operation(value.ComparingSite)()
 	}
 	return c.verdict(c.Terms("", t, a, b))
@@ -86,7 +86,7 @@ func (c *Comparer) EqualAt(t, a, b value.Value) Verdict {
 
 // EqualAsTypes decides whether two types are equal.
 func (c *Comparer) EqualAsTypes(a, b value.Value) Verdict {
-	if c.run.Traced() {
+	if c.run.Watched() {
 		defer c.run.Operation(value.ComparingSite)()
 	}
 	return c.verdict(c.EqualTypes("", a, b))

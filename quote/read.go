@@ -72,7 +72,7 @@ func (q *Reader) Type(v value.Value) (c value.Core) {
 	if c, ok := q.memo[key]; ok {
 		return c
 	}
-	if q.run.Traced() {
+	if q.run.Watched() {
 		defer q.run.Operation(value.ReadbackSite)()
 	}
 	before := q.work()
@@ -135,7 +135,7 @@ func (q *Reader) Term(t, v value.Value) (c value.Core) {
 	if c, ok := q.memo[key]; ok {
 		return c
 	}
-	if q.run.Traced() {
+	if q.run.Watched() {
 		defer q.run.Operation(value.ReadbackSite)()
 	}
 	before := q.work()

@@ -27,7 +27,8 @@ type Event struct {
 	Depth  int      // the sites that it nests in
 	Done   bool     // the rule has been applied: After tells its result
 
-	path   *Path
+	trace  *Trace
+	path   Back
 	before func(*Sketch) *term.Written
 	after  Value
 }
@@ -51,8 +52,11 @@ func (e *Event) After() *term.Written {
 // Path is the sites that the rule nests in, outermost first.
 func (e *Event) Path() []*Site {
 	var out []*Site
-	for p := e.path; p != nil && p.Site != nil; p = p.Parent {
-		out = append(out, p.Site)
+	if e.trace == nil {
+		return nil
+	}
+	for p := e.path; p != root; p = e.trace.nodes[p].parent {
+		out = append(out, e.trace.nodes[p].site)
 	}
 	for i, j := 0, len(out)-1; i < j; i, j = i+1, j-1 {
 		out[i], out[j] = out[j], out[i]
@@ -81,7 +85,7 @@ func (f *Follow) Seen() (reported, cut int64) { return f.seen, f.cut }
 func (r *Run) Followed() bool { return hooks && r.trace != nil && r.trace.Follow != nil }
 
 // Observed reports whether somebody looks at each rule, not only at its site.
-func (r *Run) Observed() bool { return r.trace.Follow != nil || r.trace.stuck != nil }
+func (r *Run) Observed() bool { return r.watch.Follow != nil || r.watch.stuck != nil }
 
 // Report says that the rule which is called next has been reported.
 func (r *Run) Report() { r.trace.reporting = true }
@@ -98,7 +102,7 @@ func (r *Run) Reporting() bool {
 func (r *Run) Begins(k StepKind, rule string, before func(*Sketch) *term.Written) *Event {
 	t := r.trace
 	f := t.Follow
-	e := &Event{Kind: k, Rule: rule, Where: t.at.owner, Depth: t.at.depth, path: t.at, before: before}
+	e := &Event{Kind: k, Rule: rule, Where: t.nodes[t.at].owner, Depth: int(t.nodes[t.at].depth), trace: t, path: t.at, before: before}
 	if f.Want != nil && !f.Want(e) {
 		return nil
 	}

@@ -138,7 +138,7 @@ func (r *Run) forceChain(first *Lazy) Value {
 		}
 		r.Forced++
 		if r.Traced() {
-			r.trace.at.Counts.Forced++
+			r.trace.nodes[r.trace.at].counts.Forced++
 		}
 		v = p.work.Do(r)
 		next, ok := v.(*Lazy)
@@ -176,10 +176,12 @@ type substituted struct {
 
 func (w *substituted) Do(run *Run) Value {
 	v := run.Force(w.v)
-	if run.Traced() {
-		back := run.In(SubstitutionSite)
+	if run.Watched() {
+		back := run.Operate(SubstitutionSite)
 		run.Pushed++
-		run.trace.at.Counts.Pushed++
+		if run.Traced() {
+			run.trace.nodes[run.trace.at].counts.Pushed++
+		}
 		return run.Left(back, run.push(v, w.s))
 	}
 	run.Pushed++

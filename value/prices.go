@@ -75,20 +75,14 @@ func (s *Spent) String() string {
 func (r *Run) attribute() {
 	n := r.Steps - r.sample
 	r.sample = r.Steps
-	if n == 0 || r.owner == nil || r.owner.Kind != SiteDefinition {
+	site := r.running()
+	if n == 0 || site == nil || site.Kind != SiteDefinition {
 		return
 	}
 	if r.spent == nil {
 		r.spent = map[*Site]int64{}
 	}
-	r.spent[r.owner] += n
-}
-
-// Own says that the code of a definition, or of a term, is running.
-func (r *Run) Own(s *Site) {
-	if r.owner != s {
-		r.owner = s
-	}
+	r.spent[site] += n
 }
 
 // Over leaves the run: it would use more of what than the limit allows.

@@ -57,21 +57,22 @@ type Run struct {
 	Plain Plain
 	// OneUniverse says that levels are switched off: every universe is U 0, and
 	// in itself.
-	OneUniverse bool
-	budget      Budget
-	ctx         context.Context
-	deadline    time.Time // of ctx, zero if it has none
-	check       int64     // the step at which to look at budget and context again
-	bytes       int64     // the memory at which to look at them again
-	work        int       // other work since the last look
-	depth       int64
-	limit       int64           // the depth at which to hop or stop
-	owner       *Site           // the definition whose code is running, nil outside of definitions
-	spent       map[*Site]int64 // steps by definition, by samples
-	sample      int64           // the steps at the last sample
-	high        *atomic.Int32
-	draw        *rand.Rand // names drawn at random, a hook for tests
-	unfold      Unfolder
+	OneUniverse     bool
+	budget          Budget
+	ctx             context.Context
+	deadline        time.Time // of ctx, zero if it has none
+	check           int64     // the step at which to look at budget and context again
+	nextBytes       int64     // the memory at which to look at them again
+	bytes           int64     // the same, or 0 where a clock wants a look at once; atomic
+	work            int       // other work since the last look
+	depth           int64
+	limit           int64           // the depth at which to hop or stop
+	levels, reached []levelState    // what runs at each depth: below the limit, and at all that were reached
+	spent           map[*Site]int64 // steps by definition, by samples
+	sample          int64           // the steps at the last sample
+	high            *atomic.Int32
+	draw            *rand.Rand // names drawn at random, a hook for tests
+	unfold          Unfolder
 	// solutions are the assumptions and holes that have become definitions
 	// since values were made that are stuck on them
 	solutions map[Global]Global
@@ -80,7 +81,8 @@ type Run struct {
 	used      int
 	outer     []outerSegment
 	spare     []Value // a segment that is not in use
-	trace     *Trace  // where the work is done; nil where nobody asked
+	watch     *Trace  // what looks at the run; nil where nobody does
+	trace     *Trace  // the same if it keeps the path of each step, nil otherwise
 	// Numerals is where the former of numerals keeps the numbers that it has
 	// made at once; nil at first.
 	Numerals any
@@ -88,6 +90,7 @@ type Run struct {
 	// Standing is the definition or term that is being checked or compiled, for
 	// the code that is made of it; nil outside of any.
 	Standing *Site
+	first    [firstLevels]levelState
 }
 
 // Settings are what a run is made with.
@@ -116,8 +119,9 @@ func NewRun(s Settings) *Run {
 	}
 	r := &Run{Plain: s.Plain, OneUniverse: s.OneUniverse, budget: s.Budget, ctx: s.Context, high: s.High, unfold: s.Unfold, draw: s.Draw, solutions: s.Solutions}
 	r.limit = min(HopEvery, r.budget.Depth)
-	r.check = min(PollEvery, r.budget.Steps)
-	r.bytes = min(pollBytes, r.budget.Memory+1)
+	r.reached = r.first[:]
+	r.lower()
+	r.next()
 	r.deadline, _ = s.Context.Deadline()
 	return r
 }
@@ -151,11 +155,31 @@ func (r *Run) Take(k StepKind) {
 	r.ByRule[k]++
 	r.Steps++
 	if r.Steps >= r.check {
-		r.poll()
+		r.tick()
 	}
 }
 
+// tick is poll, but for a clock that wants a sample before it is time for one.
+//
 //go:noinline
+func (r *Run) tick() {
+	if r.watch != nil && r.watch.due.Load() {
+		r.watch.sample()
+	}
+	if r.Steps >= r.check || r.Memory >= r.nextBytes {
+		r.poll()
+		return
+	}
+	atomic.StoreInt64(&r.bytes, r.nextBytes)
+}
+
+// next says when to look again.
+func (r *Run) next() {
+	r.check = min(r.Steps+PollEvery, r.budget.Steps)
+	r.nextBytes = min(r.Memory+pollBytes, r.budget.Memory+1)
+	atomic.StoreInt64(&r.bytes, r.nextBytes)
+}
+
 func (r *Run) poll() {
 	r.attribute()
 	if r.Steps >= r.budget.Steps {
@@ -165,8 +189,7 @@ func (r *Run) poll() {
 		r.over("bytes", r.budget.Memory)
 	}
 	r.look()
-	r.check = min(r.Steps+PollEvery, r.budget.Steps)
-	r.bytes = min(r.Memory+pollBytes, r.budget.Memory+1)
+	r.next()
 	r.work = 0
 }
 
@@ -209,59 +232,9 @@ func (r *Run) Work(n int) {
 // Charge counts memory at a fixed price.
 func (r *Run) Charge(bytes int64) {
 	r.Memory += bytes
-	if r.Memory >= r.bytes {
-		r.poll()
+	if r.Memory >= atomic.LoadInt64(&r.bytes) {
+		r.tick()
 	}
-}
-
-// Enter counts one level of nesting. Where it returns true the caller must
-// continue inside Hop; either way it calls Leave when it is done.
-func (r *Run) Enter() bool {
-	r.depth++
-	if r.depth > r.Deepest {
-		r.Deepest = r.depth
-	}
-	return r.depth >= r.limit
-}
-
-// Leave ends a level of nesting.
-func (r *Run) Leave() { r.depth-- }
-
-// Hop continues on a fresh goroutine, so that no stack grows beyond HopEvery
-// levels, or stops the run where its nesting is used up.
-func (r *Run) Hop(f func()) {
-	if r.depth >= r.budget.Depth {
-		r.over("levels of nesting", r.budget.Depth)
-	}
-	r.Poll()
-	if r.depth >= freeLevels && r.depth > r.stacked { // the stack is kept, so each level is charged once
-		r.Charge((r.depth - r.stacked) * PriceLevel)
-		r.stacked = r.depth
-	}
-	limit := r.limit
-	r.limit = min(r.depth+HopEvery, r.budget.Depth)
-	var thrown any
-	done := make(chan struct{})
-	go func() {
-		defer close(done)
-		defer func() { thrown = recover() }()
-		f()
-	}()
-	<-done
-	r.limit = limit
-	if thrown != nil {
-		panic(thrown)
-	}
-}
-
-// Down runs f one level deeper, wherever that is.
-func (r *Run) Down(f func()) {
-	if r.Enter() {
-		r.Hop(f)
-	} else {
-		f()
-	}
-	r.Leave()
 }
 
 // Fresh is a dimension's name outside avoid: the lowest, so that names stay

@@ -83,6 +83,7 @@ type FormerStats struct {
 // Snapshot is what the run has counted so far, for keeping.
 func (r *Run) Snapshot() Stats {
 	s := r.Stats
+	s.Deepest = r.deepest()
 	s.ByFormer = slices.Clone(s.ByFormer)
 	for k := range s.ByFormer {
 		s.ByFormer[k].label = nil
@@ -215,6 +216,9 @@ func NewLabel(name string, place term.Place) *Label {
 		Site{SiteElimination, "elim " + name, place},
 	}
 }
+
+// Elimination is the site "elim" of the label.
+func (l *Label) Elimination() *Site { return &l.eliminated }
 
 // Labelled is implemented by types whose former has a label. Without one a type
 // is counted under the name of its Go type.

@@ -22,7 +22,7 @@ func (t *Trace) StuckAt(c Core) *Site { return t.stuck.terms[c] }
 // Stuck notes that n got stuck here. Only a run that is traced may call it.
 func (r *Run) Stuck(n *Neutral) {
 	if t := r.trace; t.stuck != nil {
-		t.stuck.values[n] = t.at.owner
+		t.stuck.values[n] = t.nodes[t.at].owner
 	}
 }
 

@@ -21,10 +21,13 @@ import (
 // that was running when it was made. A definition's work is therefore charged
 // to it, below whoever asked for it.
 //
-// Steps and memory are taken as differences when the path changes, so a hook is
-// the entering and leaving of a site and nothing else is counted twice; the
-// counts of all paths add up to the run's exactly. A β-step belongs to the function
-// that is called, not to the caller.
+// A hook is the entering and leaving of a site. Steps and memory are subtracted
+// at the one and added at the other, which makes what was done there and below;
+// what was done below is taken off at the end. The counts of all paths add up to
+// the run's exactly. A β-step belongs to the function that is called, not to the
+// caller.
+//
+// Whoever wants time alone needs no paths: a sample finds the path (sample.go).
 //
 // Paths are kept whole up to MaxPath sites. A longer one, as recursion makes
 // it, goes back to the nearest place on it where the same site was entered from
@@ -90,91 +93,61 @@ func (c *Counts) Add(o Counts) {
 	c.Nanos += o.Nanos
 }
 
-// Path is one path of a trace: its last site, what was counted there and not
-// below, and the paths that go on from it.
-type Path struct {
-	Site   *Site
-	Counts Counts
-	Parent *Path // nil at the root
-
-	owner        *Site // the definition or term it stands in
-	depth        int
-	last, second link
-	next         []link
-}
-
-// link leads on from a path; to is further up where recursion is folded.
-type link struct {
-	site *Site
-	to   *Path
-}
-
-// Below yields the paths that go on from p, in the order they were first taken.
-func (p *Path) Below(yield func(*Path) bool) {
-	for _, l := range p.next {
-		if l.to.Parent == p && !yield(l.to) {
-			return
-		}
-	}
-}
-
 // Trace is what a run keeps of where its work is done. It belongs to one run;
 // make one for each. The zero value keeps paths and time, but no counts.
 type Trace struct {
-	Exact  bool          // count exactly, not only time
-	Every  time.Duration // between samples of time; 0: no time
-	Follow *Follow       // may be nil
+	Exact bool          // count exactly, not only time
+	Every time.Duration // between samples of time; 0: no samples
+	// Label, if not nil, is called at each sample with the definition or term and
+	// the operation that the run is at; either may be nil.
+	Label  func(definition, operation *Site)
+	Follow *Follow // may be nil
 	// Regions, if not nil, is the context whose execution trace gets a region
 	// for each operation of the engine.
 	Regions context.Context
 
-	root    Path
-	at      *Path
-	run     *Run
-	steps   int64 // of the run, when the path last changed
-	memory  int64
-	paths   int
-	due     atomic.Bool // a sample of time is due
-	sampled time.Time
-	stuck   *stuckAt // nil where nobody is going to ask
+	light  bool   // time alone: the run does not keep its path
+	nodes  []node // the paths by number; there is no number 0
+	at     Back   // where the run is
+	run    *Run
+	root   *Path
+	folds  []fold // where the run is in paths that are folded, innermost last
+	called int64  // which of the run's steps is a β-step whose function has not been entered
+	// operations are those that the run is at, where no paths are kept
+	operations []operation
+	due        atomic.Bool // a sample is due
+	sampled    time.Time
+	rest       time.Time // until then no sample is taken
+	stuck      *stuckAt  // nil where nobody is going to ask
 	// reporting: the rule that is called next has been reported
 	reporting bool
 	stop      chan struct{}
 	stopped   bool
 }
 
-// Root is the path of no sites, below which all others are.
-func (t *Trace) Root() *Path { return &t.root }
+// Root is the path of no sites, below which all others are, of a trace that has ended.
+func (t *Trace) Root() *Path { return t.root }
 
 // Begin makes t the trace of the run.
 func (r *Run) Begin(t *Trace) {
 	if t == nil || !hooks {
 		return
 	}
-	r.trace, t.run = t, r
-	t.at = &t.root
-	t.rebase()
+	r.watch, t.run = t, r
+	t.nodes, t.at = make([]node, root+1, 32), root
+	t.light = !t.Exact && t.Follow == nil && t.stuck == nil
+	if !t.light {
+		r.trace = t
+		t.nodes[root].counts = Counts{Steps: -r.Steps, Memory: -r.Memory}
+	}
 	if t.Every > 0 {
 		t.sampled, t.stop = time.Now(), make(chan struct{})
 		go t.clock(t.stop)
 	}
 }
 
-func (t *Trace) clock(stop chan struct{}) {
-	tick := time.NewTicker(t.Every)
-	defer tick.Stop()
-	for {
-		select {
-		case <-stop:
-			return
-		case <-tick.C:
-			t.due.Store(true)
-		}
-	}
-}
-
-// End closes the trace: what has been done since the path last changed is
-// counted where the run stands. It is called also for runs that were stopped.
+// End closes the trace: what is being done is counted up to here. It is called
+// also for runs that were stopped.
 func (t *Trace) End() {
 	if t == nil || t.run == nil || t.stopped {
 		return
@@ -182,128 +155,114 @@ func (t *Trace) End() {
 	t.stopped = true
 	if t.Every > 0 {
 		close(t.stop)
+		t.rest = time.Time{}
 		t.sample()
 	}
-	if t.Exact {
-		t.settle(0)
+	if !t.light {
+		t.unwind()
 	}
-	t.run.trace = nil
+	t.root = t.tree()
+	t.run.trace, t.run.watch = nil, nil
 }
 
-func (t *Trace) rebase() {
-	r := t.run
-	t.steps, t.memory = r.Steps, r.Memory
+// Watched reports whether somebody looks at the run, by whatever means: the one
+// test at the hook of an operation.
+func (r *Run) Watched() bool { return hooks && r.watch != nil }
+
+// Operate enters an operation, and returns what Out and Left take. Only a run
+// that is watched may call it.
+func (r *Run) Operate(s *Site) Back {
+	if r.trace != nil {
+		return r.In(s)
+	}
+	t := r.watch
+	t.operations = append(t.operations, operation{s, r.depth})
+	return outside
 }
 
-// settle charges what was done since it was last called to the present path,
-// apart from a number of steps that belong to what comes next.
-func (t *Trace) settle(calls int64) {
-	steps, memory, c := t.run.Steps-calls, t.run.Memory, &t.at.Counts
-	c.Steps += steps - t.steps
-	c.Memory += memory - t.memory
-	t.steps, t.memory = steps, memory
-}
-
-//go:noinline
-func (t *Trace) sample() {
-	t.due.Store(false)
-	now := time.Now()
-	t.at.Counts.Nanos += int64(now.Sub(t.sampled))
-	t.sampled = now
-}
-
-// Traced reports whether the run keeps a trace: the one test at each hook.
+// Traced reports whether the run keeps its path: the one test at all other hooks.
 func (r *Run) Traced() bool { return hooks && r.trace != nil }
 
 // In enters a site and returns where the run was, for Out. It does nothing where
 // the run is there already. Only a run that is traced may call it.
-func (r *Run) In(s *Site) *Path {
+func (r *Run) In(s *Site) Back {
 	from := r.trace.at
-	if from.Site != s {
+	if r.trace.nodes[from].site != s {
 		r.trace.enter(from, s)
 	}
 	return from
+}
+
+// Calls says that a β-step has been taken, which belongs to the code that is
+// called next; it reports whether somebody follows the run. Only a run that is
+// traced may call it.
+func (r *Run) Calls() bool {
+	r.trace.called = r.Steps
+	return r.trace.Follow != nil
 }
 
 // Called is In for the code of a function: the β-step that was taken just
 // before is the function's.
-func (r *Run) Called(s *Site) *Path {
+func (r *Run) Called(s *Site) Back {
 	from := r.trace.at
-	if from.Site != s {
-		r.trace.call(from, s)
-	}
+	r.trace.call(from, s)
 	return from
+}
+
+// TailCalled is Called for a tail call, with the β-step that was taken just
+// before. back is what the run came from when it entered the first of them, 0 for
+// that one; it is returned for Left, which leaves all of them.
+func (r *Run) TailCalled(back Back, s *Site) Back {
+	if back == 0 {
+		r.trace.called = r.Steps
+		return r.Called(s)
+	}
+	r.trace.tail(back, s, r.Steps-1)
+	return back
+}
+
+// Tail is In for a tail call; back is as with TailCalled.
+func (r *Run) Tail(back Back, s *Site) Back {
+	if back == 0 {
+		return r.In(s)
+	}
+	r.trace.tail(back, s, r.Steps)
+	return back
 }
 
 // Resume is In for a cell that a rule made while s was running: it does nothing
 // where the run stands in s already, at whatever operation.
-func (r *Run) Resume(s *Site) *Path {
+func (r *Run) Resume(s *Site) Back {
 	from := r.trace.at
-	if from.owner != s {
+	if r.trace.nodes[from].owner != s {
 		r.trace.enter(from, s)
 	}
 	return from
 }
 
-// Out leaves what In, Called or Resume entered.
-func (r *Run) Out(back *Path) {
-	if t := r.trace; t.at != back {
+// Out leaves what Operate, In, Called or Resume entered.
+func (r *Run) Out(back Back) {
+	if t := r.watch; t.at != back {
 		t.leave(back)
 	}
 }
 
-// Left is Out for a rule that returns v; back is nil where the run is not traced.
-func (r *Run) Left(back *Path, v Value) Value {
-	if back != nil && r.trace.at != back {
-		r.trace.leave(back)
+// Left is Out for a rule that returns v; back is 0 where the run is not watched.
+func (r *Run) Left(back Back, v Value) Value {
+	if back != 0 && r.watch.at != back {
+		r.watch.leave(back)
 	}
 	return v
-}
-
-func (t *Trace) enter(from *Path, s *Site) {
-	if s == nil {
-		return
-	}
-	if t.due.Load() {
-		t.sample()
-	}
-	if t.Exact {
-		t.settle(0)
-	}
-	t.step(from, s)
-}
-
-func (t *Trace) call(from *Path, s *Site) {
-	if s == nil {
-		return
-	}
-	if t.due.Load() {
-		t.sample()
-	}
-	if t.Exact {
-		t.settle(min(1, t.run.Steps-t.steps)) // code is called right after its β-step
-	}
-	t.step(from, s)
-}
-
-func (t *Trace) leave(back *Path) {
-	if t.due.Load() {
-		t.sample()
-	}
-	if t.Exact {
-		t.settle(0)
-	}
-	t.at = back
 }
 
 // Operation enters one of the engine's operations, with a region of Go's
 // execution trace where that was asked for; the function that it returns leaves.
 func (r *Run) Operation(s *Site) func() {
-	t := r.trace
-	if t.at.Site == s {
+	t := r.watch
+	if t.light && t.operating() == s || !t.light && t.nodes[t.at].site == s {
 		return func() {}
 	}
-	back := r.In(s)
+	back := r.Operate(s)
 	if t.Regions == nil {
 		return func() { r.Out(back) }
 	}
@@ -314,57 +273,13 @@ func (r *Run) Operation(s *Site) func() {
 	}
 }
 
-// Running is the definition or term whose work is being done.
+// Running is the definition or term whose work is being done, nil where the run
+// is not traced.
 func (r *Run) Running() *Site {
 	if r.trace == nil {
 		return nil
 	}
-	return r.trace.at.owner
-}
-
-func (t *Trace) step(from *Path, s *Site) {
-	if from.last.site != s {
-		t.turn(from, s)
-	}
-	to := from.last.to
-	to.Counts.Entered++
-	t.at = to
-}
-
-// turn makes the way to s the one that is found first, and the one before the second.
-func (t *Trace) turn(from *Path, s *Site) {
-	if from.second.site == s {
-		from.last, from.second = from.second, from.last
-		return
-	}
-	from.second = from.last
-	from.last = link{s, t.find(from, s)}
-}
-
-//go:noinline
-func (t *Trace) find(from *Path, s *Site) *Path {
-	for _, l := range from.next {
-		if l.site == s {
-			return l.to
-		}
-	}
-	if from.depth >= MaxPath || t.paths >= MaxPaths {
-		for p := from; p.Parent != nil; p = p.Parent {
-			if p.Site == s && (p.Parent.Site == from.Site || from.depth >= 4*MaxPath) {
-				if t.paths < MaxPaths {
-					from.next = append(from.next, link{s, p})
-				}
-				return p
-			}
-		}
-	}
-	t.paths++
-	to := &Path{Site: s, Parent: from, depth: from.depth + 1, owner: from.owner}
-	if s.Kind == SiteDefinition || s.Kind == SiteTerm {
-		to.owner = s
-	}
-	from.next = append(from.next, link{s, to})
-	return to
+	return r.trace.nodes[r.trace.at].owner
 }
 
 // FormerName is the name of t's former; nil is a neutral type.
@@ -376,23 +291,23 @@ func (r *Run) FormerName(t Type) string {
 }
 
 // InHcomp enters "hcomp at" t's former, or at neutral types if t is nil.
-func (r *Run) InHcomp(t Type) *Path {
+func (r *Run) InHcomp(t Type) Back {
 	if t == nil {
-		return r.In(&neutralLabel.hcomp)
+		return r.Operate(&neutralLabel.hcomp)
 	}
-	return r.In(&r.labelOf(t).hcomp)
+	return r.Operate(&r.labelOf(t).hcomp)
 }
 
 // InTransp enters "transp at" t's former, or at neutral types if t is nil.
-func (r *Run) InTransp(t Type) *Path {
+func (r *Run) InTransp(t Type) Back {
 	if t == nil {
-		return r.In(&neutralLabel.transp)
+		return r.Operate(&neutralLabel.transp)
 	}
-	return r.In(&r.labelOf(t).transp)
+	return r.Operate(&r.labelOf(t).transp)
 }
 
 // InElimination enters the elimination of a data type.
-func (r *Run) InElimination(l *Label) *Path { return r.In(&l.eliminated) }
+func (r *Run) InElimination(l *Label) Back { return r.In(&l.eliminated) }
 
 // tracedWork is a Go function's cell with the definition it stands in.
 type tracedWork struct {
@@ -413,7 +328,7 @@ func (w *tracedWork) Do(run *Run) Value {
 
 // laterTraced is Later in a run that is traced.
 func (r *Run) laterTraced(support Support, f func(*Run) Value) Value {
-	w := &tracedWork{f: f, site: r.trace.at.owner}
+	w := &tracedWork{f: f, site: r.trace.nodes[r.trace.at].owner}
 	return r.NewLazy(support, &w.Pending, w)
 }
 

@@ -132,7 +132,7 @@ func (c *closure) Substitute(run *value.Run, s *value.Subst) value.Closure {
 
 // Apply evaluates the body in a frame of the run's.
 func (c *closure) Apply(run *value.Run, arg value.Value) value.Value {
-	var back *value.Path // what the run came from, where it is traced
+	var back value.Back // what the run came from, where it is traced
 	if run.Traced() {
 		back = run.Called(c.abs.site)
 	}
@@ -155,7 +155,7 @@ func (c *closure) Hint() string { return c.HintAt(0) }
 
 // ApplyAll evaluates the body under all its arguments.
 func (c *closure) ApplyAll(run *value.Run, args []value.Value) value.Value {
-	var back *value.Path
+	var back value.Back
 	if run.Traced() {
 		back = run.In(c.abs.site)
 	}
@@ -310,7 +310,7 @@ func (t *thunk) Do(run *value.Run) value.Value {
 }
 
 // Site is the definition or term whose code it is.
-func (t *thunk) Site() *value.Site { return t.code.(*opCode).site }
+func (t *thunk) Site() *value.Site { return t.code.(*opCode).level.Site }
 
 func newThunk(run *value.Run, code Code, env []value.Value) value.Value {
 	return (&thunk{}).cell(run, code, env)

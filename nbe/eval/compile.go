@@ -190,7 +190,7 @@ func (k *compiler) op(c *term.Op, l *layout, nv, nd int) Code {
 	if op == nil {
 		k.run.Fail(&term.Error{Kind: term.NotFound, Message: "no former brings this operator", GotText: c.Sig.Name})
 	}
-	out := &opCode{op: op, args: make([]Arg, len(c.Args)), site: k.run.Standing}
+	out := &opCode{op: op, args: make([]Arg, len(c.Args)), level: value.Level{Site: k.run.Standing}}
 	principal := -1
 	if e, ok := op.(Eliminator); ok {
 		principal = e.Principal()
@@ -214,6 +214,9 @@ func (k *compiler) op(c *term.Op, l *layout, nv, nd int) Code {
 		}
 		out.args[i] = k.arg(a, slot, l, nv, nd)
 	}
+	if m, ok := op.(Matcher); ok {
+		out.nameCases(m.Label(out.args).Elimination())
+	}
 	out.cheap = k.cheapness(c)
 	if p, ok := op.(Preparer); ok {
 		if payload, ok := p.Prepare(c, nv); ok {
@@ -228,6 +231,22 @@ func (k *compiler) op(c *term.Op, l *layout, nv, nd int) Code {
 		return constantCode{constant.Value(k.run, out.args)}
 	}
 	return out
+}
+
+// nameCases makes the code of cases know that it runs inside of the elimination.
+func (c *opCode) nameCases(elimination *value.Site) {
+	for _, a := range c.args {
+		for _, row := range a.Rows {
+			for _, x := range row {
+				if x.abs == nil {
+					continue
+				}
+				if body, ok := x.abs.body.(*opCode); ok {
+					body.level.Within = elimination
+				}
+			}
+		}
+	}
 }
 
 // cheapness is 0 for an operator that is to be delayed, and otherwise 1 + how

@@ -17,7 +17,7 @@ type opCode struct {
 	ready     Ready   // the operation, if it is one
 	folds     bool    // its principal argument ends in a global
 	cheap     int     // 0: not cheap; otherwise 1 + how deep cheap operators nest in it
-	site      *value.Site
+	level     value.Level
 }
 
 // found looks once at what the operation can do.
@@ -33,14 +33,13 @@ func (c *opCode) found() {
 }
 
 func (c *opCode) Eval(run *value.Run, f Frame) (v value.Value) {
-	if run.Enter() {
+	if run.EnterAt(&c.level) {
 		return c.hop(run, f)
 	}
-	var mark value.Mark  // below the frame of the last tail call
-	var back *value.Path // what the run came from, where it is traced
+	var mark value.Mark // below the frame of the last tail call
+	var back value.Back // what the run came from, where it is traced
 	framed := false
 	for {
-		run.Own(c.site)
 		var body Code
 		var g Frame
 		switch {
@@ -75,9 +74,7 @@ func (c *opCode) Eval(run *value.Run, f Frame) (v value.Value) {
 			}
 			run.Take(value.StepApply)
 			if run.Traced() {
-				if from := run.Called(k.abs.site); back == nil {
-					back = from
-				}
+				back = run.TailCalled(back, k.abs.site)
 			}
 			if !framed {
 				mark, framed = run.Mark(), true
@@ -100,13 +97,11 @@ func (c *opCode) Eval(run *value.Run, f Frame) (v value.Value) {
 				mark, framed = before, true
 			}
 			if run.Traced() {
-				if from := run.InElimination(c.matcher.Label(c.args)); back == nil {
-					back = from
-				}
+				back = run.Tail(back, c.matcher.Label(c.args).Elimination())
 			}
 			run.Take(value.StepEliminate)
 			if run.Traced() {
-				run.In(a.abs.site)
+				run.Tail(back, a.abs.site)
 			}
 			body = a.abs.body
 		default:
@@ -116,6 +111,7 @@ func (c *opCode) Eval(run *value.Run, f Frame) (v value.Value) {
 			break
 		}
 		if next, ok := body.(*opCode); ok {
+			run.Continue(&next.level)
 			c, f = next, run.Slide(mark, g)
 			continue
 		}
@@ -133,7 +129,7 @@ func (c *opCode) Eval(run *value.Run, f Frame) (v value.Value) {
 //
 //go:noinline
 func (c *opCode) hop(run *value.Run, f Frame) (v value.Value) {
-	run.Hop(func() {
+	run.HopAt(&c.level, func() {
 		run.Leave() // Eval enters this level again, on the new stack
 		v = c.Eval(run, f)
 		run.Enter()
@@ -152,12 +148,13 @@ func (a *Arg) Frame(run *value.Run, f Frame) Frame {
 
 // Enter evaluates a body under binders in a frame of [Arg.Frame], which it gives back.
 func (a *Arg) Enter(run *value.Run, g Frame) value.Value {
+	var back value.Back
 	if run.Traced() {
-		run.In(a.abs.site)
+		back = run.In(a.abs.site)
 	}
 	v := a.abs.body.Eval(run, g)
 	run.Release(len(g))
-	return v
+	return run.Left(back, v)
 }
 
 // Uses reports whether a body under binders mentions its argument k.
