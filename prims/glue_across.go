@@ -18,10 +18,10 @@ import (
 // do not nest.
 
 // across returns the parts that hold at i = 0 and at i = 1, if there are such and
-// the type is one to go through by a loop. A run that keeps no results, or one that
-// somebody follows, takes the general rule.
+// the type is one to go through by a loop. A run that keeps no results takes the
+// general rule.
 func (g *GlueType) across(run *value.Run, i value.Name, psi interval.Face) (from, to *GluePart, ok bool) {
-	if !psi.IsBot() || run.Plain.NoSharing || run.Traced() && run.Observed() {
+	if !psi.IsBot() || run.Plain.NoSharing {
 		return nil, nil, false
 	}
 	for k := range g.Parts {
@@ -46,10 +46,13 @@ func looksAtBase(run *value.Run, t value.Value) bool {
 	return ok && !d.Data.Formal
 }
 
-type acrossLevel struct{ from, to *GluePart }
+type acrossLevel struct {
+	from, to *GluePart
+	event    *value.Event // of the transport, nil where nobody follows it and for the first
+}
 
 func transpAcross(run *value.Run, i value.Name, g *GlueType, from, to *GluePart, u0 value.Value) value.Value {
-	few := [4]acrossLevel{{from, to}}
+	few := [4]acrossLevel{{from: from, to: to}}
 	levels := few[:1]
 	a := run.Force(g.A)
 	for {
@@ -62,7 +65,11 @@ func transpAcross(run *value.Run, i value.Name, g *GlueType, from, to *GluePart,
 			break
 		}
 		run.Charge(value.PriceSlot)
-		levels = append(levels, acrossLevel{from, to})
+		l := acrossLevel{from: from, to: to}
+		if run.Followed() {
+			l.event = acrossFollowed(run, i, inner)
+		}
+		levels = append(levels, l)
 		run.Transport(inner)
 		a = run.Force(inner.A)
 	}
@@ -70,12 +77,17 @@ func transpAcross(run *value.Run, i value.Name, g *GlueType, from, to *GluePart,
 	v := u0
 	for _, l := range levels {
 		e, u := l.from.E, v
+		var event *value.Event
+		if run.Followed() {
+			event = beginUnglue(run, v)
+		}
 		run.Take(value.StepUnglue)
 		if now {
 			v = run.Force(mapped(run, e, u))
 		} else {
 			v = mapAlong(run, e, u)
 		}
+		run.Ends(event, v)
 	}
 	end := run.At(a, i, interval.One())
 	v = Transp(run, i, a, interval.Bot(), v)
@@ -83,6 +95,7 @@ func transpAcross(run *value.Run, i value.Name, g *GlueType, from, to *GluePart,
 		to := levels[k].to
 		a1 := run.Force(Hcomp(run, end, v, nil))
 		v = Hcomp(run, to.T, center(run, to.E, a1), nil)
+		run.Ends(levels[k].event, v)
 		if k == 0 {
 			return v
 		}

@@ -119,18 +119,28 @@ func projectFollowed(run *value.Run, p *Pair, f *projection, v value.Value) valu
 	return run.Ends(e, v)
 }
 
-func unglueFollowed(run *value.Run, g *GlueElement) value.Value {
-	e := run.Begins(value.StepUnglue, value.StepUnglue.String(), func(s *value.Sketch) *term.Written {
-		return term.Unglue(s.Value(g))
+// beginUnglue reports that v is unglued.
+func beginUnglue(run *value.Run, v value.Value) *value.Event {
+	return run.Begins(value.StepUnglue, value.StepUnglue.String(), func(s *value.Sketch) *term.Written {
+		return term.Unglue(s.Value(v))
 	})
-	return run.Ends(e, g.Base)
+}
+
+func unglueFollowed(run *value.Run, g *GlueElement) value.Value {
+	return run.Ends(beginUnglue(run, g), g.Base)
 }
 
 func unglueFaceFollowed(run *value.Run, equivalence, b value.Value) value.Value {
-	e := run.Begins(value.StepUnglue, value.StepUnglue.String(), func(s *value.Sketch) *term.Written {
-		return term.Unglue(s.Value(b))
-	})
+	e := beginUnglue(run, b)
 	return run.Ends(e, mapped(run, equivalence, b))
+}
+
+// acrossFollowed reports the transport along g in a nest of Glue types, whose
+// argument is made when all have been gone through.
+func acrossFollowed(run *value.Run, i value.Name, g *GlueType) *value.Event {
+	return run.Begins(value.StepTransp, "transp at "+g.Label().Name, func(s *value.Sketch) *term.Written {
+		return term.Transp(interval.Var(i).String(), s.Value(g), term.Bot(), term.Name("…"))
+	})
 }
 
 func boundaryFollowed(run *value.Run, c *Con, v value.Value) value.Value {

@@ -57,7 +57,15 @@ func (t *Trace) enter(from Back, s *Site) {
 	if n.last.site != s {
 		n = t.turn(from, s)
 	}
-	t.to(n.last.to, from, t.run.Steps)
+	to := n.last.to
+	n = &t.nodes[to]
+	n.counts.Entered++
+	n.counts.Steps -= t.run.Steps
+	n.counts.Memory -= t.run.Memory
+	t.at = to
+	if n.parent != from {
+		t.fold(to, from, t.run.Steps)
+	}
 }
 
 // call is enter for the code of a function, with the β-step that was taken just before.
@@ -76,11 +84,8 @@ func (t *Trace) call(from Back, s *Site) {
 	if n.last.site != s {
 		n = t.turn(from, s)
 	}
-	t.to(n.last.to, from, steps)
-}
-
-func (t *Trace) to(to, from Back, steps int64) {
-	n := &t.nodes[to]
+	to := n.last.to
+	n = &t.nodes[to]
 	n.counts.Entered++
 	n.counts.Steps -= steps
 	n.counts.Memory -= t.run.Memory
