@@ -409,6 +409,19 @@ type elimOp struct{}
 
 func (elimOp) Principal() int { return 3 }
 
+func (elimOp) eliminator(run *value.Run, f eval.Frame, args []eval.Arg) *Eliminator {
+	d := args[0].Payload.(term.Reference).Target.(*Data)
+	cases := make([]value.Case, len(d.Constructors))
+	for _, row := range args[4].Rows {
+		cases[row[0].Payload.(term.Reference).Index] = row[1].CloseAll(run, f)
+	}
+	var step *stepRule
+	if len(args) > 5 {
+		step = args[5].Payload.(stepPayload).stepRule
+	}
+	return newEliminator(d, args[2].Close(run, f), cases, step)
+}
+
 // Eval eliminates the principal argument.
 func (o elimOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
 	return o.Eliminate(run, f, args, run.Force(args[3].Eval(run, f)))

@@ -188,9 +188,38 @@ func TestCostsKnownByArithmetic(t *testing.T) {
 	}
 }
 
+// Paths add up also where they are folded, over recursion deeper than MaxPath
+// and over loops of tail calls, and hold what the counters say of each rule.
+func TestRecursionAndTailCalls(t *testing.T) {
+	e := drumEngine(t)
+	load(t, e, `
+(data Quay () (point end ()) (point left ((q Quay))) (point right ((q Quay))))
+(def along (-> Nat Quay) (lam (n) (elim (x Quay) n (zero end) ((suc k h) (left (right h))))))
+(def step (-> (-> Quay Nat Nat) Quay Nat Nat) (lam (go q n) (go q (suc n))))
+(def walk (-> Quay Nat Nat)
+  (lam (q) (elim (x (-> Nat Nat)) q (end (lam (n) n)) ((left r h) (lam (n) (step (lam (s) h) r n))) ((right r h) (lam (n) (h n))))))
+`)
+	for _, text := range []string{"(walk (along 300) 0)", "(ack 2 60)", "(turns (drum 20))", "(square (square two) Nat (lam (x) (suc x)) 0)"} {
+		var p, q profile.Profile
+		_, stats, err := normal(t, e, text, nbe.Profile(&p))
+		require.NoError(t, err)
+		addsUp(t, &p, stats)
+		if strings.HasPrefix(text, "(walk") {
+			require.EqualValues(t, 3*300, steps(&p, "step")) // a call has three arguments
+			require.EqualValues(t, 600+1, steps(&p, "walk", "elim Quay"))
+		}
+		_, stats, err = normal(t, e, text, nbe.Profile(&q), nbe.Within(nbe.Limits{Steps: stats.Steps / 2}))
+		require.Equal(t, term.OutOfBudget, term.KindOf(err))
+		addsUp(t, &q, stats)
+	}
+}
+
 // addsUp requires that the paths add up to the counters of the calls.
 func addsUp(t *testing.T, p *profile.Profile, stats nbe.Stats) {
 	t.Helper()
+	for _, s := range p.Samples() {
+		require.True(t, s.Counts.Steps >= 0 && s.Counts.Memory >= 0 && s.Counts.Entered >= 0, "%v", s)
+	}
 	total := p.Total()
 	require.Equal(t, stats.Steps, total.Steps, "steps")
 	require.Equal(t, stats.Pushed, total.Pushed, "substitutions")
