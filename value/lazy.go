@@ -138,7 +138,7 @@ func (r *Run) forceChain(first *Lazy) Value {
 		}
 		r.Forced++
 		if r.Traced() {
-			r.trace.nodes[r.trace.at].counts.Forced++
+			r.trace.nodes[r.trace.at].forced++
 		}
 		v = p.work.Do(r)
 		next, ok := v.(*Lazy)
@@ -180,7 +180,7 @@ func (w *substituted) Do(run *Run) Value {
 		back := run.Operate(SubstitutionSite)
 		run.Pushed++
 		if run.Traced() {
-			run.trace.nodes[run.trace.at].counts.Pushed++
+			run.trace.nodes[run.trace.at].pushed++
 		}
 		return run.Left(back, run.push(v, w.s))
 	}

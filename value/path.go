@@ -28,15 +28,21 @@ type Back int32
 // root is the number of the path of no sites.
 const root Back = 1
 
-// node is a path while the trace lasts.
+// node is a path while the trace lasts. What entering and leaving look at stands
+// first, in one line of the processor's cache.
 type node struct {
-	site, owner  *Site // its last site, and the definition or term it stands in
-	counts       Counts
-	below        Counts // what was done below it and is not counted at paths below it
-	parent       Back
-	depth        int32
-	last, second link
-	next         []link
+	site                   *Site // its last site
+	last                   link  // the way on that was taken last
+	parent                 Back
+	depth                  int32
+	entered, steps, memory int64
+
+	second                link // the way on that was taken last but one
+	owner                 *Site
+	pushed, forced, nanos int64
+	// what was done below it and is not counted at paths below it
+	stepsBelow, memoryBelow int64
+	next                    []link
 }
 
 // link leads on from a path; to is further up where recursion is folded.
@@ -48,31 +54,11 @@ type link struct {
 // fold says that a folded path was entered, and from where.
 type fold struct{ to, from Back }
 
-//go:noinline
-func (t *Trace) enter(from Back, s *Site) {
-	if s == nil {
-		return
-	}
-	n := &t.nodes[from]
-	if n.last.site != s {
-		n = t.turn(from, s)
-	}
-	to := n.last.to
-	n = &t.nodes[to]
-	n.counts.Entered++
-	n.counts.Steps -= t.run.Steps
-	n.counts.Memory -= t.run.Memory
-	t.at = to
-	if n.parent != from {
-		t.fold(to, from, t.run.Steps)
-	}
-}
-
-// call is enter for the code of a function, with the β-step that was taken just before.
+// call is Run.In for the code of a function, with the β-step that was taken just before.
 //
 //go:noinline
-func (t *Trace) call(from Back, s *Site) {
-	steps := t.run.Steps
+func (t *Trace) call(r *Run, from Back, s *Site) {
+	steps := r.Steps
 	if t.called == steps {
 		steps--
 	}
@@ -86,22 +72,62 @@ func (t *Trace) call(from Back, s *Site) {
 	}
 	to := n.last.to
 	n = &t.nodes[to]
-	n.counts.Entered++
-	n.counts.Steps -= steps
-	n.counts.Memory -= t.run.Memory
+	n.entered++
+	n.steps -= steps
+	n.memory -= r.Memory
 	t.at = to
 	if n.parent != from {
 		t.fold(to, from, steps)
 	}
 }
 
+// tail enters a site by a tail call from what was entered since back, 0 where
+// nothing was, and returns what to go back to. Where that leads to a path which is
+// there already, the run goes back to it instead of keeping all that a loop goes
+// through.
+//
 //go:noinline
-func (t *Trace) leave(back Back) {
-	if t.light {
-		t.operations = t.operations[:len(t.operations)-1]
-		return
+func (t *Trace) tail(r *Run, back Back, s *Site, steps int64) Back {
+	from := t.at
+	if back == 0 {
+		back = from
 	}
-	t.up(back, t.run.Steps)
+	n := &t.nodes[from]
+	if n.site == s || s == nil {
+		return back
+	}
+	if n.last.site != s {
+		n = t.turn(from, s)
+	}
+	to := n.last.to
+	n = &t.nodes[to]
+	n.entered++
+	if n.parent != from {
+		if t.among(to, back) {
+			t.up(to, steps)
+			return back
+		}
+		t.fold(to, from, steps)
+	}
+	n.steps -= steps
+	n.memory -= r.Memory
+	t.at = to
+	return back
+}
+
+//go:noinline
+func (t *Trace) leave(r *Run, back Back) {
+	at := t.at
+	n := &t.nodes[at]
+	if n.parent == back && t.folded != at {
+		n.steps += r.Steps
+		n.memory += r.Memory
+		t.at = back
+	} else if t.light {
+		t.operations = t.operations[:len(t.operations)-1]
+	} else {
+		t.up(back, r.Steps)
+	}
 }
 
 // up leaves what was entered since the run was at back, which after tail calls is
@@ -110,46 +136,15 @@ func (t *Trace) up(back Back, steps int64) {
 	at := t.at
 	for at != back {
 		n := &t.nodes[at]
-		n.counts.Steps += steps
-		n.counts.Memory += t.run.Memory
-		if k := len(t.folds); k > 0 && t.folds[k-1].to == at {
-			from := t.folds[k-1].from
-			t.unfold(at, from, steps)
-			at = from
+		n.steps += steps
+		n.memory += t.run.Memory
+		if t.folded == at {
+			at = t.unfold(steps)
 		} else {
 			at = n.parent
 		}
 	}
 	t.at = back
-}
-
-// tail enters a site by a tail call from what was entered since back. Where that
-// leads to a path which is there already, the run goes back to it instead of
-// keeping all that a loop goes through.
-//
-//go:noinline
-func (t *Trace) tail(back Back, s *Site, steps int64) {
-	from := t.at
-	n := &t.nodes[from]
-	if n.site == s || s == nil {
-		return
-	}
-	if n.last.site != s {
-		n = t.turn(from, s)
-	}
-	to := n.last.to
-	n = &t.nodes[to]
-	n.counts.Entered++
-	if n.parent != from && t.among(to, back) {
-		t.up(to, steps)
-		return
-	}
-	n.counts.Steps -= steps
-	n.counts.Memory -= t.run.Memory
-	t.at = to
-	if n.parent != from {
-		t.fold(to, from, steps)
-	}
 }
 
 // among reports whether a path is one of those from where the run is up to back.
@@ -174,22 +169,30 @@ func (t *Trace) among(p, back Back) bool {
 //
 //go:noinline
 func (t *Trace) fold(to, from Back, steps int64) {
-	t.folded(to, from, -steps, -t.run.Memory)
+	t.move(to, from, -steps, -t.run.Memory)
 	t.folds = append(t.folds, fold{to, from})
+	t.folded = to
 }
 
-func (t *Trace) unfold(to, from Back, steps int64) {
-	t.folded(to, from, steps, t.run.Memory)
-	t.folds = t.folds[:len(t.folds)-1]
+// unfold leaves the last path that was folded, and returns where it was entered from.
+func (t *Trace) unfold(steps int64) Back {
+	last := len(t.folds) - 1
+	f := t.folds[last]
+	t.move(f.to, f.from, steps, t.run.Memory)
+	t.folds, t.folded = t.folds[:last], 0
+	if last > 0 {
+		t.folded = t.folds[last-1].to
+	}
+	return f.from
 }
 
-func (t *Trace) folded(to, from Back, steps, memory int64) {
-	b := &t.nodes[from].below
-	b.Steps += steps
-	b.Memory += memory
-	b = &t.nodes[t.nodes[to].parent].below
-	b.Steps -= steps
-	b.Memory -= memory
+func (t *Trace) move(to, from Back, steps, memory int64) {
+	n := &t.nodes[from]
+	n.stepsBelow += steps
+	n.memoryBelow += memory
+	n = &t.nodes[t.nodes[to].parent]
+	n.stepsBelow -= steps
+	n.memoryBelow -= memory
 }
 
 // turn makes the way to s the one that is found first, and the one before the second.
@@ -248,17 +251,18 @@ func (t *Trace) tree() *Path {
 	out := make([]*Path, len(t.nodes))
 	for k := range t.nodes[root:] {
 		n := &t.nodes[int(root)+k]
-		p := &Path{Site: n.site, Counts: n.counts}
+		p := &Path{Site: n.site, Counts: Counts{
+			Entered: n.entered, Steps: n.steps - n.stepsBelow, Memory: n.memory - n.memoryBelow,
+			Pushed: n.pushed, Forced: n.forced, Nanos: n.nanos,
+		}}
 		out[int(root)+k] = p
-		p.Counts.Steps -= n.below.Steps
-		p.Counts.Memory -= n.below.Memory
 		if n.parent == 0 {
 			continue
 		}
 		p.Parent = out[n.parent] // parents come first
 		p.Parent.next = append(p.Parent.next, p)
-		p.Parent.Counts.Steps -= n.counts.Steps
-		p.Parent.Counts.Memory -= n.counts.Memory
+		p.Parent.Counts.Steps -= n.steps
+		p.Parent.Counts.Memory -= n.memory
 	}
 	if !t.Exact {
 		for _, p := range out[root:] {

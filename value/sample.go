@@ -53,7 +53,7 @@ func (t *Trace) sample() {
 		at = t.path()
 		t.rest = now.Add(restFactor * time.Since(now))
 	}
-	t.nodes[at].counts.Nanos += int64(now.Sub(t.sampled))
+	t.nodes[at].nanos += int64(now.Sub(t.sampled))
 	t.sampled = now
 	if t.Label != nil {
 		t.Label(t.nodes[at].owner, t.operation(at))

@@ -111,6 +111,7 @@ type Trace struct {
 	at     Back   // where the run is
 	run    *Run
 	root   *Path
+	folded Back   // the innermost path that is folded, 0 if there is none
 	folds  []fold // where the run is in paths that are folded, innermost last
 	called int64  // which of the run's steps is a β-step whose function has not been entered
 	// operations are those that the run is at, where no paths are kept
@@ -126,7 +127,12 @@ type Trace struct {
 }
 
 // Root is the path of no sites, below which all others are, of a trace that has ended.
-func (t *Trace) Root() *Path { return t.root }
+func (t *Trace) Root() *Path {
+	if t.root == nil {
+		return &Path{}
+	}
+	return t.root
+}
 
 // Begin makes t the trace of the run.
 func (r *Run) Begin(t *Trace) {
@@ -138,7 +144,7 @@ func (r *Run) Begin(t *Trace) {
 	t.light = !t.Exact && t.Follow == nil && t.stuck == nil
 	if !t.light {
 		r.trace = t
-		t.nodes[root].counts = Counts{Steps: -r.Steps, Memory: -r.Memory}
+		t.nodes[root].steps, t.nodes[root].memory = -r.Steps, -r.Memory
 	}
 	if t.Every > 0 {
 		t.sampled, t.stop = time.Now(), make(chan struct{})
@@ -186,12 +192,29 @@ func (r *Run) Traced() bool { return hooks && r.trace != nil }
 // In enters a site and returns where the run was, for Out. It does nothing where
 // the run is there already. Only a run that is traced may call it.
 func (r *Run) In(s *Site) Back {
-	from := r.trace.at
-	if r.trace.nodes[from].site != s {
-		r.trace.enter(from, s)
+	t := r.trace
+	from := t.at
+	n := &t.nodes[from]
+	if n.site == s || s == nil {
+		return from
+	}
+	if n.last.site != s {
+		n = t.turn(from, s)
+	}
+	to := n.last.to
+	n = &t.nodes[to]
+	n.entered++
+	n.steps -= r.Steps
+	n.memory -= r.Memory
+	t.at = to
+	if n.parent != from {
+		t.fold(to, from, r.Steps)
 	}
 	return from
 }
+
+// IsIn reports whether the run is at s already. Only a run that is traced may ask.
+func (r *Run) IsIn(s *Site) bool { return r.trace.nodes[r.trace.at].site == s }
 
 // Calls says that a β-step has been taken, which belongs to the code that is
 // called next; it reports whether somebody follows the run. Only a run that is
@@ -205,7 +228,7 @@ func (r *Run) Calls() bool {
 // before is the function's.
 func (r *Run) Called(s *Site) Back {
 	from := r.trace.at
-	r.trace.call(from, s)
+	r.trace.call(r, from, s)
 	return from
 }
 
@@ -213,44 +236,34 @@ func (r *Run) Called(s *Site) Back {
 // before. back is what the run came from when it entered the first of them, 0 for
 // that one; it is returned for Left, which leaves all of them.
 func (r *Run) TailCalled(back Back, s *Site) Back {
-	if back == 0 {
-		r.trace.called = r.Steps
-		return r.Called(s)
-	}
-	r.trace.tail(back, s, r.Steps-1)
-	return back
+	return r.trace.tail(r, back, s, r.Steps-1)
 }
 
 // Tail is In for a tail call; back is as with TailCalled.
 func (r *Run) Tail(back Back, s *Site) Back {
-	if back == 0 {
-		return r.In(s)
-	}
-	r.trace.tail(back, s, r.Steps)
-	return back
+	return r.trace.tail(r, back, s, r.Steps)
 }
 
 // Resume is In for a cell that a rule made while s was running: it does nothing
 // where the run stands in s already, at whatever operation.
 func (r *Run) Resume(s *Site) Back {
-	from := r.trace.at
-	if r.trace.nodes[from].owner != s {
-		r.trace.enter(from, s)
+	if from := r.trace.at; r.trace.nodes[from].owner == s {
+		return from
 	}
-	return from
+	return r.In(s)
 }
 
 // Out leaves what Operate, In, Called or Resume entered.
 func (r *Run) Out(back Back) {
 	if t := r.watch; t.at != back {
-		t.leave(back)
+		t.leave(r, back)
 	}
 }
 
 // Left is Out for a rule that returns v; back is 0 where the run is not watched.
 func (r *Run) Left(back Back, v Value) Value {
 	if back != 0 && r.watch.at != back {
-		r.watch.leave(back)
+		r.watch.leave(r, back)
 	}
 	return v
 }

@@ -73,7 +73,7 @@ func (c *opCode) Eval(run *value.Run, f Frame) (v value.Value) {
 				x = c.argument.Delay(run, f)
 			}
 			run.Take(value.StepApply)
-			if run.Traced() {
+			if run.Traced() && !run.IsIn(k.abs.site) {
 				back = run.TailCalled(back, k.abs.site)
 			}
 			if !framed {
@@ -100,7 +100,7 @@ func (c *opCode) Eval(run *value.Run, f Frame) (v value.Value) {
 				back = run.Tail(back, c.matcher.Label(c.args).Elimination())
 			}
 			run.Take(value.StepEliminate)
-			if run.Traced() {
+			if run.Traced() && !run.IsIn(a.abs.site) {
 				run.Tail(back, a.abs.site)
 			}
 			body = a.abs.body

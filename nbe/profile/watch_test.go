@@ -7,6 +7,7 @@ import (
 	"runtime/trace"
 	"strings"
 	"testing"
+	"time"
 
 	"github.com/stretchr/testify/require"
 
@@ -108,6 +109,30 @@ func TestLabels(t *testing.T) {
 	require.NoError(t, pprof.Lookup("goroutine").WriteTo(&goroutines, 1))
 	require.NotContains(t, goroutines.String(), `"engine":"quay"`)
 	pprof.SetGoroutineLabels(context.Background())
+}
+
+// The labels follow the run: at some time they name each definition and operation
+// that it spends its time in.
+func TestLabelsFollowTheRun(t *testing.T) {
+	e := engine(t)
+	x, err := e.Scope().Infer(context.Background(), written(t, e, "(stacked 3 4)"))
+	require.NoError(t, err)
+	found := false
+	look := nbe.Following(&nbe.Follow{Limit: 3000, Event: func(*nbe.Event) {
+		if found {
+			return
+		}
+		time.Sleep(time.Millisecond)
+		var goroutines bytes.Buffer
+		require.NoError(t, pprof.Lookup("goroutine").WriteTo(&goroutines, 1))
+		found = strings.Contains(goroutines.String(), `labels: {"definition":"add", "engine":"", "operation":"elim Nat"}`)
+	}})
+	_, _, err = normalTerm(t, x, context.Background(), nbe.Labels(), look)
+	require.NoError(t, err)
+	require.True(t, found)
+	var goroutines bytes.Buffer
+	require.NoError(t, pprof.Lookup("goroutine").WriteTo(&goroutines, 1))
+	require.NotContains(t, goroutines.String(), `"definition":"add"`)
 }
 
 // A call that asks for regions leaves them in the execution trace.
