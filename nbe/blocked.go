@@ -36,9 +36,56 @@ type Block struct {
 	Waiting []Waiting     // the operations that wait for the head, innermost first
 	Stands  Waiting       // of a composite or a transport at the head: where that stands
 	Face    string        // the face the part stands under
-	Release []string      // what would let it go on: faces, or an element for the head
-	Walls   []string      // of a composite that does not push: which wall does not show the constructor, under which face
+	Release []Release     // what would let it go on: a face, or something for the head
+	Walls   []Obstacle    // of a composite that does not push: what does not show the constructor
 }
+
+// ReleaseKind says what would let a stuck part go on.
+type ReleaseKind uint8
+
+// The kinds of releases.
+const (
+	ReleaseFace       ReleaseKind = iota + 1 // that one of the conjunctions of Face holds
+	ReleaseValue                             // a value for the variable Name
+	ReleaseDefinition                        // a definition of the assumption or hole Name
+	ReleaseUnfolding                         // that the definition Name is unfolded
+	ReleaseType                              // that the type Term, or the line whose body it is, shows its former
+)
+
+// Release is one thing that would let a stuck part go on.
+type Release struct {
+	Kind ReleaseKind
+	Face interval.Face // its dimensions are levels in the part's scope
+	Name string
+	Term *term.Written
+	text string
+}
+
+// String is the release in words.
+func (r Release) String() string { return r.text }
+
+// ObstacleKind says which part of a composite keeps it from being pushed.
+type ObstacleKind uint8
+
+// The kinds of obstacles.
+const (
+	ObstacleType ObstacleKind = iota + 1 // the type Term shows no former
+	ObstacleBase                         // the base Term shows no constructor
+	ObstacleWall                         // the wall Term on Face shows no constructor, or another one than the base
+)
+
+// Obstacle is a part of a composite that keeps it from being pushed.
+type Obstacle struct {
+	Kind   ObstacleKind
+	Face   interval.Face // of a wall; its dimensions are levels in the part's scope
+	Term   *term.Written
+	Shows  string // the constructor that a wall shows, if it shows one
+	Wanted string // the one that the base shows, if it shows one
+	text   string
+}
+
+// String is the obstacle in words.
+func (o Obstacle) String() string { return o.text }
 
 // Waiting is an operation that waits, and where it stands.
 type Waiting struct {
@@ -108,13 +155,17 @@ func (b *Blockage) String() string {
 			line += " has no value"
 		}
 		for _, w := range p.Walls {
-			line += "; " + w
+			line += "; " + w.String()
 		}
 		if p.Face != "top" {
 			line += "; on the face " + p.Face
 		}
 		if len(p.Release) > 0 {
-			line += "; it goes on with " + strings.Join(p.Release, " or ")
+			var release []string
+			for _, r := range p.Release {
+				release = append(release, r.String())
+			}
+			line += "; it goes on with " + strings.Join(release, " or ")
 		}
 		lines = append(lines, line)
 	}
@@ -314,7 +365,8 @@ func (w *blockWalk) stuck(c term.Core, x blockScope) {
 			line := o.Args[0].(*term.Bound)
 			if !w.isData(line.Body) {
 				b.Head, b.Stands = HeadTransport, w.waiting("", o)
-				b.Release = append(b.Release, "a type for its line "+w.write(line.Body, x.under(line, o.Sig.Slots[0].Slot)).String())
+				t := w.write(line.Body, x.under(line, o.Sig.Slots[0].Slot))
+				b.Release = append(b.Release, Release{Kind: ReleaseType, Term: t, text: "a type for its line " + t.String()})
 				break
 			}
 		}
@@ -344,7 +396,7 @@ func (w *blockWalk) stuck(c term.Core, x blockScope) {
 	}
 	w.head(&b, c, x, &release)
 	if !release.IsBot() {
-		b.Release = append([]string{"the face " + faceText(release, x.dims)}, b.Release...)
+		b.Release = append([]Release{{Kind: ReleaseFace, Face: release, text: "the face " + faceText(release, x.dims)}}, b.Release...)
 	}
 	w.out.Parts = append(w.out.Parts, b)
 }
@@ -362,7 +414,7 @@ func (w *blockWalk) head(b *Block, c term.Core, x blockScope, release *interval.
 		if h.Level < len(x.names) {
 			b.Name = x.names[h.Level]
 		}
-		b.Release = append(b.Release, "a value for "+b.Name)
+		b.Release = append(b.Release, Release{Kind: ReleaseValue, Name: b.Name, text: "a value for " + b.Name})
 	case *term.Global:
 		b.Head, b.Name = HeadDefinition, h.Name
 		if d, ok := w.s.e.lookup(h.Name).(*definition); ok && !d.defined() {
@@ -370,9 +422,9 @@ func (w *blockWalk) head(b *Block, c term.Core, x blockScope, release *interval.
 			if d.hole {
 				b.Head = HeadHole
 			}
-			b.Release = append(b.Release, "a definition of "+h.Name)
+			b.Release = append(b.Release, Release{Kind: ReleaseDefinition, Name: h.Name, text: "a definition of " + h.Name})
 		} else {
-			b.Release = append(b.Release, "unfolding "+h.Name)
+			b.Release = append(b.Release, Release{Kind: ReleaseUnfolding, Name: h.Name, text: "unfolding " + h.Name})
 		}
 	case *term.Op:
 		if b.Head != 0 {
@@ -394,9 +446,9 @@ func (w *blockWalk) composite(b *Block, h *term.Op, x blockScope, release *inter
 		*release = release.Or(row[0].(*term.Face).Face)
 	}
 	if !w.isData(h.Args[0].(term.Core)) {
-		t := w.write(h.Args[0].(term.Core), x).String()
-		b.Walls = append(b.Walls, "its type "+t+" shows no former")
-		b.Release = append(b.Release, "a type for "+t)
+		t := w.write(h.Args[0].(term.Core), x)
+		b.Walls = append(b.Walls, Obstacle{Kind: ObstacleType, Term: t, text: "its type " + t.String() + " shows no former"})
+		b.Release = append(b.Release, Release{Kind: ReleaseType, Term: t, text: "a type for " + t.String()})
 		return
 	}
 	shows := func(c term.Core) string {
@@ -412,7 +464,8 @@ func (w *blockWalk) composite(b *Block, h *term.Op, x blockScope, release *inter
 	}
 	base := shows(h.Args[1].(term.Core))
 	if base == "" {
-		b.Walls = append(b.Walls, "its base "+w.write(h.Args[1].(term.Core), x).String()+" shows no constructor")
+		t := w.write(h.Args[1].(term.Core), x)
+		b.Walls = append(b.Walls, Obstacle{Kind: ObstacleBase, Term: t, text: "its base " + t.String() + " shows no constructor"})
 	}
 	for _, row := range rows {
 		face, line := row[0].(*term.Face), row[1].(*term.Bound)
@@ -420,13 +473,16 @@ func (w *blockWalk) composite(b *Block, h *term.Op, x blockScope, release *inter
 		under.face = face.Face
 		under = under.under(line, term.Slot{Binds: []term.Sort{term.DimensionSort}})
 		wall := shows(line.Body)
-		text := w.write(line.Body, under).String()
-		switch {
+		o := Obstacle{Kind: ObstacleWall, Face: face.Face, Term: w.write(line.Body, under), Shows: wall, Wanted: base}
+		switch on := faceText(face.Face, x.dims); {
 		case wall == "":
-			b.Walls = append(b.Walls, "its wall on "+faceText(face.Face, x.dims)+", "+text+", shows no constructor")
+			o.text = "its wall on " + on + ", " + o.Term.String() + ", shows no constructor"
 		case base != "" && wall != base:
-			b.Walls = append(b.Walls, "its wall on "+faceText(face.Face, x.dims)+" shows "+wall+", not "+base)
+			o.text = "its wall on " + on + " shows " + wall + ", not " + base
+		default:
+			continue
 		}
+		b.Walls = append(b.Walls, o)
 	}
 }
 

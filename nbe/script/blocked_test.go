@@ -13,6 +13,7 @@ import (
 	"example.com/boxwright/nbe"
 	"example.com/boxwright/nbe/notation"
 	"example.com/boxwright/nbe/script"
+	"example.com/boxwright/value/interval"
 )
 
 var updateBlocked = flag.Bool("update-blocked", false, "write the golden file of what is stuck anew")
@@ -97,7 +98,28 @@ func TestBlockedIsAValue(t *testing.T) {
 	require.Equal(t, "an elimination of Nat", p.Waiting[1].Operation)
 	require.Equal(t, "add", p.Waiting[1].Definition)
 	require.Equal(t, 3, p.Waiting[1].Place.Line)
-	require.Equal(t, []string{"the face (or (= i 0) (= i 1))", "a definition of steps"}, p.Release)
+	require.Len(t, p.Release, 2)
+	require.Equal(t, nbe.ReleaseFace, p.Release[0].Kind)
+	require.True(t, p.Release[0].Face.Equal(interval.Eq0(0).Or(interval.Eq1(0))), "i is dimension 0")
+	require.Equal(t, "the face (or (= i 0) (= i 1))", p.Release[0].String())
+	require.Equal(t, nbe.ReleaseDefinition, p.Release[1].Kind)
+	require.Equal(t, "steps", p.Release[1].Name)
+
+	w, err = notation.ReadTerm("(ann (lam (k i) (hcomp Nat 3 ((= i 0) (j) (at steps j)))) (-> I I Nat))", "host.sexp", e.Words())
+	require.NoError(t, err)
+	x, err = e.Scope().Infer(ctx, w)
+	require.NoError(t, err)
+	b, err = blocked(ctx, x)
+	require.NoError(t, err)
+	p = b.Parts[0]
+	require.Equal(t, nbe.HeadComposite, p.Head)
+	require.Len(t, p.Walls, 1)
+	require.Equal(t, nbe.ObstacleWall, p.Walls[0].Kind)
+	require.True(t, p.Walls[0].Face.Equal(interval.Eq0(1)), "i is dimension 1")
+	require.Equal(t, "(at steps j)", p.Walls[0].Term.String())
+	require.Equal(t, []string{"", "3"}, []string{p.Walls[0].Shows, p.Walls[0].Wanted})
+	require.Equal(t, nbe.ReleaseFace, p.Release[0].Kind)
+	require.True(t, p.Release[0].Face.Equal(interval.Eq0(1)))
 }
 
 func blocked(ctx context.Context, x *nbe.Term, options ...nbe.CallOption) (*nbe.Blockage, error) {
