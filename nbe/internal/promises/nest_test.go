@@ -23,7 +23,7 @@ import (
 
 // stackLimit is what one goroutine's stack may take in these tests: the process
 // dies beyond it.
-const stackLimit = 64 << 20
+const stackLimit = 8 << 20
 
 // ask does everything with a term that can be done, and returns the first error.
 func ask(ctx context.Context, e *nbe.Engine, ty, text string, options ...nbe.CallOption) (err error) {
