@@ -305,9 +305,7 @@ func (r *Run) Slide(m Mark, f []Value) []Value {
 		return f
 	}
 	g := r.slots[used:end:end]
-	for k, v := range f {
-		g[k] = v
-	}
+	copy(g, f)
 	r.used = end
 	return g
 }
