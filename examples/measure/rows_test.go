@@ -88,7 +88,7 @@ func TestTheCommand(t *testing.T) {
 
 	for k := range table.Results[0].Points {
 		for j := range table.Results[0].Points[k].Ratios {
-			table.Results[0].Points[k].Ratios[j] /= 2
+			table.Results[0].Points[k].Ratios[j] /= 100 // whatever the machine is busy with
 		}
 	}
 	faster := filepath.Join(dir, "faster.json")
