@@ -23,6 +23,7 @@ type Data struct {
 	small        []*Number // the first numbers
 	raised       int       // the level so far, while it is being declared
 	declared     bool      // the declaration is complete
+	alone        *DataType // the type, if it has no parameters
 	eliminator   term.Reference
 	label        *value.Label // its name in counters and profiles
 	// Written is the declaration as it was given, for saving it; nil until it is complete.
@@ -101,6 +102,9 @@ func supportOf(vs []value.Value) (sup value.Support) {
 
 // NewDataType is the data type at parameters.
 func NewDataType(d *Data, params []value.Value) *DataType {
+	if len(params) == 0 && d.alone != nil {
+		return d.alone
+	}
 	return &DataType{d, params, supportOf(params)}
 }
 
@@ -193,8 +197,9 @@ func (a *Argument) At(run *value.Run, params, args []value.Value) value.Value {
 }
 
 // shown is what an element of a data type shows: a constructor with its
-// arguments. A number shows zero or the successor of its predecessor.
-func shown(run *value.Run, v value.Value) (c *Constructor, args []value.Value, ok bool) {
+// arguments. A number shows zero or the successor of its predecessor, which is put
+// into one.
+func shown(run *value.Run, v value.Value, one *[1]value.Value) (c *Constructor, args []value.Value, ok bool) {
 	switch v := v.(type) {
 	case *Con:
 		return v.Of, v.Args, true
@@ -202,9 +207,11 @@ func shown(run *value.Run, v value.Value) (c *Constructor, args []value.Value, o
 		if v.isZero() {
 			return v.data.Constructors[0], nil, true
 		}
-		return v.data.Constructors[1], []value.Value{v.predecessor(run)}, true
+		one[0] = v.predecessor(run)
+		return v.data.Constructors[1], one[:], true
 	case *Successors:
-		return v.data.Constructors[1], []value.Value{v.predecessor(run)}, true
+		one[0] = v.predecessor(run)
+		return v.data.Constructors[1], one[:], true
 	}
 	return nil, nil, false
 }

@@ -46,6 +46,7 @@ func Declare(c value.Checker, w *term.Declaration) *Data {
 // declare checks the declaration with its data type at the given level.
 func declare(c value.Checker, w *term.Declaration, formal bool, level int) *Data {
 	d := &Data{Name: w.Name, Formal: formal, Level: level, label: value.NewLabel(w.Name, w.Place)}
+	d.alone = &DataType{Data: d}
 	d.eliminator = term.Reference{Name: d.Name, Index: -1, Target: d}
 	c.Binders(func(b value.CheckerBinding) value.Core {
 		x := &declaring{c: c, run: c.Run(), d: d}

@@ -195,7 +195,8 @@ func (e *Eliminator) Eliminate(run *value.Run, v value.Value) value.Value {
 			return run.Left(back, e.step.repeated(run, e.data, n, e.Eliminate(run, rest)))
 		}
 	}
-	c, args, ok := shown(run, v)
+	var one [1]value.Value
+	c, args, ok := shown(run, v, &one)
 	if !ok {
 		run.Fault("elimination of %T", v)
 	}
@@ -260,7 +261,10 @@ func (w *laterElimination) Do(run *value.Run) value.Value {
 func (e *Eliminator) composite(run *value.Run, v *Formal) value.Value {
 	run.Take(value.StepEliminate)
 	i := run.Fresh(e.support | v.support)
-	h := Hfill(run, i, v.Type, v.Base, v.Walls)
+	h := value.Value(v) // where the family does not look, as good as the filler
+	if value.Uses(e.family) {
+		h = Hfill(run, i, v.Type, v.Base, v.Walls)
+	}
 	walls := v.Walls.Map(run, e.support, 0, func(run *value.Run, _ value.Name, u value.Value, cut *value.Subst) value.Value {
 		if cut == nil {
 			return e.Eliminate(run, u)

@@ -41,7 +41,7 @@ func (t *DataType) Hcomp(run *value.Run, base value.Value, walls value.System) v
 		}
 		return t.stuck(base, walls)
 	}
-	c, args, ok := shown(run, run.Force(base))
+	c, args, ok := shown(run, run.Force(base), new([1]value.Value))
 	if !ok {
 		return t.stuck(base, walls)
 	}
@@ -50,7 +50,7 @@ func (t *DataType) Hcomp(run *value.Run, base value.Value, walls value.System) v
 	}
 	parts := make([][]value.Value, len(walls)) // the arguments of each wall, under its dimension
 	for k, w := range walls {
-		d, us, ok := shown(run, run.Force(w.Body))
+		d, us, ok := shown(run, run.Force(w.Body), new([1]value.Value))
 		if !ok || d != c {
 			return t.stuck(base, walls)
 		}

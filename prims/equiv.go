@@ -89,24 +89,27 @@ func (l *lineEquivalence) Substitute(run *value.Run, s *value.Subst) value.Value
 	return &lineEquivalence{i, run.Substitute(l.e, under)}
 }
 
-// lines is L at i, as rules capture it.
-func (l *lineEquivalence) lines(run *value.Run) []value.Value {
-	return []value.Value{run.At(l.e, l.i, interval.Var(l.i).Rev())}
+// line is L at i.
+func (l *lineEquivalence) line(run *value.Run) value.Value {
+	return run.At(l.e, l.i, interval.Var(l.i).Rev())
 }
 
 func (l *lineEquivalence) first(run *value.Run) value.Value {
-	return &Lam{Body: value.NewCaptured(run, value.Captured{Rule: alongLine, I: l.i, Line: l.lines(run)})}
+	return &Lam{Body: value.NewCaptured(run, value.Captured{Rule: alongLine, I: l.i, Line: []value.Value{l.line(run)}})}
 }
 
 func (l *lineEquivalence) second(run *value.Run) value.Value {
-	return &Lam{Body: value.NewCaptured(run, value.Captured{Rule: lineFibers, I: l.i, Line: l.lines(run)})}
+	return &Lam{Body: value.NewCaptured(run, value.Captured{Rule: lineFibers, I: l.i, Line: []value.Value{l.line(run)}})}
 }
 
 // mapped is e.1 x, on demand.
 func mapped(run *value.Run, e, x value.Value) value.Value {
 	if l, ok := run.Force(e).(*lineEquivalence); ok {
 		run.Take(value.StepApply)
-		return alongLineAt(run, l.i, l.lines(run)[0], x)
+		if run.Followed() {
+			return alongFollowed(run, l.i, l.line(run), x)
+		}
+		return alongLineAt(run, l.i, l.line(run), x)
 	}
 	return Apply(run, First(run, e), x)
 }
@@ -115,6 +118,9 @@ func mapped(run *value.Run, e, x value.Value) value.Value {
 func center(run *value.Run, e, y value.Value) value.Value {
 	if l, ok := run.Force(e).(*lineEquivalence); ok {
 		run.Take(value.StepApply)
+		if run.Followed() {
+			return alongFollowed(run, l.i, l.e, y)
+		}
 		return Transp(run, l.i, l.e, interval.Bot(), y) // v y 0
 	}
 	return First(run, First(run, Apply(run, Second(run, e), y)))

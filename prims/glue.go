@@ -123,6 +123,11 @@ func (g *GlueType) Support() value.Support { return g.support }
 
 // Substitute delays s over the parts; a face may become top.
 func (g *GlueType) Substitute(run *value.Run, s *value.Subst) value.Value {
+	for _, p := range g.Parts { // before the rest is made for nothing
+		if p.Cube.Subst(s).IsTop() {
+			return run.Substitute(p.T, s)
+		}
+	}
 	return NewGlue(run.Substitute(g.A, s), glueParts(g.Parts).substitute(run, s))
 }
 
@@ -145,13 +150,9 @@ func (g *GlueElement) Substitute(run *value.Run, s *value.Subst) value.Value {
 // Unglue is unglue b at the Glue type with the given parts, on demand. The
 // parts cannot be read off the value of b.
 func Unglue(run *value.Run, parts []GluePart, b value.Value) value.Value {
-	for _, p := range parts {
-		if p.Cube.IsTop() {
-			run.Take(value.StepUnglue)
-			if run.Followed() {
-				return unglueFaceFollowed(run, p.E, b)
-			}
-			return mapped(run, p.E, b)
+	for k := range parts {
+		if parts[k].Cube.IsTop() {
+			return unglueOn(run, &parts[k], b)
 		}
 	}
 	switch b := run.Force(b).(type) {
@@ -167,6 +168,15 @@ func Unglue(run *value.Run, parts []GluePart, b value.Value) value.Value {
 		run.Fault("unglue of %T", b)
 		return nil
 	}
+}
+
+// unglueOn is unglue b where the part p holds.
+func unglueOn(run *value.Run, p *GluePart, b value.Value) value.Value {
+	run.Take(value.StepUnglue)
+	if run.Followed() {
+		return unglueFaceFollowed(run, p.E, b)
+	}
+	return mapped(run, p.E, b)
 }
 
 // LaterUnglue is Unglue in a cell.

@@ -28,5 +28,5 @@ func (g *GlueType) Hcomp(run *value.Run, u0 value.Value, walls value.System) val
 
 // mapAlong is e.1 t, in a cell.
 func mapAlong(run *value.Run, e, t value.Value) value.Value {
-	return run.Later(e.Support()|t.Support(), func(run *value.Run) value.Value { return mapped(run, e, t) })
+	return run.LaterOf(e.Support()|t.Support(), mapped, e, t)
 }

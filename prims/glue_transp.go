@@ -91,7 +91,7 @@ func extendFirst(run *value.Run, p GluePart, a1 value.Value, done []GlueValue) v
 		c := run.Later(p.E.Support()|a1.Support(), func(run *value.Run) value.Value { return Apply(run, Second(run, p.E), a1) })
 		walls = contracted(run, p, c, a1, done).Map(run, 0, 0, func(run *value.Run, _ value.Name, u value.Value, _ *value.Subst) value.Value { return First(run, u) })
 	}
-	base := run.Later(p.E.Support()|a1.Support(), func(run *value.Run) value.Value { return center(run, p.E, a1) })
+	base := run.LaterOf(p.E.Support()|a1.Support(), center, p.E, a1)
 	return Hcomp(run, p.T, base, walls)
 }
 
@@ -104,7 +104,7 @@ func contracted(run *value.Run, p GluePart, c, a1 value.Value, done []GlueValue)
 			cube := face.Cube(k)
 			t := run.Restrict(run.Substitute(d.T, cut), cube)
 			here, center := run.Restrict(a1, cube), run.Restrict(c, cube)
-			point := NewPair(t, &PathLam{value.Constant{V: here}})
+			point := NewPair(t, &PathLam{Body: value.Constant{V: here}})
 			i := run.Fresh(center.Support() | point.Support() | cube.Support())
 			walls = append(walls, value.Wall{Cube: cube, I: i, Body: run.Later(center.Support()|point.Support()|interval.Single(i), func(run *value.Run) value.Value {
 				return At(run, Apply(run, Second(run, center), point), interval.Var(i))

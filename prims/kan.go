@@ -47,9 +47,8 @@ func LaterHcomp(run *value.Run, a, base value.Value, walls value.System) value.V
 	if n := sameNumbers(run, base, walls); n != nil {
 		return n
 	}
-	return run.Later(a.Support()|base.Support()|walls.Support(), func(run *value.Run) value.Value {
-		return Hcomp(run, a, base, walls)
-	})
+	w := &laterComposite{a: a, base: base, walls: walls, straight: true}
+	return run.LaterWork(a.Support()|base.Support()|walls.Support(), &w.Pending, w)
 }
 
 // Transp is transp (i.A) φ v.
@@ -85,9 +84,8 @@ func LaterTransp(run *value.Run, i value.Name, a value.Value, phi interval.Face,
 	if phi.IsTop() {
 		return v
 	}
-	return run.Later(a.Support().Without(i)|phi.Support()|v.Support(), func(run *value.Run) value.Value {
-		return Transp(run, i, a, phi, v)
-	})
+	w := &laterTransp{i: i, a: a, phi: phi, v: v}
+	return run.LaterWork(a.Support().Without(i)|phi.Support()|v.Support(), &w.Pending, w)
 }
 
 // FreshLine is the line i.A with its name outside avoid.
@@ -119,8 +117,23 @@ func Comp(run *value.Run, i value.Name, a, base value.Value, walls value.System)
 	if w, ok := walls.Top(); ok {
 		return w.End(run)
 	}
+	if !a.Support().Has(i) && isStill(run.Force(a)) {
+		return Hcomp(run, a, base, walls)
+	}
 	a1, u0, us := compParts(run, i, a, base, walls)
 	return Hcomp(run, a1, u0, us)
+}
+
+// isStill reports whether every transport along the constant line at t, which is
+// forced, is the identity by definition.
+func isStill(t value.Value) bool {
+	switch t := t.(type) {
+	case *Universe:
+		return true
+	case *DataType:
+		return len(t.Params) == 0
+	}
+	return t == value.Value(UnitType)
 }
 
 // LaterComp is Comp in a cell.
@@ -128,9 +141,8 @@ func LaterComp(run *value.Run, i value.Name, a, base value.Value, walls value.Sy
 	if w, ok := walls.Top(); ok {
 		return w.End(run)
 	}
-	return run.Later(a.Support().Without(i)|base.Support()|walls.Support(), func(run *value.Run) value.Value {
-		return Comp(run, i, a, base, walls)
-	})
+	w := &laterComposite{i: i, a: a, base: base, walls: walls}
+	return run.LaterWork(a.Support().Without(i)|base.Support()|walls.Support(), &w.Pending, w)
 }
 
 func compParts(run *value.Run, i value.Name, a, base value.Value, walls value.System) (a1, u0 value.Value, us value.System) {

@@ -1,6 +1,8 @@
 package prims
 
 import (
+	"sync/atomic"
+
 	"example.com/boxwright/nbe/eval"
 	"example.com/boxwright/nbe/term"
 	"example.com/boxwright/value"
@@ -20,7 +22,16 @@ type Path struct {
 }
 
 // PathLam is a path as a value.
-type PathLam struct{ Body value.Closure }
+type PathLam struct {
+	Body value.Closure
+	seen atomic.Pointer[pathPoint] // where the path was last looked at, if it is closed
+}
+
+// pathPoint is what a path is at the dimension i.
+type pathPoint struct {
+	i value.Name
+	v value.Value
+}
 
 // Support is the union of the parts'.
 func (t *Path) Support() value.Support {
@@ -29,7 +40,11 @@ func (t *Path) Support() value.Support {
 
 // Substitute delays s over the parts.
 func (t *Path) Substitute(run *value.Run, s *value.Subst) value.Value {
-	return &Path{t.Line.Substitute(run, s), run.Substitute(t.A0, s), run.Substitute(t.A1, s)}
+	a0 := run.Substitute(t.A0, s)
+	if t.A0 == t.A1 {
+		return &Path{t.Line.Substitute(run, s), a0, a0}
+	}
+	return &Path{t.Line.Substitute(run, s), a0, run.Substitute(t.A1, s)}
 }
 
 // Support is the closure's.
@@ -37,12 +52,12 @@ func (p *PathLam) Support() value.Support { return p.Body.Support() }
 
 // Substitute delays s over the closure.
 func (p *PathLam) Substitute(run *value.Run, s *value.Subst) value.Value {
-	return &PathLam{p.Body.Substitute(run, s)}
+	return &PathLam{Body: p.Body.Substitute(run, s)}
 }
 
 // over is the path ⟨j⟩ body.
 func over(j value.Name, body value.Value) value.Value {
-	return &PathLam{&value.Line{I: j, Body: body, Name: "j"}}
+	return &PathLam{Body: &value.Line{I: j, Body: body, Name: "j"}}
 }
 
 // Hcomp composes at each dimension, between the ends.
@@ -75,7 +90,7 @@ func At(run *value.Run, p value.Value, r interval.Dim) value.Value {
 		if run.Traced() && run.Calls() {
 			return atFollowed(run, p, r)
 		}
-		return p.Body.Apply(run, value.DimensionOf(r))
+		return p.at(run, r)
 	case *value.Neutral:
 		if r.IsEnd() {
 			t, ok := run.Force(value.TypeOf(run, p)).(*Path)
@@ -94,12 +109,31 @@ func At(run *value.Run, p value.Value, r interval.Dim) value.Value {
 	}
 }
 
+// at is the path at r. A closed one is asked again and again at the lowest name,
+// by whatever goes along it, and remembers the answer.
+func (p *PathLam) at(run *value.Run, r interval.Dim) value.Value {
+	i, negated, ok := r.Literal()
+	if !ok || negated || p.Support() != 0 || run.Plain.NoSharing {
+		return p.Body.Apply(run, value.DimensionOf(r))
+	}
+	if point := p.seen.Load(); point != nil && point.i == i {
+		return point.v
+	}
+	v := p.Body.Apply(run, value.DimensionOf(r))
+	p.seen.Store(&pathPoint{i, v})
+	return v
+}
+
 // LaterAt is At in a cell.
 func LaterAt(run *value.Run, p value.Value, r interval.Dim) value.Value {
 	if p, ok := value.Peek(p).(*PathLam); ok {
 		return p.Body.Open(run, value.DimensionOf(r))
 	}
-	return run.Later(p.Support()|r.Support(), func(run *value.Run) value.Value { return At(run, p, r) })
+	return run.LaterOf(p.Support()|r.Support(), atValue, p, value.DimensionOf(r))
+}
+
+func atValue(run *value.Run, p, r value.Value) value.Value {
+	return At(run, p, r.(*value.Dimension).Dim)
 }
 
 // openAt is p @ r without doing the work of the body; p is forced.
@@ -181,14 +215,18 @@ type pathOp struct{}
 
 func (pathOp) Canonical([]eval.Arg) bool { return true }
 func (pathOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
-	return &Path{args[0].Family(run, f), args[1].Delay(run, f), args[2].Delay(run, f)}
+	a0 := args[1].Delay(run, f)
+	if args[1].Shares(&args[2]) {
+		return &Path{args[0].Family(run, f), a0, a0}
+	}
+	return &Path{args[0].Family(run, f), a0, args[2].Delay(run, f)}
 }
 
 type pathLamOp struct{}
 
 func (pathLamOp) Canonical([]eval.Arg) bool { return true }
 func (pathLamOp) Eval(run *value.Run, f eval.Frame, args []eval.Arg) value.Value {
-	return &PathLam{args[0].Close(run, f)}
+	return &PathLam{Body: args[0].Close(run, f)}
 }
 
 type atOp struct{}
@@ -237,6 +275,9 @@ func endsOf(c value.Checker, w *term.Written, line *term.Bound, level int) (valu
 	a := c.Case(line, dimensions).ApplyAll
 	a0 := c.Check(part(w, 1), a(run, []value.Value{value.Zero()}))
 	a1 := c.Check(part(w, 2), a(run, []value.Value{value.One()}))
+	if term.Same(a0, a1) {
+		a1 = a0 // one cell for both, and one wall where the path is composed or transported
+	}
 	return op(pathSig, line, a0, a1), NewUniverse(level)
 }
 

@@ -88,7 +88,7 @@ func LaterApply(run *value.Run, f, x value.Value) value.Value {
 			return c.V
 		}
 	}
-	return run.Later(f.Support()|x.Support(), func(run *value.Run) value.Value { return Apply(run, f, x) })
+	return run.LaterOf(f.Support()|x.Support(), Apply, f, x)
 }
 
 // open is f x without doing the work of the body, so that a definition at its

@@ -113,7 +113,7 @@ func LaterFirst(run *value.Run, p value.Value) value.Value {
 	if p, ok := value.Peek(p).(*Pair); ok {
 		return p.A
 	}
-	return run.Later(p.Support(), func(run *value.Run) value.Value { return First(run, p) })
+	return run.LaterOf(p.Support(), first, p, nil)
 }
 
 // LaterSecond is Second in a cell.
@@ -121,8 +121,11 @@ func LaterSecond(run *value.Run, p value.Value) value.Value {
 	if p, ok := value.Peek(p).(*Pair); ok {
 		return p.B
 	}
-	return run.Later(p.Support(), func(run *value.Run) value.Value { return Second(run, p) })
+	return run.LaterOf(p.Support(), second, p, nil)
 }
+
+func first(run *value.Run, p, _ value.Value) value.Value  { return First(run, p) }
+func second(run *value.Run, p, _ value.Value) value.Value { return Second(run, p) }
 
 type projection struct{ second bool }
 

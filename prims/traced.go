@@ -69,9 +69,7 @@ func transpObserved(run *value.Run, i value.Name, t value.Value, phi interval.Fa
 	back := run.InTransp(former)
 	var e *value.Event
 	if run.Followed() {
-		e = run.Begins(value.StepTransp, "transp at "+run.FormerName(former), func(s *value.Sketch) *term.Written {
-			return term.Transp(interval.Var(i).String(), s.Value(t), s.Face(phi), s.Value(v))
-		})
+		e = transpBegins(run, i, t, phi, v)
 	}
 	run.Report()
 	w := Transp(run, i, t, phi, v)
@@ -81,6 +79,21 @@ func transpObserved(run *value.Run, i value.Name, t value.Value, phi interval.Fa
 	run.Ends(e, w)
 	run.Out(back)
 	return w
+}
+
+func transpBegins(run *value.Run, i value.Name, t value.Value, phi interval.Face, v value.Value) *value.Event {
+	former, _ := t.(value.Type)
+	return run.Begins(value.StepTransp, "transp at "+run.FormerName(former), func(s *value.Sketch) *term.Written {
+		return term.Transp(interval.Var(i).String(), s.Value(t), s.Face(phi), s.Value(v))
+	})
+}
+
+// alongFollowed is the map of the equivalence along the line i.L.
+func alongFollowed(run *value.Run, i value.Name, l, x value.Value) value.Value {
+	e := run.Begins(value.StepApply, value.StepApply.String(), func(s *value.Sketch) *term.Written {
+		return term.Apply(term.Name("…"), s.Value(x))
+	})
+	return run.Ends(e, alongLineAt(run, i, l, x))
 }
 
 // followed eliminates v, which is forced, and reports that.
@@ -109,7 +122,7 @@ func atFollowed(run *value.Run, p *PathLam, r interval.Dim) value.Value {
 	e := run.Begins(value.StepAt, value.StepAt.String(), func(s *value.Sketch) *term.Written {
 		return term.At(s.Value(p), s.Dimension(r))
 	})
-	return run.Ends(e, p.Body.Apply(run, value.DimensionOf(r)))
+	return run.Ends(e, p.at(run, r))
 }
 
 func projectFollowed(run *value.Run, p *Pair, f *projection, v value.Value) value.Value {
@@ -154,7 +167,7 @@ func boundaryFollowed(run *value.Run, c *Con, v value.Value) value.Value {
 // been made.
 func matchFollowed(run *value.Run, l *value.Label, v value.Value, body *eval.Arg, env eval.Frame) value.Value {
 	back := run.InElimination(l)
-	c, _, _ := shown(run, v)
+	c, _, _ := shown(run, v, new([1]value.Value))
 	e := run.Begins(value.StepEliminate, "elim "+c.Data.Name, func(s *value.Sketch) *term.Written {
 		var names []string
 		for _, name := range body.Hints() {

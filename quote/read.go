@@ -267,12 +267,20 @@ func (q *Reader) Walls(t value.Value, s value.System) term.Rows {
 	for k, w := range walls {
 		cubes[k] = w.Cube
 	}
+	types := make([]value.Value, len(walls))
+	rows := make([][]term.Arg, len(walls))
 	return q.Rows(cubes, func(k int) []term.Arg {
 		w := walls[k]
 		here := q.run.Restrict(t, w.Cube)
-		return []term.Arg{q.Dimension("j", func(i value.Name) value.Core {
+		for j, v := range walls[:k] { // walls that are alike are read once
+			if v.Body == w.Body && v.I == w.I && types[j] == here {
+				return rows[j]
+			}
+		}
+		types[k], rows[k] = here, []term.Arg{q.Dimension("j", func(i value.Name) value.Core {
 			return q.Term(here, q.run.At(w.Body, w.I, interval.Var(i)))
 		})}
+		return rows[k]
 	})
 }
 

@@ -42,6 +42,17 @@ func (l *Lam) Substitute(run *Run, s *Subst) Value { return &Lam{Body: l.Body.Su
 // Strict reports whether the function evaluates its argument in any case.
 func (l *Lam) Strict(run *Run) bool { return l.Body.Strict(run) }
 
+// Uses reports whether a closure may look at its argument.
+func Uses(c Closure) bool {
+	switch c := c.(type) {
+	case Constant:
+		return false
+	case interface{ Uses(k int) bool }:
+		return c.Uses(0)
+	}
+	return true
+}
+
 // Line is a closure over a dimension that is a value under a bound name: what
 // the Kan rules make. The body is evaluated once, at the name, and substituted.
 type Line struct {

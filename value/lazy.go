@@ -67,12 +67,56 @@ func (w *laterWork) Do(run *Run) Value { return w.f(run) }
 // function captures; whatever stands under a face must have been restricted
 // before.
 func (r *Run) Later(support Support, f func(*Run) Value) Value {
-	if r.Traced() {
-		return r.laterTraced(support, f)
-	}
 	w := &laterWork{f: f}
-	return r.NewLazy(support, &w.Pending, w)
+	return r.LaterWork(support, &w.Pending, w)
 }
+
+// LaterWork is Later for work that is more than a function; it embeds p.
+func (r *Run) LaterWork(support Support, p *Pending, w Work) Value {
+	if r.Traced() {
+		return r.laterTraced(support, w)
+	}
+	return r.NewLazy(support, p, w)
+}
+
+// Ended is implemented by work that may be over before it is done: where ends are
+// put in, a wall may hold, or a transport be the identity.
+type Ended interface {
+	Work
+	// EndAt is the result with s put in, where that can be told without doing the work.
+	EndAt(run *Run, s *Subst) (Value, bool)
+}
+
+// endAt is the result of the cell's work with s put in, where the work need not be done.
+func (l *Lazy) endAt(run *Run, s *Subst) (Value, bool) {
+	p := l.pending.Load()
+	if p == published || p == claimed || run.Plain.Eager {
+		return nil, false
+	}
+	w := p.work
+	if t, ok := w.(*tracedWork); ok {
+		w = t.work
+	}
+	if e, ok := w.(Ended); ok {
+		return e.EndAt(run, s)
+	}
+	return nil, false
+}
+
+// LaterOf is Later of a function that captures nothing but its two arguments:
+// the cell costs one object less.
+func (r *Run) LaterOf(support Support, f func(run *Run, a, b Value) Value, a, b Value) Value {
+	w := &ofWork{f: f, a: a, b: b}
+	return r.LaterWork(support, &w.Pending, w)
+}
+
+type ofWork struct {
+	Pending
+	f    func(run *Run, a, b Value) Value
+	a, b Value
+}
+
+func (w *ofWork) Do(run *Run) Value { return w.f(run, w.a, w.b) }
 
 // Force evaluates v to weak head normal form.
 func (r *Run) Force(v Value) Value {
@@ -220,9 +264,18 @@ func (r *Run) Substitute(v Value, s *Subst) Value {
 			return v
 		}
 	}
+	if l, ok := v.(*Lazy); ok && s.Ends()&support != 0 {
+		if w, ok := l.endAt(r, s); ok {
+			r.Skipped++
+			return w
+		}
+	}
 	r.Substitutions++
 	if r.Plain.Eager {
 		return r.pushNow(v, s)
+	}
+	if u, t := renamed(v); t != nil {
+		return r.Substitute(u, t.Compose(s))
 	}
 	w := &substituted{v: v, s: s}
 	l := r.NewLazy(SubstSupport(support, s), &w.Pending, w)
@@ -230,6 +283,22 @@ func (r *Run) Substitute(v Value, s *Subst) Value {
 		l.fold = &folding{from: &substitutedFold{f.fold, s}}
 	}
 	return l
+}
+
+// renamed is the value and the renaming that wait in v; nil where something else
+// does. A renaming computes nothing whose result could be shared, so what follows
+// it is put in together with it.
+func renamed(v Value) (Value, *Subst) {
+	if l, ok := v.(*Lazy); ok && l.fold == nil {
+		if p := l.pending.Load(); p != published && p != claimed {
+			if w, ok := p.work.(*substituted); ok {
+				if sup := w.v.Support(); w.s.Skippable(sup, sup, sup) {
+					return w.v, w.s
+				}
+			}
+		}
+	}
+	return nil, nil
 }
 
 // pushNow pushes at once, which nests as deep as v does.

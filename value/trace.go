@@ -322,26 +322,26 @@ func (r *Run) InTransp(t Type) Back {
 // InElimination enters the elimination of a data type.
 func (r *Run) InElimination(l *Label) Back { return r.In(&l.eliminated) }
 
-// tracedWork is a Go function's cell with the definition it stands in.
+// tracedWork is work that a rule left for later with the definition it stands in.
 type tracedWork struct {
 	Pending
-	f    func(*Run) Value
+	work Work
 	site *Site
 }
 
 func (w *tracedWork) Do(run *Run) Value {
 	if !run.Traced() {
-		return w.f(run)
+		return w.work.Do(run)
 	}
 	back := run.Resume(w.site)
-	v := w.f(run)
+	v := w.work.Do(run)
 	run.Out(back)
 	return v
 }
 
-// laterTraced is Later in a run that is traced.
-func (r *Run) laterTraced(support Support, f func(*Run) Value) Value {
-	w := &tracedWork{f: f, site: r.trace.nodes[r.trace.at].owner}
+// laterTraced is LaterWork in a run that is traced.
+func (r *Run) laterTraced(support Support, work Work) Value {
+	w := &tracedWork{work: work, site: r.trace.nodes[r.trace.at].owner}
 	return r.NewLazy(support, &w.Pending, w)
 }
 

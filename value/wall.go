@@ -35,17 +35,25 @@ func (s System) FaceSupport() (sup Support) {
 // dropped, one whose face becomes several conjunctions is split.
 func (s System) Substitute(run *Run, t *Subst) System {
 	out := make(System, 0, len(s))
-	for _, w := range s {
+	from := make([]int, 0, len(s)) // which wall each of out comes from
+	for n, w := range s {
 		face := run.Face(w.Cube.Subst(t))
 		run.Charge(PriceWall)
 		if face.IsBot() {
 			run.Dropped++
 		}
+	cubes:
 		for k := range face.Len() {
 			cube := face.Cube(k)
 			i, under := run.Under(w.I, w.Body.Support(), t, cube.Support())
+			for j, v := range out { // the same line with the same put in, which neither face cuts
+				if u := &s[from[j]]; u.Body == w.Body && u.I == w.I && v.I == i && (v.Cube.Support()|cube.Support())&under.Image() == 0 {
+					out, from = append(out, Wall{cube, i, v.Body}), append(from, n)
+					continue cubes
+				}
+			}
 			body := run.Substitute(w.Body, under)
-			out = append(out, Wall{cube, i, run.Restrict(body, cube)})
+			out, from = append(out, Wall{cube, i, run.Restrict(body, cube)}), append(from, n)
 		}
 	}
 	return out
@@ -100,6 +108,10 @@ func (s System) MapLines(run *Run, free, bound Support, f func(run *Run, i Name,
 func (s System) mapped(run *Run, free, bound Support, own bool, f func(run *Run, i Name, body Value, cut *Subst) Value) System {
 	out := make(System, len(s), len(s)+2)
 	for k, w := range s {
+		if j := s.alike(k, free); j >= 0 && !w.Cube.Support().Has(out[j].I) {
+			out[k] = Wall{w.Cube, out[j].I, out[j].Body}
+			continue
+		}
 		w = w.Avoiding(run, free|bound)
 		cut := w.Cube.Restriction()
 		support := w.Body.Support() | SubstSupport(free, cut)
@@ -109,6 +121,19 @@ func (s System) mapped(run *Run, free, bound Support, own bool, f func(run *Run,
 		out[k] = Wall{w.Cube, w.I, run.Later(support, func(run *Run) Value { return f(run, w.I, w.Body, cut) })}
 	}
 	return out
+}
+
+// alike is an earlier wall than k with the same line, from which values of support
+// free make the same, since neither's face cuts them; -1 if there is none.
+func (s System) alike(k int, free Support) int {
+	w := &s[k]
+	for j := range s[:k] {
+		v := &s[j]
+		if v.I == w.I && v.Body == w.Body && free&(v.Cube.Support()|w.Cube.Support()) == 0 {
+			return j
+		}
+	}
+	return -1
 }
 
 // Constant is a wall on the given face that is v throughout; v is restricted here.

@@ -186,6 +186,11 @@ func (c *closure) OpenAll(run *value.Run, args []value.Value) value.Value {
 	run.Charge(int64(len(args)+len(c.env)) * value.PriceSlot)
 	env := make([]value.Value, len(args)+len(c.env))
 	copy(env, args)
+	for k := range c.abs.unused { // a dimension that is not looked at is not in the support
+		if _, ok := env[k].(*value.Dimension); ok && c.abs.unused[k] {
+			env[k] = value.Zero()
+		}
+	}
 	copy(env[len(args):], c.env)
 	return newThunk(run, c.abs.body, env)
 }

@@ -273,6 +273,9 @@ func (a *Arg) Walls(run *value.Run, f Frame) value.System {
 			cube := face.Cube(k)
 			under := restrict(run, row[1].abs, f, cube)
 			i, body := row[1].Line(run, under, cube.Support())
+			if !cube.IsTop() {
+				run.Release(len(f))
+			}
 			out = append(out, value.Wall{Cube: cube, I: i, Body: body})
 		}
 	}
@@ -289,23 +292,26 @@ func Restricted(run *value.Run, f Frame, row []Arg, yield func(cube interval.Cub
 			yield(cube, f)
 			continue
 		}
-		g := make(Frame, len(f))
+		g := run.Frame(len(f))
 		for k, v := range f {
+			g[k] = nil
 			if v != nil {
 				g[k] = run.Restrict(v, cube)
 			}
 		}
 		yield(cube, g)
+		run.Release(len(f))
 	}
 }
 
-// restrict is the frame f on a cube, in the slots that abs captures.
+// restrict is the frame f on a cube, in the slots that abs captures; the caller
+// gives it back unless the cube is top.
 func restrict(run *value.Run, abs *Abstraction, f Frame, cube interval.Cube) Frame {
 	if cube.IsTop() {
 		return f
 	}
 	run.Charge(int64(len(f)) * value.PriceSlot)
-	g := make(Frame, len(f))
+	g := run.Frame(len(f))
 	for _, slot := range abs.captures {
 		g[slot] = run.Restrict(f[slot], cube)
 	}

@@ -340,10 +340,10 @@ func (k *compiler) arg(a term.Arg, slot term.Slot, l *layout, nv, nd int) Arg {
 			d.slots = append(d.slots, k.slot(l, int(n), true))
 		}
 		_, negated, ok := a.Dim.Literal()
-		d.literal = ok && !negated
+		d.literal, d.negated = ok && !negated, ok && negated
 		return Arg{dim: d}
 	case *term.Face:
-		f := &faceCode{face: a.Face}
+		f := &faceCode{face: a.Face, end: endOf(a.Face)}
 		for _, n := range a.Face.Names() {
 			f.names = append(f.names, n)
 			f.slots = append(f.slots, k.slot(l, int(n), true))

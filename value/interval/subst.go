@@ -186,6 +186,14 @@ func (s *Subst) Domain() Support {
 	return s.dom
 }
 
+// Ends returns the names that s sends to an end.
+func (s *Subst) Ends() Support {
+	if s == nil {
+		return 0
+	}
+	return s.ends
+}
+
 // Image returns the union of the supports of the images of the names that s
 // changes.
 func (s *Subst) Image() Support {

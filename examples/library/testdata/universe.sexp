@@ -81,6 +81,13 @@
 (normal (transp (j (box3 j 1)) bot true) false)
 (same (-> I Bool) (lam (k) (transp (j (box3 j k)) bot true)) (lam (k) false))
 (same (-> I Bool) (lam (k) (transp (j (box3 (rev j) k)) bot true)) (lam (k) false))
+; The third face moves an element that is not known on the two others.
+(assume unknown Bool)
+(differ (-> I Bool) (lam (k) (transp (j (box3 j k)) bot unknown))
+  (lam (k) (transp (j (hcomp (U 0) Bool ((= j 0) (i) Bool) ((= j 1) (i) (at negation i)))) bot unknown)))
+; The base moves along its own line.
+(assume unknown-line (Path (U 0) Bool Bool))
+(differ Bool (transp (j (hcomp (U 0) (at unknown-line j) ((= j 0) (i) Bool) ((= j 1) (i) Bool))) bot true) true)
 ; Transport in k: at j = 0 nothing happens, and nothing has to at j = 1.
 (normal (transp (k (box3 0 k)) bot true) true)
 (normal (transp (k (box3 1 k)) bot true) true)
