@@ -46,8 +46,9 @@ func (s System) Substitute(run *Run, t *Subst) System {
 		for k := range face.Len() {
 			cube := face.Cube(k)
 			i, under := run.Under(w.I, w.Body.Support(), t, cube.Support())
+			support := SubstSupport(w.Body.Support(), under)
 			for j, v := range out { // the same line with the same put in, which neither face cuts
-				if u := &s[from[j]]; u.Body == w.Body && u.I == w.I && v.I == i && (v.Cube.Support()|cube.Support())&under.Image() == 0 {
+				if u := &s[from[j]]; u.Body == w.Body && u.I == w.I && v.I == i && (v.Cube.Support()|cube.Support())&support == 0 {
 					out, from = append(out, Wall{cube, i, v.Body}), append(from, n)
 					continue cubes
 				}
