@@ -275,9 +275,6 @@ func endsOf(c value.Checker, w *term.Written, line *term.Bound, level int) (valu
 	a := c.Case(line, dimensions).ApplyAll
 	a0 := c.Check(part(w, 1), a(run, []value.Value{value.Zero()}))
 	a1 := c.Check(part(w, 2), a(run, []value.Value{value.One()}))
-	if term.Same(a0, a1) {
-		a1 = a0 // one cell for both, and one wall where the path is composed or transported
-	}
 	return op(pathSig, line, a0, a1), NewUniverse(level)
 }
 
