@@ -275,7 +275,40 @@ func endsOf(c value.Checker, w *term.Written, line *term.Bound, level int) (valu
 	a := c.Case(line, dimensions).ApplyAll
 	a0 := c.Check(part(w, 1), a(run, []value.Value{value.Zero()}))
 	a1 := c.Check(part(w, 2), a(run, []value.Value{value.One()}))
+	if identical(a0, a1, identicalDepth) {
+		a1 = a0 // one cell for both, and one wall where the path is composed or transported
+	}
 	return op(pathSig, line, a0, a1), NewUniverse(level)
+}
+
+const identicalDepth = 8
+
+// identical reports whether two small terms are made of the same variables,
+// definitions and eliminations; where there is anything else in them, such as
+// annotations, which may differ in terms that are written alike, it says no.
+func identical(a, b value.Core, depth int) bool {
+	switch a := a.(type) {
+	case *term.Variable:
+		b, ok := b.(*term.Variable)
+		return ok && a.Level == b.Level
+	case *term.Global:
+		b, ok := b.(*term.Global)
+		return ok && a.Name == b.Name
+	case *term.Op:
+		b, ok := b.(*term.Op)
+		if !ok || a.Sig != b.Sig || len(a.Args) != len(b.Args) || depth == 0 {
+			return false
+		}
+		for k := range a.Args {
+			x, ok1 := a.Args[k].(value.Core)
+			y, ok2 := b.Args[k].(value.Core)
+			if !ok1 || !ok2 || !identical(x, y, depth-1) {
+				return false
+			}
+		}
+		return true
+	}
+	return false
 }
 
 var dimensions = []term.Sort{term.DimensionSort}
