@@ -109,8 +109,17 @@ func (e *Eliminator) numeral(run *value.Run, v *Number) (value.Value, bool) {
 	frame := step.Enter(run)
 	frame[0] = v // where the step does not look at it
 	counts := step.Uses(0)
+	// The case is entered once, and each time is counted.
+	var back value.Back // what the run came from, where it is traced
 	for k := range v.n.small {
 		run.Take(value.StepEliminate)
+		if run.Traced() && !run.Followed() {
+			if k == 0 {
+				back = run.In(value.SiteOf(step))
+			} else {
+				run.Again(back)
+			}
+		}
 		if counts {
 			frame[0] = newNumber(run, e.data, natural{small: k})
 		}
@@ -118,5 +127,5 @@ func (e *Eliminator) numeral(run *value.Run, v *Number) (value.Value, bool) {
 		h = run.Force(step.Eval(run, frame))
 	}
 	run.Release(len(frame))
-	return h, true
+	return run.Left(back, h), true
 }

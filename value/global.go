@@ -142,8 +142,8 @@ func (w *foldWork) unfolded(run *Run, g Global) Value {
 		run.Take(StepUnfold)
 		return w.from.Unfolded(run)
 	}
-	caller := run.In(siteOf(w.from))
-	back := run.In(siteOf(g))
+	caller := run.In(SiteOf(w.from))
+	back := run.In(SiteOf(g))
 	run.Take(StepUnfold)
 	run.Out(back)
 	var e *Event

@@ -213,6 +213,30 @@ func (r *Run) In(s *Site) Back {
 	return from
 }
 
+// Again is Left and In for the site that the run is in, entered from back, with
+// one step taken in between. Only a run that is traced may call it.
+func (r *Run) Again(back Back) {
+	t := r.trace
+	if n := &t.nodes[t.at]; n.parent == back && t.folded != t.at {
+		n.entered++
+		n.steps--
+		return
+	}
+	r.again(back)
+}
+
+func (r *Run) again(back Back) {
+	t := r.trace
+	if t.at == back { // it did not have to be entered
+		return
+	}
+	s := t.nodes[t.at].site
+	r.Steps-- // the step was taken inside
+	t.leave(r, back)
+	r.Steps++
+	r.In(s)
+}
+
 // IsIn reports whether the run is at s already. Only a run that is traced may ask.
 func (r *Run) IsIn(s *Site) bool { return r.trace.nodes[r.trace.at].site == s }
 
@@ -349,7 +373,8 @@ func (r *Run) laterTraced(support Support, work Work) Value {
 // know the site they stand at.
 type Sited interface{ Site() *Site }
 
-func siteOf(x any) *Site {
+// SiteOf is the site of what is Sited, nil for anything else.
+func SiteOf(x any) *Site {
 	if s, ok := x.(Sited); ok {
 		return s.Site()
 	}
@@ -358,9 +383,9 @@ func siteOf(x any) *Site {
 
 // doTraced unfolds a definition at its own site, where it was called.
 func (w *foldWork) doTraced(run *Run, n *Neutral) Value {
-	caller := run.In(siteOf(w.from))
+	caller := run.In(SiteOf(w.from))
 	g := n.head.(*GlobalHead).Global
-	back := run.In(siteOf(g))
+	back := run.In(SiteOf(g))
 	run.Take(StepUnfold)
 	var e *Event
 	if run.Followed() {

@@ -262,6 +262,9 @@ func (c caseClosure) Eval(run *value.Run, frame []value.Value) value.Value {
 	return c.abs.body.Eval(run, frame)
 }
 
+// Site is the definition or term that it stands in.
+func (c caseClosure) Site() *value.Site { return c.abs.site }
+
 // AsClosure is a case of one argument as a closure.
 func (c caseClosure) AsClosure() value.Closure { return c.closure }
 
