@@ -434,7 +434,7 @@ func (g *Generator) comp(t *Type, size int) (out *term.Written) {
 // along is a dimension of t with t over it: t is the result at that dimension.
 func (g *Generator) along(t *Type, i string) (*Type, *term.Written) {
 	for _, d := range g.dims {
-		if d != i && t.Mentions(d) && g.maybe(2) {
+		if d != i && t.Mentions(d) && !g.held(t, d) && g.maybe(2) {
 			return t.With(one(d, term.Name(i))), term.Name(d)
 		}
 	}
