@@ -372,7 +372,7 @@ func (conOp) Demands(args []eval.Arg) []*eval.Arg {
 }
 
 // Special is the successor of numbers.
-func (o conOp) Special(args []eval.Arg) eval.Operation {
+func (o conOp) Special(_ *value.Run, args []eval.Arg) eval.Operation {
 	if stored(args) {
 		return successorOp{o, args[0].Payload.(term.Reference).Target.(*Constructor).Data}
 	}

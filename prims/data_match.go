@@ -11,11 +11,27 @@ import (
 // takes that case alone, in the place of the elimination; everything else makes
 // an Eliminator.
 
-type elimOp struct{}
+// elimOp has the eliminator where that is closed, and so always the same.
+type elimOp struct{ closed *Eliminator }
+
+// Special makes a closed eliminator once.
+func (o elimOp) Special(run *value.Run, args []eval.Arg) eval.Operation {
+	closed := args[2].Closed()
+	for _, row := range args[4].Rows {
+		closed = closed && row[1].Closed()
+	}
+	if closed {
+		o.closed = o.eliminator(run, nil, args)
+	}
+	return o
+}
 
 func (elimOp) Principal() int { return 3 }
 
-func (elimOp) eliminator(run *value.Run, f eval.Frame, args []eval.Arg) *Eliminator {
+func (o elimOp) eliminator(run *value.Run, f eval.Frame, args []eval.Arg) *Eliminator {
+	if o.closed != nil {
+		return o.closed
+	}
 	d := args[0].Payload.(term.Reference).Target.(*Data)
 	cases := make([]value.Case, len(d.Constructors))
 	for _, row := range args[4].Rows {

@@ -224,7 +224,7 @@ func (k *compiler) op(c *term.Op, l *layout, nv, nd int) Code {
 		}
 	}
 	if s, ok := op.(Special); ok {
-		out.op = s.Special(out.args)
+		out.op = s.Special(k.run, out.args)
 	}
 	out.found()
 	if constant, ok := op.(Closed); ok {
@@ -301,7 +301,7 @@ type Closed interface {
 type Special interface {
 	Operation
 	// Special is that form, or the operation itself.
-	Special(args []Arg) Operation
+	Special(run *value.Run, args []Arg) Operation
 }
 
 // Preparer is an Operation that looks at its term once, when it is compiled in

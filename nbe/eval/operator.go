@@ -160,5 +160,8 @@ func (a *Arg) Enter(run *value.Run, g Frame) value.Value {
 // Uses reports whether a body under binders mentions its argument k.
 func (a *Arg) Uses(k int) bool { return a.abs.uses(k) }
 
+// Closed reports whether a body under binders mentions nothing else.
+func (a *Arg) Closed() bool { return len(a.abs.captures) == 0 }
+
 // Hints are the host's names of the arguments of a body under binders.
 func (a *Arg) Hints() []string { return a.abs.hints }
