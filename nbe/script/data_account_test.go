@@ -26,6 +26,11 @@ const accounts = `
 (data Rose ((A (U 0)) (B (-> A (U 0)))) (point rose ((a A) (f (-> (B a) (Rose A B))))))
 (data Large () (point large ((A (U 1)) (a A))))
 (data Formal () (composition formal) (point only ()))
+(data Strict () (composition strict) (point only-strict ()))
+(data Rigging () (point knot ()) (point end ((n Nat) (x Rigging)))
+  (path rope ((n Nat) (x Rigging)) (i) ((= i 0) (end n x)) ((= i 1) knot))
+  (path sheet ((m Nat) (y Rigging)) (i j) ((= i 0) (rope m y j)) ((= i 1) (rope m y j)))
+  (path corner ((_ Nat)) (i j) ((and (= i 0) (= j 1)) knot)))
 `
 
 func accountOf(t *testing.T, name string) *nbe.Account {
@@ -63,6 +68,11 @@ func TestAccountSaysTheRules(t *testing.T) {
 		"Rose":     {"    for hf : (Pi ((y (B a))) (P (f y))), the hypothesis of f"},
 		"Large":    {"Large, a data type in (U 2), composition strict", "  Large : (U 2)", "  (transp (i Large) φ a) = a"},
 		"Formal":   {"Formal, a data type in (U 0), composition formal"},
+		"Strict":   {"Strict, a data type in (U 0), composition strict"},
+		"Rigging": {
+			"    on (= i 0) it is (end n x)", "    on (and (= i 0) (= j 1)) it is knot",
+			"    on (= i 0) it must be (end-case n x hx)", "    on (= i 0) it must be (rope-case m y hy j)", "    on (and (= i 0) (= j 1)) it must be knot-case",
+		},
 		"Nat":      {"  (suc n) : Nat", "  ((suc n hn) u), u : (P (suc n))", "  (hcomp Nat 0 ((= k 0) (j) 0)) = 0"},
 		"Empty":    {"  none"},
 	} {
