@@ -23,6 +23,13 @@ func TestNumeralLoopsLookAtTheNumber(t *testing.T) {
 		(def doubled (-> Nat Nat) (lam (n) (elim (_ Nat) n (zero 0) ((suc k h) (twice step h)))))
 		(def passed (-> (-> Nat Nat) Nat Nat) (lam (f n) (elim (_ Nat) n (zero 0) ((suc k h) (twice f h)))))
 		(def computed (-> Nat Nat) (lam (n) (elim (_ Nat) n (zero 0) ((suc k h) (twice (lam (m) (add m 1)) h)))))
+		(def alias (-> Nat Nat Nat) add)
+		(def aliased (-> Nat Nat) (lam (n) (elim (_ Nat) n (zero 0) ((suc k h) (alias h k)))))
+		(def chosen (* (-> Nat Nat Nat) Nat) (pair add 0))
+		(def picked (-> Nat Nat Nat) (fst chosen))
+		(def choosing (-> Nat Nat) (lam (n) (elim (_ Nat) n (zero 0) ((suc k h) (picked h k)))))
+		(def curried (-> Nat Nat Nat) (lam (m) (add m)))
+		(def half-applied (-> Nat Nat) (lam (n) (elim (_ Nat) n (zero 0) ((suc k h) (curried h k)))))
 		(assume opaque (-> Nat Nat))
 		(def constant (-> Nat Nat) (lam (n) (elim (_ Nat) n (zero 0) ((suc k h) (snd (ann (pair (opaque h) k) (* Nat Nat)))))))
 		(def shared (-> Nat (* Nat Nat)) (lam (n) (pair (add n n) (add n n))))
@@ -31,7 +38,8 @@ func TestNumeralLoopsLookAtTheNumber(t *testing.T) {
 		e := b.engine(t, given)
 		for n := range int64(9) {
 			for name, want := range map[string]int64{
-				"triangle": n * (n - 1) / 2, "through": n * (n - 1) / 2, "doubled": 2 * n, "computed": 2 * n, "constant": max(n-1, 0),
+				"triangle": n * (n - 1) / 2, "through": n * (n - 1) / 2, "doubled": 2 * n, "computed": 2 * n,
+				"aliased": n * (n - 1) / 2, "choosing": n * (n - 1) / 2, "half-applied": n * (n - 1) / 2, "constant": max(n-1, 0),
 			} {
 				w := term.Apply(term.Name(name), term.Numeral(uint64(n)))
 				require.Equal(t, number(want).String(), normalNumber(t, e, w), "%s, %s", w, b.name)
@@ -83,4 +91,29 @@ func TestEliminationsDiffer(t *testing.T) {
 		law{name: "the same", source: source, ty: "Nat", left: "(elim (_ Nat) x (zero 0) ((suc k h) (n h)))", right: "(elim (_ Nat) x (zero (fst (ann (pair 0 1) (* Nat Nat)))) ((suc j g) (n g)))"},
 		law{name: "a transport and an elimination", source: source, ty: "(Crate A)", left: "(transp (i (Crate A)) bot c)", right: "(top-down c)", differ: true},
 	)
+}
+
+// Sums too large to be written out are told apart or not at all: what differs is
+// shown within the budget for output.
+func TestLargeSuccessorsThatDiffer(t *testing.T) {
+	ctx := context.Background()
+	e := numeralBuilds()[0].engine(t, programs+"(assume x Nat) (assume y Nat)")
+	s := e.Scope()
+	for _, l := range []law{
+		{left: "(add 100000000000000000000001 x)", right: "(add 100000000000000000000000 x)"},
+		{left: "(add 100000000000000000000000 x)", right: "(add 200000000000000000000000 x)"},
+		{left: "(add 100000000000000000000000 x)", right: "(add 100000000000000000000000 y)"},
+		{left: "(add 100000000000000000000000 x)", right: "100000000000000000000000"},
+	} {
+		left, err := s.Check(ctx, read(t, l.left), read(t, "Nat"))
+		require.NoError(t, err)
+		right, err := s.Check(ctx, read(t, l.right), read(t, "Nat"))
+		require.NoError(t, err)
+		c, err := s.Compare(ctx, left, right, nbe.Within(nbe.Limits{Output: 1000}))
+		if err != nil {
+			require.Equal(t, term.OutOfBudget, term.KindOf(err))
+		} else {
+			require.Equal(t, nbe.Different, c.Verdict, "%s and %s", l.left, l.right)
+		}
+	}
 }

@@ -83,6 +83,20 @@ func TestSketchesShowDimensions(t *testing.T) {
 	}
 }
 
+// Sums of numbers are one elimination, which is followed as such.
+func TestSumsAreFollowed(t *testing.T) {
+	const given = "(def add (-> Nat Nat Nat) (lam (m n) (elim (_ Nat) m (zero n) ((suc k h) (suc h)))))"
+	require.Equal(t, []string{"(elim (_ …) 30 (zero …) ((suc k h) …))"}, before(t, given, "(add 30 4)", "elim Nat"))
+}
+
+// What is unglued stands under its unglue.
+func TestUngluedIsSketched(t *testing.T) {
+	const given = `(assume A (-> I (U 0))) (assume T (U 0)) (assume e (Equiv T (A 0))) (assume g (Pi ((i I)) (Glue (A i) ((= i 0) T e))))
+		(def same-again (Pi ((i I)) (-> (A i) (A i))) (lam (i a) a))`
+	found := strings.Join(before(t, given, "(ann (lam (i) (same-again i (unglue (g i)))) (Pi ((i I)) (A i)))", "function applied"), " ")
+	require.Contains(t, found, "(unglue (g i")
+}
+
 // An event, a trace and a rule of no computation have nothing to show.
 func TestNothingToFollow(t *testing.T) {
 	var ev nbe.Event

@@ -73,8 +73,8 @@ func TestAccountSaysTheRules(t *testing.T) {
 			"    on (= i 0) it is (end n x)", "    on (and (= i 0) (= j 1)) it is knot",
 			"    on (= i 0) it must be (end-case n x hx)", "    on (= i 0) it must be (rope-case m y hy j)", "    on (and (= i 0) (= j 1)) it must be knot-case",
 		},
-		"Nat":      {"  (suc n) : Nat", "  ((suc n hn) u), u : (P (suc n))", "  (hcomp Nat 0 ((= k 0) (j) 0)) = 0"},
-		"Empty":    {"  none"},
+		"Nat":   {"  (suc n) : Nat", "  ((suc n hn) u), u : (P (suc n))", "  (hcomp Nat 0 ((= k 0) (j) 0)) = 0"},
+		"Empty": {"  none"},
 	} {
 		all := strings.Split(accountOf(t, name).String(), "\n")
 		for _, line := range lines {
