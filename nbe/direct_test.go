@@ -89,3 +89,37 @@ func TestARunOfNothing(t *testing.T) {
 	require.False(t, run.Watched())
 	require.Zero(t, run.Snapshot().Deepest)
 }
+
+// Report gives each count that is not zero, by the former too.
+func TestCompositesAreReportedByFormer(t *testing.T) {
+	got := metrics{}
+	value.Stats{ByFormer: []value.FormerStats{{Former: "a type", Composites: 6}, {Former: "other", Transports: 4}}}.Report(got, 2)
+	require.InDelta(t, 3, got["hcomp:a-type"], 0)
+	require.InDelta(t, 2, got["transp:other"], 0)
+	require.NotContains(t, got, "transp:a-type")
+}
+
+type metrics map[string]float64
+
+func (m metrics) ReportMetric(n float64, unit string) { m[unit] = n }
+
+// The paths below a path are yielded for as long as they are wanted.
+func TestPathsAreYieldedOnDemand(t *testing.T) {
+	run := directRun()
+	trace := &value.Trace{Exact: true}
+	run.Begin(trace)
+	for _, name := range []string{"first", "second"} {
+		run.Out(run.In(&value.Site{Kind: value.SiteDefinition, Name: name}))
+	}
+	trace.End()
+	var all, one []string
+	for p := range trace.Root().Below {
+		all = append(all, p.Site.Name)
+	}
+	for p := range trace.Root().Below {
+		one = append(one, p.Site.Name)
+		break
+	}
+	require.Equal(t, []string{"first", "second"}, all)
+	require.Equal(t, []string{"first"}, one)
+}

@@ -32,13 +32,14 @@ func TestNumeralLoopsLookAtTheNumber(t *testing.T) {
 		(def half-applied (-> Nat Nat) (lam (n) (elim (_ Nat) n (zero 0) ((suc k h) (curried h k)))))
 		(assume opaque (-> Nat Nat))
 		(def constant (-> Nat Nat) (lam (n) (elim (_ Nat) n (zero 0) ((suc k h) (snd (ann (pair (opaque h) k) (* Nat Nat)))))))
+		(def nested (-> Nat Nat) (lam (n) (elim (_ Nat) (suc (suc (through n))) (zero 0) ((suc k h) (suc (suc h))))))
 		(def shared (-> Nat (* Nat Nat)) (lam (n) (pair (add n n) (add n n))))
 	`
 	for _, b := range builds() {
 		e := b.engine(t, given)
 		for n := range int64(9) {
 			for name, want := range map[string]int64{
-				"triangle": n * (n - 1) / 2, "through": n * (n - 1) / 2, "doubled": 2 * n, "computed": 2 * n,
+				"triangle": n * (n - 1) / 2, "through": n * (n - 1) / 2, "doubled": 2 * n, "computed": 2 * n, "nested": 4 + n*(n-1),
 				"aliased": n * (n - 1) / 2, "choosing": n * (n - 1) / 2, "half-applied": n * (n - 1) / 2, "constant": max(n-1, 0),
 			} {
 				w := term.Apply(term.Name(name), term.Numeral(uint64(n)))

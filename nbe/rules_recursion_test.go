@@ -51,3 +51,17 @@ func TestRuleHypotheses(t *testing.T) {
 		(reject (data Bad () (point bad ((f (-> Bad Nat))))))
 		(reject (data Bad2 ((A (U 0))) (point bad2 ((l (Bad2 (Sum A A)))))))`)
 }
+
+// One end of a path may be an argument transported, which has no hypothesis: at
+// the other end, an argument itself, the path's hypothesis is that argument's.
+func TestHypothesesAtTransportedEnds(t *testing.T) {
+	const source = "HoTT Book 2013, 6.2; CHM 2018, 3"
+	const given = `
+		(data Slide ((A (U 0))) (point berth ((a A))) (point moved ((x (Slide A)) (p (Path (Slide A) x (transp (k (Slide A)) bot x))))))
+		(assume A (U 0)) (assume P (U 0)) (assume b (-> A P)) (assume m (-> P P))
+		(assume x (Slide A)) (assume p (Path (Slide A) x (transp (k (Slide A)) bot x)))
+		(def from (-> (Slide A) P) (lam (z) (elim (_ P) z ((berth a) (b a)) ((moved x p hx hp) (m (at hp 0))))))`
+	holds(t, given,
+		law{name: "the start is the hypothesis", source: source, ty: "P", left: "(from (moved x p))", right: "(m (from x))"},
+	)
+}

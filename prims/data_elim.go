@@ -52,14 +52,13 @@ func (r *Recursion) hasPath() bool {
 	return false
 }
 
+// codomainAt is the type of the values at y of functions of type t.
 func codomainAt(run *value.Run, t, y value.Value) value.Value {
 	switch t := run.Force(t).(type) {
 	case *Pi:
 		return t.Codomain.Open(run, y)
 	case *PiDimension:
 		return t.Codomain.Open(run, y)
-	case *Path:
-		return t.Line.Open(run, y)
 	default:
 		run.Fault("%T is no type of a recursive argument", t)
 		return nil

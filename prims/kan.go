@@ -97,19 +97,6 @@ func FreshLine(run *value.Run, i value.Name, a value.Value, avoid value.Support)
 	return j, run.At(a, i, interval.Var(j))
 }
 
-// FreshLines is FreshLine for several lines under one name.
-func FreshLines(run *value.Run, i value.Name, lines []value.Value, avoid value.Support) (value.Name, []value.Value) {
-	if !avoid.Has(i) {
-		return i, lines
-	}
-	sup := avoid | interval.Single(i)
-	for _, l := range lines {
-		sup |= l.Support()
-	}
-	j := run.Fresh(sup)
-	return j, run.SubstituteAll(lines, interval.Rename(i, j))
-}
-
 // Comp is
 //
 //	comp (i.A) u0 [φ ↦ i.u] = hcomp A(1) (transp (i.A) bot u0) [φ ↦ i. transp (j.A(i∨j)) (i=1) u]
