@@ -26,6 +26,7 @@ const accounts = `
 (data Rose ((A (U 0)) (B (-> A (U 0)))) (point rose ((a A) (f (-> (B a) (Rose A B))))))
 (data Large () (point large ((A (U 1)) (a A))))
 (data Formal () (composition formal) (point only ()))
+(data Slack () (point coiled ()) (path loose () (i) (top coiled)))
 (data Strict () (composition strict) (point only-strict ()))
 (data Rigging () (point knot ()) (point end ((n Nat) (x Rigging)))
   (path rope ((n Nat) (x Rigging)) (i) ((= i 0) (end n x)) ((= i 1) knot))
@@ -69,6 +70,7 @@ func TestAccountSaysTheRules(t *testing.T) {
 		"Large":    {"Large, a data type in (U 2), composition strict", "  Large : (U 2)", "  (transp (i Large) φ a) = a"},
 		"Formal":   {"Formal, a data type in (U 0), composition formal"},
 		"Strict":   {"Strict, a data type in (U 0), composition strict"},
+		"Slack":    {"    on top it is coiled", "    on top it must be coiled-case"},
 		"Rigging": {
 			"    on (= i 0) it is (end n x)", "    on (and (= i 0) (= j 1)) it is knot",
 			"    on (= i 0) it must be (end-case n x hx)", "    on (= i 0) it must be (rope-case m y hy j)", "    on (and (= i 0) (= j 1)) it must be knot-case",
