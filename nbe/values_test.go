@@ -9,6 +9,7 @@ import (
 	"example.com/boxwright/nbe"
 	"example.com/boxwright/nbe/notation"
 	"example.com/boxwright/nbe/term"
+	"example.com/boxwright/prims"
 )
 
 // What an elaborator does all day: values are applied, taken apart, taken on a
@@ -166,4 +167,76 @@ func TestTypesAreTakenApartUnderTheirBinders(t *testing.T) {
 	require.Equal(t, "(Path Nat crates crates)", readBack(t, codomain))
 	_, err = ty.Codomain(ctx, valueOf(t, s, e, "true"))
 	require.ErrorIs(t, err, term.IllTyped)
+}
+
+// Each way to take a value apart fits some types only; the others are refused,
+// and nothing is left that could be used.
+func TestValuesThatDoNotFitAreRefused(t *testing.T) {
+	ctx := context.Background()
+	e, err := nbe.New()
+	require.NoError(t, err)
+	s := e.Scope()
+	three := valueOf(t, s, e, "3")
+	for name, do := range map[string]func() (*nbe.Value, error){
+		"a part of a number":        func() (*nbe.Value, error) { return three.Second(ctx) },
+		"the codomain of a number":  func() (*nbe.Value, error) { return three.Codomain(ctx, three) },
+		"the codomain of no type":   func() (*nbe.Value, error) { return valueOf(t, s, e, "Nat").Codomain(ctx, three) },
+		"a number at a dimension":   func() (*nbe.Value, error) { return three.At(ctx, term.Numeral(0)) },
+		"a variable of no type":     func() (*nbe.Value, error) { _, v, err := s.Bind(ctx, "crates", three); return v, err },
+		"a path at a missing place": func() (*nbe.Value, error) { return valueOf(t, s, e, "(ann (line (i) 0) (Path Nat 0 0))").At(ctx, nil) },
+	} {
+		v, err := do()
+		require.Error(t, err, name)
+		require.NotEqual(t, term.Internal, term.KindOf(err), "%s: %v", name, err)
+		require.Nil(t, v, name)
+	}
+	_, _, err = s.Bind(ctx, "lam", valueOf(t, s, e, "Nat"))
+	require.Equal(t, term.Malformed, term.KindOf(err), "%v", err)
+	_, err = three.In(ctx, nil)
+	require.Error(t, err)
+	var none *nbe.Value
+	require.Nil(t, none.Type())
+	require.Nil(t, none.Scope())
+	require.Same(t, s, three.Scope())
+
+	// what fits, beside the functions and the paths
+	second, err := valueOf(t, s, e, "(Sigma ((n Nat)) (Path Nat n 3))").Codomain(ctx, three)
+	require.NoError(t, err)
+	require.Equal(t, "(Path Nat 3 3)", readBack(t, second))
+	end, err := valueOf(t, s, e, "(ann (lam (i) 5) (-> I Nat))").At(ctx, term.Numeral(1))
+	require.NoError(t, err)
+	require.Equal(t, "5", readBack(t, end))
+
+	// the face top assumes nothing
+	all, err := s.Assume(ctx, term.Top())
+	require.NoError(t, err)
+	same, err := three.In(ctx, all)
+	require.NoError(t, err)
+	require.Equal(t, "3", readBack(t, same))
+	ended, stop := context.WithCancel(ctx)
+	stop()
+	_, err = three.In(ended, all)
+	require.ErrorIs(t, err, term.Cancelled)
+	var zero nbe.Scope
+	_, err = zero.Write(nil)
+	require.Error(t, err)
+}
+
+// A form too large for the limit Text says so where its text would stand, and a
+// host's word that can be none keeps an engine from being made.
+func TestWhatCannotBeWrittenSaysSo(t *testing.T) {
+	ctx := context.Background()
+	e, err := nbe.New(nbe.WithLimits(nbe.Limits{Text: 3}))
+	require.NoError(t, err)
+	forms, err := valueOf(t, e.Scope(), e, "(ann (pair 1 (pair 2 (pair 3 4))) (* Nat Nat Nat Nat))").ReadBack(ctx)
+	require.NoError(t, err)
+	_, err = forms[0].Written()
+	require.ErrorIs(t, err, term.OutOfBudget)
+	require.Contains(t, forms[0].String(), err.Error())
+
+	for _, word := range []string{"", "(", "a b", "7"} {
+		_, err := nbe.New(nbe.WithFormers(prims.Former{Name: "shed", Words: []prims.Word{{Shape: term.Shape{Word: word}}}}))
+		require.Error(t, err, "%q", word)
+		require.NotEqual(t, term.Internal, term.KindOf(err), "%v", err)
+	}
 }

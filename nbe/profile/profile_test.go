@@ -3,6 +3,7 @@ package profile_test
 import (
 	"bytes"
 	"context"
+	"errors"
 	"fmt"
 	"os"
 	"os/exec"
@@ -10,6 +11,7 @@ import (
 	"strings"
 	"sync"
 	"testing"
+	"time"
 
 	pprof "github.com/google/pprof/profile"
 	"github.com/stretchr/testify/require"
@@ -387,3 +389,49 @@ func TestCallsAtOnce(t *testing.T) {
 	require.Equal(t, 80, shared.Calls())
 	require.Equal(t, shared.Stats().Steps, shared.Total().Steps)
 }
+
+// A profile that is merged into itself stays as it is, and a writer's error is
+// the caller's.
+func TestProfilesAtTheirEdges(t *testing.T) {
+	var p profile.Profile
+	p.Add(&value.Trace{}, value.Stats{}, time.Time{})
+	before := p.Calls()
+	p.Merge(&p)
+	require.Equal(t, before, p.Calls())
+	require.ErrorIs(t, p.Write(full{}), errFull)
+}
+
+// Work on values stands under evaluation, the operation of a call that names no other.
+func TestWorkOnValuesIsEvaluation(t *testing.T) {
+	e := engine(t)
+	ctx := context.Background()
+	x, err := e.Scope().Infer(ctx, written(t, e, "(multiply 6 7)"))
+	require.NoError(t, err)
+	var p profile.Profile
+	_, err = x.Value().View(ctx, nbe.Profile(&p))
+	require.NoError(t, err)
+	steps := int64(0)
+	for _, s := range p.Samples() {
+		if len(s.Path) > 0 {
+			require.Equal(t, value.EvaluationSite.Name, s.Path[0].Name)
+			steps += s.Counts.Steps
+		}
+	}
+	require.Positive(t, steps)
+
+	// what was counted outside of it has a place in Go's format too
+	var out bytes.Buffer
+	require.NoError(t, p.Write(&out))
+	parsed, err := pprof.Parse(&out)
+	require.NoError(t, err)
+	for _, s := range parsed.Sample {
+		require.NotEmpty(t, s.Location)
+	}
+}
+
+var errFull = errors.New("the shelf is full")
+
+// full is a writer that takes nothing.
+type full struct{}
+
+func (full) Write([]byte) (int, error) { return 0, errFull }

@@ -125,3 +125,36 @@ func TestBlockedIsAValue(t *testing.T) {
 func blocked(ctx context.Context, x *nbe.Term, options ...nbe.CallOption) (*nbe.Blockage, error) {
 	return x.Scope().Blocked(ctx, x, options...)
 }
+
+// A composite of constructors waits for the wall that shows none, and its base
+// says which is wanted; a part that stands in many places is told once.
+func TestBlockedTellsWhatIsWantedAndEachPartOnce(t *testing.T) {
+	ctx := context.Background()
+	e, err := nbe.New()
+	require.NoError(t, err)
+	s := script.Session{Engine: e, Report: func(r script.Result) { require.NoError(t, r.Err) }}
+	require.NoError(t, s.Source(ctx, []byte(`(assume crates Nat) (assume lamp (Path Bool true true))
+(def add (-> Nat Nat Nat) (lam (m n) (elim (x Nat) m (zero n) ((suc k h) (suc h)))))
+(def both (Pi ((A (U 0))) (-> A (* A A))) (lam (A a) (pair a a)))`), "quay.sexp"))
+	read := func(text string) *nbe.Blockage {
+		w, err := notation.ReadTerm(text, "host.sexp", e.Words())
+		require.NoError(t, err)
+		x, err := e.Scope().Infer(ctx, w)
+		require.NoError(t, err)
+		b, err := blocked(ctx, x)
+		require.NoError(t, err)
+		return b
+	}
+	b := read("(ann (lam (i) (hcomp Bool true ((= i 0) (j) (at lamp j)))) (-> I Bool))")
+	require.NotEmpty(t, b.Parts)
+	require.Len(t, b.Parts[0].Walls, 1)
+	require.Equal(t, nbe.ObstacleWall, b.Parts[0].Walls[0].Kind)
+	require.Equal(t, "true", b.Parts[0].Walls[0].Wanted)
+	require.Empty(t, b.Parts[0].Walls[0].Shows)
+
+	once := read("(add crates 1)")
+	require.Len(t, once.Parts, 1)
+	many := read("(both (* Nat Nat) (both Nat (add crates 1)))")
+	require.Len(t, many.Parts, 1)
+	require.Equal(t, once.Parts[0].Part.String(), many.Parts[0].Part.String())
+}
