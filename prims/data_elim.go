@@ -1,6 +1,8 @@
 package prims
 
 import (
+	"slices"
+
 	"example.com/boxwright/nbe/term"
 	"example.com/boxwright/value"
 	"example.com/boxwright/value/interval"
@@ -72,7 +74,7 @@ type Eliminator struct {
 	family  value.Closure
 	cases   []value.Case // by constructor; nil for those that are not given yet
 	step    *stepRule    // for numerals
-	assumed []assumption // under the binders of a case, for the types of later hypotheses
+	assumed *assumption  // under the binders of a case, for the types of later hypotheses, the last one first
 	checked *Eliminator  // the elimination being checked that this one comes from, nil when it has all its cases
 	support value.Support
 }
@@ -82,6 +84,7 @@ type Eliminator struct {
 type assumption struct {
 	level      int // of the argument's variable
 	hypothesis value.Value
+	before     *assumption
 }
 
 // Support is the union of the parts'.
@@ -114,21 +117,25 @@ func (e *Eliminator) substitute(run *value.Run, s *value.Subst) *Eliminator {
 	}
 	out := newEliminator(e.data, e.family.Substitute(run, s), cases, e.step)
 	out.checked = e.checked
-	for _, a := range e.assumed {
+	var assumed []*assumption
+	for a := e.assumed; a != nil; a = a.before {
+		assumed = append(assumed, a)
+	}
+	for _, a := range slices.Backward(assumed) {
+		run.Charge(value.PriceNode)
 		out.assume(a.level, run.Substitute(a.hypothesis, s))
 	}
 	return out
 }
 
 func (e *Eliminator) assume(level int, hypothesis value.Value) {
-	e.assumed = append(e.assumed, assumption{level, hypothesis})
+	e.assumed = &assumption{level, hypothesis, e.assumed}
 	e.support |= hypothesis.Support()
 }
 
 // assuming is e where the elimination of the variable x is the hypothesis h.
 func (e *Eliminator) assuming(x, h value.Value) *Eliminator {
 	out := *e
-	out.assumed = append([]assumption(nil), e.assumed...)
 	out.assume(x.(*value.Neutral).Head().(*value.VariableHead).Level, h)
 	return &out
 }
@@ -140,7 +147,7 @@ func (e *Eliminator) hypothesisOf(run *value.Run, n *value.Neutral) (value.Value
 	if !ok {
 		return nil, false
 	}
-	for _, a := range e.assumed {
+	for a := e.assumed; a != nil; a = a.before {
 		if a.level != x.Level {
 			continue
 		}
@@ -172,7 +179,7 @@ func (e *Eliminator) Eliminate(run *value.Run, v value.Value) value.Value {
 	}
 	switch v := v.(type) {
 	case *value.Neutral:
-		if len(e.assumed) > 0 {
+		if e.assumed != nil {
 			if h, ok := e.hypothesisOf(run, v); ok {
 				return run.Left(back, h)
 			}
